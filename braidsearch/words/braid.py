@@ -184,5 +184,5 @@ def _checked_strands(strands: object) -> int:
 
 def _outside_message(letter: int, strands: int) -> str:
     if strands == 1:
-        return f"letter {letter}: expected the empty word, since a braid on 1 strand has no crossing"
+        return f"letter {letter}: expected the empty word: a braid on 1 strand has no crossing"
     return f"letter {letter}: expected an index from 1 to {strands - 1} on {strands} strands"

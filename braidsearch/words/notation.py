@@ -5,15 +5,16 @@ import re
 from braidsearch.errors import InputError
 from braidsearch.words.braid import MAX_LETTERS, MAX_STRANDS, Braid
 
-_MINUS_SIGNS = dict.fromkeys(map(ord, "−‒–﹣－⁻"), "-")  # every Unicode dash seen used as a minus
-_SUPERSCRIPTS = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹", "0123456789")
+_MINUS_SIGNS = dict.fromkeys(map(ord, "−‒–﹣－"), "-")  # every Unicode dash seen used as a minus
+_SUPERSCRIPTS = str.maketrans("⁻⁺⁰¹²³⁴⁵⁶⁷⁸⁹", "-+0123456789")
+_RAISED = re.compile(r"\^?([⁻⁺⁰¹²³⁴⁵⁶⁷⁸⁹]+)")
 _SUBSCRIPTS = str.maketrans("₀₁₂₃₄₅₆₇₈₉", "0123456789")
 _STRANDS = re.compile(r"\s*([^\s:]*)\s*:(.*)", re.DOTALL)
 _BRACKETS = {"[": "]", "(": ")", "{": "}"}
 _INTEGER = re.compile(r"[+-]?[0-9]+")
 _SIGMA = re.compile(
     r"(?:s|S|σ|sigma|\\sigma)_?(?P<open>\{)?(?P<index>[0-9]+)(?(open)\})"
-    r"(?P<power>\^?(?:\{[+-]?[0-9]+\}|\([+-]?[0-9]+\)|[+-]?[0-9]+))?"
+    r"(?P<power>\^(?:\{[+-]?[0-9]+\}|\([+-]?[0-9]+\)|[+-]?[0-9]+))?"
 )
 _GLUED = re.compile(r"(?=(?:(?<!\\)sigma|\\sigma|σ|s|S)_?\{?[0-9₀-₉])")
 _LONGEST_TOKEN = 40
@@ -112,7 +113,8 @@ def _read_token(token: str, before: int) -> tuple[int, int]:
 
 
 def _read_sigma(plain: str, token: str) -> tuple[int, int]:
-    match = _SIGMA.fullmatch(plain.translate(_SUPERSCRIPTS))
+    lowered = _RAISED.sub(lambda raised: "^" + raised[1].translate(_SUPERSCRIPTS), plain)
+    match = _SIGMA.fullmatch(lowered)
     if match is None:
         raise InputError(f"{_shown(token)}: {_EXPECTED}")
     power = match.group("power")
