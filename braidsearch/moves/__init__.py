@@ -1,0 +1,25 @@
+"""The Markov moves, chains of them, and composite moves written out in them."""
+
+from braidsearch.moves.chain import MoveChain
+from braidsearch.moves.exchange import exchange
+from braidsearch.moves.markov import (
+    Conjugate,
+    Destabilize,
+    Move,
+    Rewrite,
+    Stabilize,
+    apply_move,
+    reversed_move,
+)
+
+__all__ = [
+    "Conjugate",
+    "Destabilize",
+    "Move",
+    "MoveChain",
+    "Rewrite",
+    "Stabilize",
+    "apply_move",
+    "exchange",
+    "reversed_move",
+]
