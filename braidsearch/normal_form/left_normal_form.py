@@ -100,16 +100,19 @@ def _iter_blocks(strands: int, word: Sequence[int]) -> Iterable[tuple[bool, Perm
     """Cut the word, greedily, into simple elements and inverses of simple elements.
 
     The array is the inverse permutation of a positive block, and the permutation itself of the
-    simple element whose inverse a negative block is: either way one more letter is a swap.
+    simple element whose inverse a negative block is: either way one more letter of the same
+    sign is a swap that puts a crossing in, and one of the other sign a swap that takes it out.
     """
     identity = list(range(strands))
     array, positive = identity[:], True
     for letter in word:
         index = abs(letter)
-        if (letter > 0) != positive or array[index - 1] > array[index]:
+        is_sorted = array[index - 1] < array[index]
+        if is_sorted != ((letter > 0) == positive):  # else the letter fits, or cancels
             if array != identity:
                 yield positive, invert(tuple(array)) if positive else tuple(array)
-            array, positive = identity[:], letter > 0
+                array = identity[:]
+            positive = letter > 0
         array[index - 1], array[index] = array[index], array[index - 1]
     if array != identity:
         yield positive, invert(tuple(array)) if positive else tuple(array)
