@@ -1,0 +1,15 @@
+"""Strategies shared by the property tests."""
+
+from hypothesis import strategies as st
+
+from braidsearch.words import Braid
+
+
+@st.composite
+def braids(draw: st.DrawFn, max_strands: int = 5, max_letters: int = 20) -> Braid:
+    """A braid word with any letters, on 1 to ``max_strands`` strands."""
+    strands = draw(st.integers(1, max_strands))
+    if strands == 1:
+        return Braid([], strands=1)
+    letters = st.integers(1 - strands, strands - 1).filter(bool)
+    return Braid(draw(st.lists(letters, max_size=max_letters)), strands=strands)
