@@ -12,6 +12,7 @@ from braidsearch.moves.markov import (
     Stabilize,
     apply_move,
     reversed_move,
+    stated_result,
 )
 from braidsearch.words import Braid
 from braidsearch.words.reduction import free_reduce_letters
@@ -21,12 +22,14 @@ class MoveChain:
     """A growing chain of moves from ``start`` to ``current``; ``braids`` holds every stage.
 
     Every step is checked by the normal form as it is made and raises InputError when false, so a
-    finished chain is a proof.
+    finished chain is a proof. A draft (``is_checked`` False) takes the moves at their word: a
+    search makes many of them, and replays the few that it needs on a checked chain.
     """
 
-    def __init__(self, start: Braid) -> None:
+    def __init__(self, start: Braid, is_checked: bool = True) -> None:
         self.braids = [start]
         self.moves: list[Move] = []
+        self._apply = apply_move if is_checked else stated_result
 
     @property
     def start(self) -> Braid:
@@ -43,7 +46,7 @@ class MoveChain:
 
     def append(self, move: Move) -> None:
         """Add a move. Raises InputError when it is false."""
-        self.braids.append(apply_move(self.current, move))
+        self.braids.append(self._apply(self.current, move))
         self.moves.append(move)
 
     def rewrite(self, word: Iterable[int]) -> None:

@@ -88,6 +88,12 @@ def _apply_destabilize(current: Braid, move: Destabilize) -> Braid:
     return Braid(move.word, move.strands)
 
 
+def stated_result(before: Braid, move: Move) -> Braid:
+    """The braid that the move says it leads to, unchecked."""
+    strands = move.strands if isinstance(move, Stabilize | Destabilize) else before.strands
+    return Braid.trusted(move.word, strands)
+
+
 def reversed_move(before: Braid, move: Move) -> Move:
     """The move that leads from the result of ``move`` back to ``before``."""
     if isinstance(move, Rewrite):

@@ -122,16 +122,14 @@ def _cut_into_blocks(
 def _factors_of_blocks(
     blocks: IntegerArray, tables: PairTables
 ) -> tuple[IntegerArray, IntegerArray]:
-    """Simple factors, each flipped once for every inverse block after it; and those blocks' number."""
+    """Simple factors, each flipped once for every later inverse block; the inverse blocks."""
     negative = tables.is_negative[blocks]
     total = negative.sum(axis=0)
     after = total - np.cumsum(negative, axis=0)
     return tables.factor_of_block[blocks * 2 + (after & 1)], total
 
 
-def _weigh_columns(
-    factors: IntegerArray, counts: IntegerArray, tables: PairTables
-) -> NDArray[np.integer]:
+def _weigh_columns(factors: IntegerArray, counts: IntegerArray, tables: PairTables) -> IntegerArray:
     """Insert factor after factor into left-weighted columns; ``counts`` must not increase.
 
     What is inserted already is held times n!, ready to be the left half of an index of a pair.
@@ -152,7 +150,7 @@ def _weigh_columns(
             right.take(pair, out=columns[row + 1, :active], mode="clip")
             left.take(pair, out=moving, mode="clip")
         np.multiply(moving, size, out=columns[0, :active])
-    return columns // narrow.type(size)
+    return columns.astype(np.int64) // size
 
 
 def _shift_columns(

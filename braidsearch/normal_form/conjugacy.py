@@ -5,11 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 
-from braidsearch.normal_form.conjugation import (
-    conjugate_by_simple,
-    conjugator_word,
-    slide_to_circuit,
-)
+from braidsearch.normal_form.conjugation import conjugator_word, slide_to_circuit
 from braidsearch.normal_form.left_normal_form import (
     Element,
     are_equal,
@@ -54,7 +50,7 @@ class ConjugacyClass:
 def conjugacy_class(braid: Braid, cap: int = DEFAULT_SUMMIT_CAP) -> ConjugacyClass:
     """The class of a braid: cyclic sliding, then the ultra summit set up to ``cap`` members."""
     elements = simple_elements(braid.strands)
-    start, to_summit, summit = _find_summit(elements, braid, cap)
+    to_summit, summit = _find_summit(elements, braid, cap)
     least = min(summit.parents, key=lambda member: _sort_key(elements, member))
     conjugators = to_summit + summit.conjugators_to(least)
     infimum, factors = _sort_key(elements, least)
@@ -72,7 +68,7 @@ def iter_summit(
 ) -> Iterator[tuple[Braid, tuple[int, ...]]]:
     """The members of the ultra summit set, as words, each with a conjugator from ``braid``."""
     elements = simple_elements(braid.strands)
-    _, to_summit, summit = _find_summit(elements, braid, cap)
+    to_summit, summit = _find_summit(elements, braid, cap)
     for member in summit.parents:
         by = conjugator_word(elements, to_summit + summit.conjugators_to(member))
         yield Braid.trusted(element_word(elements, member), braid.strands), by
@@ -97,10 +93,10 @@ def find_conjugator(
 
 def _find_summit(
     elements: SimpleElements, braid: Braid, cap: int
-) -> tuple[Element, tuple[int, ...], Summit]:
+) -> tuple[tuple[int, ...], Summit]:
     element = element_of_word(elements, braid.word)
     start, to_summit = slide_to_circuit(elements, element)
-    return start, to_summit, ultra_summit_set(elements, start, cap)
+    return to_summit, ultra_summit_set(elements, start, cap)
 
 
 def _sort_key(elements: SimpleElements, member: Element) -> tuple[int, tuple[Permutation, ...]]:

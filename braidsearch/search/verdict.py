@@ -1,0 +1,28 @@
+"""The answer to a query."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass, field
+from typing import Any
+
+from braidsearch.certificates import Certificate
+
+
+@dataclass(frozen=True)
+class Verdict:
+    """What ``compare`` found.
+
+    ``outcome`` is "same", "different" or "undecided". ``symmetry`` names, for "same", the symmetry
+    of the right link that gives the left one. ``reason`` is one line in words. ``certificate`` has
+    been accepted by the verifier, and is None for "undecided". ``explored`` tells what was done:
+    nodes, seconds, the name of the ending, and a list of what was tried. ``suggestions`` says, for
+    "undecided", how to go on.
+    """
+
+    outcome: str
+    symmetry: str | None
+    reason: str
+    certificate: Certificate | None
+    explored: Mapping[str, Any] = field(hash=False)
+    suggestions: tuple[str, ...] = ()
