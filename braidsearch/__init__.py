@@ -1,1 +1,110 @@
-"""Decide whether two closed braids are the same link, with evidence that anyone can check."""
+"""Decide whether two closed braids are the same link, with evidence that anyone can check.
+
+    from braidsearch import Braid, SearchLimits, compare, verify
+    verdict = compare(Braid([1, 1, 1]), Braid([1, 2, 1, 2]), limits=SearchLimits(seconds=20))
+
+The names below are loaded when they are first used, so that the import costs nothing.
+"""
+
+from __future__ import annotations
+
+from importlib import import_module
+from typing import TYPE_CHECKING, Any
+
+if TYPE_CHECKING:
+    from os import PathLike
+
+    from braidsearch.certificates import (
+        Certificate,
+        Distinction,
+        explain_certificate,
+        format_certificate,
+        parse_certificate,
+        read_certificate,
+        write_certificate,
+    )
+    from braidsearch.errors import BraidsearchError, CapacityError, InputError
+    from braidsearch.search.driver import compare
+    from braidsearch.search.limits import Progress, SearchLimits
+    from braidsearch.search.verdict import Verdict
+    from braidsearch.verifier import Report
+    from braidsearch.words import Braid, format_word, parse_word
+
+__version__ = "0.1.0"
+
+_HOMES: dict[str, str] = {
+    "Braid": "words",
+    "BraidsearchError": "errors",
+    "CapacityError": "errors",
+    "Certificate": "certificates",
+    "Distinction": "certificates",
+    "InputError": "errors",
+    "Progress": "search.limits",
+    "Report": "verifier",
+    "SearchLimits": "search.limits",
+    "Verdict": "search.verdict",
+    "compare": "search.driver",
+    "explain_certificate": "certificates",
+    "format_certificate": "certificates",
+    "format_word": "words",
+    "parse_certificate": "certificates",
+    "parse_word": "words",
+    "read_certificate": "certificates",
+    "write_certificate": "certificates",
+}
+
+__all__ = [
+    "Braid",
+    "BraidsearchError",
+    "CapacityError",
+    "Certificate",
+    "Distinction",
+    "InputError",
+    "Progress",
+    "Report",
+    "SearchLimits",
+    "Verdict",
+    "__version__",
+    "compare",
+    "explain_certificate",
+    "format_certificate",
+    "format_word",
+    "parse_certificate",
+    "parse_word",
+    "read_certificate",
+    "verify",
+    "write_certificate",
+]
+
+
+def verify(
+    certificate: str | PathLike[str] | Certificate,
+    *,
+    left: Braid | None = None,
+    right: Braid | None = None,
+) -> Report:
+    """Replay a certificate, given as a path or as a value, with the independent verifier.
+
+    ``left`` and ``right`` bind the claim: a certificate about other braids is rejected. Raises
+    nothing for a bad file: its report is not valid, and says why.
+    """
+    from braidsearch.certificates import Certificate, format_certificate  # noqa: PLC0415 - lazy
+    from braidsearch.verifier import verify_file, verify_text  # noqa: PLC0415 - lazy
+
+    bound_left = None if left is None else (left.strands, left.word)
+    bound_right = None if right is None else (right.strands, right.word)
+    if isinstance(certificate, Certificate):
+        return verify_text(format_certificate(certificate), bound_left, bound_right)
+    return verify_file(certificate, bound_left, bound_right)
+
+
+def __getattr__(name: str) -> Any:
+    if name not in _HOMES:
+        raise AttributeError(f"module 'braidsearch' has no attribute {name!r}")
+    value = getattr(import_module(f"braidsearch.{_HOMES[name]}"), name)
+    globals()[name] = value
+    return value
+
+
+def __dir__() -> list[str]:
+    return sorted({*globals(), *__all__})

@@ -1,0 +1,136 @@
+"""Certificates in words for people: what is claimed, and each step of the proof on a line."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING
+
+from braidsearch.certificates.display import show_value
+from braidsearch.moves import Conjugate, Move, Rewrite, Stabilize
+from braidsearch.words import Braid, format_word
+
+if TYPE_CHECKING:
+    from braidsearch.certificates.values import Certificate, Distinction
+
+IMAGES: dict[str, str] = {
+    "identity": "the closure",
+    "mirror": "the mirror image of the closure",
+    "reverse": "the reverse of the closure",
+    "mirror-reverse": "the reversed mirror image of the closure",
+}
+"""What each symmetry makes of the closure of the right braid, in words."""
+
+TITLES: dict[str, str] = {
+    "components": "number of components",
+    "linking-numbers": "linking numbers",
+    "alexander": "Alexander polynomial",
+    "jones": "Jones polynomial",
+    "homfly": "HOMFLY-PT polynomial",
+}
+"""The invariants whose name in words is more than the name in the certificate."""
+
+_LONGEST_WORD = 24
+
+
+def explain_certificate(certificate: Certificate, most_moves: int | None = None) -> str:
+    """The claim and its proof in short lines.
+
+    ``most_moves`` bounds the moves shown of each chain: of a longer one the middle is left out,
+    and said to be. None shows all.
+    """
+    if certificate.verdict == "same":
+        return "\n".join(_explain_same(certificate, most_moves))
+    lines = [f"claim: the closure of {_named('left', certificate.left)}"]
+    for distinction in certificate.distinctions:
+        image = IMAGES[distinction.symmetry]
+        lines.append(f"  is not {image} of {_named('right', certificate.right)},")
+        lines += ["  " + line for line in _explain_distinction(distinction, most_moves)]
+    return "\n".join(lines)
+
+
+def explain_move(move: Move) -> str:
+    """One move in words, with the word that results."""
+    word = shown_word(move.word)
+    if isinstance(move, Rewrite):
+        return f"rewrite by braid relations: {word}"
+    if isinstance(move, Conjugate):
+        return f"conjugate by {shown_word(move.by)}: {word}"
+    if isinstance(move, Stabilize):
+        return f"add strand {move.strands} with the letter {move.sign * (move.strands - 1)}: {word}"
+    taken = f"take away strand {move.strands + 1} with the letter {move.sign * move.strands}"
+    return f"{taken}: {word}"
+
+
+def shown_word(word: tuple[int, ...]) -> str:
+    """The letters, the middle of a long word left out."""
+    if not word:
+        return "(empty)"
+    if len(word) <= _LONGEST_WORD:
+        return " ".join(map(str, word))
+    half = _LONGEST_WORD // 2
+    head, tail = " ".join(map(str, word[:half])), " ".join(map(str, word[-half:]))
+    return f"{head} ... {tail} ({len(word)} letters)"
+
+
+def shown_braid(braid: Braid) -> str:
+    """The braid as it may be typed, the middle of a long word left out."""
+    if len(braid.word) <= _LONGEST_WORD:
+        return f'"{format_word(braid)}"'
+    return f'"{braid.strands}: {shown_word(braid.word)}"'
+
+
+def _explain_same(certificate: Certificate, most_moves: int | None) -> list[str]:
+    assert certificate.symmetry is not None
+    image = IMAGES[certificate.symmetry]
+    claim = [
+        f"claim: the closure of {_named('left', certificate.left)}",
+        f"  is {image} of {_named('right', certificate.right)}",
+    ]
+    if not certificate.moves:
+        return [*claim, "proof: the words are the same, letter by letter"]
+    lines = [f"proof: {count_of(len(certificate.moves), 'move')}, from LEFT"]
+    lines += _number_moves(certificate.moves, most_moves)
+    by = "" if certificate.symmetry == "identity" else f", its {certificate.symmetry} word taken"
+    return [*claim, *lines, f"  which is RIGHT, letter by letter{by}"]
+
+
+def _explain_distinction(distinction: Distinction, most_moves: int | None) -> list[str]:
+    lines = []
+    for side, moves in (("LEFT", distinction.left_moves), ("RIGHT", distinction.right_moves)):
+        if moves:
+            lines.append(f"after {count_of(len(moves), 'move')} on {side}:")
+            lines += _number_moves(moves, most_moves)
+    of = "RIGHT" if distinction.symmetry == "identity" else f"{distinction.symmetry} of RIGHT"
+    lines.append(f"by the {describe_invariant(distinction)}:")
+    for side, value in (("LEFT", distinction.left), (of, distinction.right)):
+        lines.append(f"  {side + ':':<{len(of) + 1}} {show_value(distinction.invariant, value)}")
+    return lines
+
+
+def describe_invariant(distinction: Distinction) -> str:
+    """The name of the invariant in words, with the parameters that select it."""
+    name = distinction.invariant
+    title = TITLES.get(name, name)
+    if not distinction.parameters:
+        return title
+    given = ", ".join(f"{name} = {value}" for name, value in distinction.parameters)
+    return f"{title} ({given})"
+
+
+def _number_moves(moves: tuple[Move, ...], most_moves: int | None) -> list[str]:
+    width = len(str(len(moves)))
+    lines = [f"  {n:>{width}}. {explain_move(move)}" for n, move in enumerate(moves, 1)]
+    if most_moves is None or len(lines) <= most_moves:
+        return lines
+    head, tail = (most_moves + 1) // 2, most_moves // 2
+    hidden = len(lines) - head - tail
+    left_out = f"  {'':>{width}}  ... {hidden} more moves, which stand in the certificate"
+    return [*lines[:head], left_out, *(lines[-tail:] if tail else [])]
+
+
+def _named(side: str, braid: Braid) -> str:
+    return f"{side.upper()} = {shown_braid(braid)}"
+
+
+def count_of(number: int, noun: str) -> str:
+    """The number with its noun: "1 move", "2 moves"."""
+    return f"{number} {noun}" + ("" if number == 1 else "s")

@@ -1,0 +1,1 @@
+"""The command line: main, and one file for each command."""

@@ -1,0 +1,136 @@
+"""braidsearch compare LEFT RIGHT: same link, different links, or undecided."""
+
+from __future__ import annotations
+
+from argparse import Namespace
+from collections.abc import Sequence
+from typing import TYPE_CHECKING
+
+from braidsearch.certificates import (
+    certificate_to_json,
+    check_destination,
+    format_certificate,
+    write_certificate,
+)
+from braidsearch.command_line.answer import Answer, json_answer
+from braidsearch.command_line.arguments import CommandParser, read_word_argument
+from braidsearch.command_line.compare_report import report_verdict
+from braidsearch.command_line.progress import progress_line
+from braidsearch.errors import InputError
+from braidsearch.words import SYMMETRIES, Braid
+
+if TYPE_CHECKING:
+    from braidsearch.search.limits import SearchLimits
+    from braidsearch.search.verdict import Verdict
+
+STATUS = {"same": 0, "different": 1, "undecided": 3}
+
+_DESCRIPTION = """Say whether the closures of two braids are the same oriented link.
+
+The answer is "same link" with the moves that prove it, "different links" with an invariant that
+differs, or "undecided" with what was tried: undecided is not different. A verdict is given only
+after the independent verifier has accepted its certificate."""
+
+_EXAMPLES = """  braidsearch compare "1 1 1" "1 2 1 2"
+  braidsearch compare "1 1 1" "-1 -1 -1" --up-to mirror
+  braidsearch compare "4: 1 -2 1 -2" "s1 s2^-1 s1 s2^-1" --up-to any -o proof.json
+  braidsearch compare "1 1 1" "1 2 1 2" -o - | braidsearch verify -
+
+exit status: 0 same, 1 different, 3 undecided, 2 for a mistake in the input."""
+
+
+def answer(arguments: Sequence[str]) -> Answer:
+    """Carry out the command. Raises InputError for what cannot be read or written."""
+    given = _parser().read(arguments)
+    if given.output == "-" and given.json:
+        raise InputError("-o -: expected a file, since --json prints the certificate already")
+    left, right = _read_braids(given)
+    up_to, limits = _read_symmetries(given.up_to or []), _read_limits(given)
+    if given.output not in (None, "-"):
+        check_destination(given.output)
+    verdict = _compare(left, right, up_to, limits)
+    return _answer_verdict(verdict, left, right, given)
+
+
+def _parser() -> CommandParser:
+    parser = CommandParser("compare", _DESCRIPTION, _EXAMPLES)
+    parser.add_word("left", "a braid word")
+    parser.add_word("right", "a braid word")
+    parser.add_argument(
+        "--up-to",
+        action="append",
+        metavar="SYMMETRIES",
+        help="links that count as the same too: mirror,reverse,mirror-reverse or any",
+    )
+    parser.add_text("-o", "--output", metavar="FILE", explanation="certificate file (-: print it)")
+    parser.add_json()
+    parser.add_number("--seconds", float, "seconds or none", "stop after so many seconds (60)")
+    parser.add_number("--nodes", int, "a count or none", "stop after so many conjugacy classes")
+    parser.add_number(
+        "--max-strands",
+        int,
+        "a count or none",
+        "most strands on the way (two more than the larger word has)",
+    )
+    return parser
+
+
+def _read_braids(given: Namespace) -> tuple[Braid, Braid]:
+    if given.left == given.right == "-":
+        raise InputError("RIGHT: -: expected a word, since LEFT reads standard input already")
+    return read_word_argument("LEFT", given.left), read_word_argument("RIGHT", given.right)
+
+
+def _read_symmetries(values: Sequence[str]) -> tuple[str, ...]:
+    """The symmetries asked for beside the identity, in the order of SYMMETRIES."""
+    names = [name.strip() for value in values for name in value.split(",")]
+    for name in names:
+        if name not in (*SYMMETRIES, "any"):
+            raise InputError(f"--up-to: {name!r}: expected any, or {', '.join(SYMMETRIES[1:])}")
+    wanted = SYMMETRIES if "any" in names else names
+    return tuple(symmetry for symmetry in SYMMETRIES[1:] if symmetry in wanted)
+
+
+def _read_limits(given: Namespace) -> SearchLimits:
+    from braidsearch.search.limits import SearchLimits  # noqa: PLC0415 - help and mistakes come faster
+
+    named = {"seconds": given.seconds, "nodes": given.nodes, "max_strands": given.max_strands}
+    return SearchLimits(**{name: value for name, value in named.items() if value is not None})
+
+
+def _compare(left: Braid, right: Braid, up_to: Sequence[str], limits: SearchLimits) -> Verdict:
+    from braidsearch.search.driver import compare  # noqa: PLC0415 - help and mistakes come faster
+
+    line = progress_line()
+    try:
+        return compare(left, right, up_to=up_to, limits=limits, progress=line)
+    finally:
+        if line is not None:
+            line.erase()
+
+
+def _answer_verdict(verdict: Verdict, left: Braid, right: Braid, given: Namespace) -> Answer:
+    status, certificate = STATUS[verdict.outcome], verdict.certificate
+    missing = ""
+    if given.output is not None and certificate is None:
+        missing = f"braidsearch compare: undecided, so no certificate was written to {given.output}"
+    elif given.output not in (None, "-") and certificate is not None:
+        write_certificate(certificate, given.output)
+    if given.json:
+        return json_answer(status, _verdict_to_json(verdict), missing)
+    report = report_verdict(verdict, left, right, given.output)
+    if given.output != "-":
+        return Answer(status, report)
+    text = "" if certificate is None else format_certificate(certificate).rstrip()
+    return Answer(status, text, report)  # the certificate takes standard output
+
+
+def _verdict_to_json(verdict: Verdict) -> dict[str, object]:
+    certificate = verdict.certificate
+    return {
+        "outcome": verdict.outcome,
+        "symmetry": verdict.symmetry,
+        "reason": verdict.reason,
+        "certificate": None if certificate is None else certificate_to_json(certificate),
+        "explored": dict(verdict.explored),
+    }
