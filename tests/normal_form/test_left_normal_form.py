@@ -1,6 +1,7 @@
 """The left normal form is a unique name for a braid, and its factors are left-weighted."""
 
 import random
+from itertools import pairwise
 
 import pytest
 from hypothesis import given, settings
@@ -33,7 +34,7 @@ def test_equality_agrees_with_artins_action(data):
 
 
 def test_equality_agrees_with_artins_action_on_short_words():
-    """On 3 strands, where unequal short words often meet, both oracles cut into the same classes."""
+    """On 3 strands, where short words often meet, both oracles cut them into the same classes."""
     generator = random.Random(20)
     words = [random_braid(generator, 3, generator.randrange(7)) for _ in range(700)]
     by_action: dict[object, object] = {}
@@ -64,7 +65,7 @@ def test_factors_are_left_weighted(braid):
     elements = simple_elements(braid.strands)
     names = [elements.number(factor) for factor in form.factors]
     assert not {elements.identity, elements.delta} & set(names)
-    for left, right in zip(names, names[1:], strict=False):
+    for left, right in pairwise(names):
         assert not elements.starts[right] & ~elements.finishes[left]
 
 
