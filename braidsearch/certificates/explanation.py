@@ -89,8 +89,7 @@ def _explain_same(certificate: Certificate, most_moves: int | None) -> list[str]
         return [*claim, "proof: the words are the same, letter by letter"]
     lines = [f"proof: {count_of(len(certificate.moves), 'move')}, from LEFT"]
     lines += _number_moves(certificate.moves, most_moves)
-    by = "" if certificate.symmetry == "identity" else f", its {certificate.symmetry} word taken"
-    return [*claim, *lines, f"  which is RIGHT, letter by letter{by}"]
+    return [*claim, *lines, f"  which is {_image_of_right(certificate.symmetry)}, letter by letter"]
 
 
 def _explain_distinction(distinction: Distinction, most_moves: int | None) -> list[str]:
@@ -99,7 +98,7 @@ def _explain_distinction(distinction: Distinction, most_moves: int | None) -> li
         if moves:
             lines.append(f"after {count_of(len(moves), 'move')} on {side}:")
             lines += _number_moves(moves, most_moves)
-    of = "RIGHT" if distinction.symmetry == "identity" else f"{distinction.symmetry} of RIGHT"
+    of = _image_of_right(distinction.symmetry, article="")
     lines.append(f"by the {describe_invariant(distinction)}:")
     for side, value in (("LEFT", distinction.left), (of, distinction.right)):
         lines.append(f"  {side + ':':<{len(of) + 1}} {show_value(distinction.invariant, value)}")
@@ -125,6 +124,10 @@ def _number_moves(moves: tuple[Move, ...], most_moves: int | None) -> list[str]:
     hidden = len(lines) - head - tail
     left_out = f"  {'':>{width}}  ... {hidden} more moves, which stand in the certificate"
     return [*lines[:head], left_out, *(lines[-tail:] if tail else [])]
+
+
+def _image_of_right(symmetry: str, article: str = "the ") -> str:
+    return "RIGHT" if symmetry == "identity" else f"{article}{symmetry} of RIGHT"
 
 
 def _named(side: str, braid: Braid) -> str:
