@@ -5,7 +5,12 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 
-from braidsearch.normal_form.conjugation import conjugator_word, slide_to_circuit
+from braidsearch.normal_form.conjugation import (
+    ShouldStop,
+    conjugator_word,
+    never,
+    slide_to_circuit,
+)
 from braidsearch.normal_form.left_normal_form import (
     Element,
     are_equal,
@@ -47,10 +52,15 @@ class ConjugacyClass:
         return Braid.trusted(element_word(elements, (infimum, names)), strands)
 
 
-def conjugacy_class(braid: Braid, cap: int = DEFAULT_SUMMIT_CAP) -> ConjugacyClass:
-    """The class of a braid: cyclic sliding, then the ultra summit set up to ``cap`` members."""
+def conjugacy_class(
+    braid: Braid, cap: int = DEFAULT_SUMMIT_CAP, should_stop: ShouldStop = never
+) -> ConjugacyClass:
+    """The class of a braid: cyclic sliding, then the ultra summit set up to ``cap`` members.
+
+    ``should_stop`` is asked on the way; once it says so, the class is returned as incomplete.
+    """
     elements = simple_elements(braid.strands)
-    to_summit, summit = _find_summit(elements, braid, cap)
+    to_summit, summit = _find_summit(elements, braid, cap, should_stop)
     least = min(summit.parents, key=lambda member: _sort_key(elements, member))
     conjugators = to_summit + summit.conjugators_to(least)
     infimum, factors = _sort_key(elements, least)
@@ -64,11 +74,11 @@ def conjugacy_class(braid: Braid, cap: int = DEFAULT_SUMMIT_CAP) -> ConjugacyCla
 
 
 def iter_summit(
-    braid: Braid, cap: int = DEFAULT_SUMMIT_CAP
+    braid: Braid, cap: int = DEFAULT_SUMMIT_CAP, should_stop: ShouldStop = never
 ) -> Iterator[tuple[Braid, tuple[int, ...]]]:
     """The members of the ultra summit set, as words, each with a conjugator from ``braid``."""
     elements = simple_elements(braid.strands)
-    to_summit, summit = _find_summit(elements, braid, cap)
+    to_summit, summit = _find_summit(elements, braid, cap, should_stop)
     for member in summit.parents:
         by = conjugator_word(elements, to_summit + summit.conjugators_to(member))
         yield Braid.trusted(element_word(elements, member), braid.strands), by
@@ -92,11 +102,11 @@ def find_conjugator(
 
 
 def _find_summit(
-    elements: SimpleElements, braid: Braid, cap: int
+    elements: SimpleElements, braid: Braid, cap: int, should_stop: ShouldStop
 ) -> tuple[tuple[int, ...], Summit]:
     element = element_of_word(elements, braid.word)
-    start, to_summit = slide_to_circuit(elements, element)
-    return to_summit, ultra_summit_set(elements, start, cap)
+    start, to_summit = slide_to_circuit(elements, element, should_stop)
+    return to_summit, ultra_summit_set(elements, start, cap, should_stop)
 
 
 def _sort_key(elements: SimpleElements, member: Element) -> tuple[int, tuple[Permutation, ...]]:

@@ -2,11 +2,21 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
+
 from braidsearch.normal_form.left_normal_form import Element, push_left, push_right
 from braidsearch.normal_form.simple_elements import SimpleElements
 
+ShouldStop = Callable[[], bool]
+"""Asked between steps: whether a long walk should end early, with what it has."""
+
 Conjugators = tuple[int, ...]
 """Simple elements by which to conjugate one after the other: their product, left to right."""
+
+
+def never() -> bool:
+    """Walks that are to end by themselves ask this."""
+    return False
 
 
 def conjugate_by_simple(elements: SimpleElements, element: Element, by: int) -> Element:
@@ -59,11 +69,18 @@ def slide(elements: SimpleElements, element: Element) -> tuple[Element, int]:
     return conjugate_by_simple(elements, element, prefix), prefix
 
 
-def slide_to_circuit(elements: SimpleElements, element: Element) -> tuple[Element, Conjugators]:
-    """A member of the sliding circuit at the end, with the conjugators that lead there."""
+def slide_to_circuit(
+    elements: SimpleElements, element: Element, should_stop: ShouldStop = never
+) -> tuple[Element, Conjugators]:
+    """A member of the sliding circuit at the end, with the conjugators that lead there.
+
+    A walk that is stopped early returns the conjugate that it has reached.
+    """
     places: dict[Element, int] = {}
     conjugators: list[int] = []
     while element not in places:
+        if should_stop():
+            return element, tuple(conjugators)
         places[element] = len(conjugators)
         element, prefix = slide(elements, element)
         if prefix == elements.identity:

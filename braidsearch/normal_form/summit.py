@@ -7,10 +7,12 @@ from dataclasses import dataclass, field
 
 from braidsearch.normal_form.conjugation import (
     Conjugators,
+    ShouldStop,
     conjugate_by_simple,
     cycle,
     initial_factor,
     inverse_element,
+    never,
 )
 from braidsearch.normal_form.left_normal_form import Element
 from braidsearch.normal_form.simple_elements import SimpleElements
@@ -40,8 +42,10 @@ class Summit:
         return tuple(reversed(path))
 
 
-def ultra_summit_set(elements: SimpleElements, start: Element, cap: int) -> Summit:
-    """Walk the ultra summit set from a member, up to ``cap`` members.
+def ultra_summit_set(
+    elements: SimpleElements, start: Element, cap: int, should_stop: ShouldStop = never
+) -> Summit:
+    """Walk the ultra summit set from a member, up to ``cap`` members or until told to stop.
 
     ``start`` must lie on a cycling orbit of the super summit set (the end of cyclic sliding does).
     One member stands for its orbit under cycling: transport along the orbit is a bijection of the
@@ -49,29 +53,36 @@ def ultra_summit_set(elements: SimpleElements, start: Element, cap: int) -> Summ
     Gebhardt, A new approach to the conjugacy problem in Garside groups, 2005.
     """
     summit = Summit(start, {start: None})
-    waiting = _add_orbit(elements, summit, start)
-    while waiting:
+    waiting = [_add_orbit(elements, summit, start, cap)]
+    while waiting and summit.is_complete:
         orbit = waiting.pop(0)
         arrows = Arrows(elements, orbit)
         for atom in elements.atoms:
+            if len(summit.parents) > cap or should_stop():
+                summit.is_complete = False
+                break
             arrow = arrows.minimal_arrow(atom)
             if arrow is None:
                 continue
             target = conjugate_by_simple(elements, orbit[0], arrow)
             if target not in summit.parents:
                 summit.parents[target] = (orbit[0], arrow)
-                waiting.extend(_add_orbit(elements, summit, target))
-            if len(summit.parents) > cap:
-                summit.is_complete = False
-                return summit
+                waiting.append(_add_orbit(elements, summit, target, cap))
     return summit
 
 
-def _add_orbit(elements: SimpleElements, summit: Summit, start: Element) -> list[list[Element]]:
-    """Enter the cycling orbit of a new member and its flipped orbit; returns the orbit to walk."""
+def _add_orbit(elements: SimpleElements, summit: Summit, start: Element, cap: int) -> list[Element]:
+    """Enter the cycling orbit of a new member and its flipped orbit; returns the orbit.
+
+    An orbit that is longer than the cap, or that does not return because ``start`` is not in the
+    ultra summit set after all (its sliding was stopped), leaves the summit incomplete.
+    """
     orbit = [start]
     following = cycle(elements, start)
     while following != start:
+        if following in summit.parents or len(orbit) > cap:
+            summit.is_complete = False
+            break
         summit.parents[following] = (orbit[-1], initial_factor(elements, orbit[-1]))
         orbit.append(following)
         following = cycle(elements, following)
@@ -80,7 +91,7 @@ def _add_orbit(elements: SimpleElements, summit: Summit, start: Element) -> list
         flipped = (infimum, tuple(elements.flip(factor) for factor in factors))
         if flipped not in summit.parents:
             summit.parents[flipped] = (member, elements.delta)
-    return [orbit]
+    return orbit
 
 
 class Arrows:

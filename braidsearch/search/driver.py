@@ -101,7 +101,7 @@ class _Query:
         for place, symmetry in enumerate(symmetries, 1):
             share = start + (end - start) * place / len(symmetries)
             meeting = self._meeting(left, symmetry)
-            self.ending = meeting.run(self.budget, share)
+            self.ending = meeting.run(share)
             if self.ending is Ending.FOUND:
                 return self._same(meeting, symmetry)
         return None
@@ -111,7 +111,7 @@ class _Query:
         if symmetry not in self.meetings:
             image = apply_symmetry(self.right, symmetry)
             right = simplify(image, self.budget, _SIMPLIFY_SUMMIT_CAP)
-            self.meetings[symmetry] = Meeting(left, right, self.budget.limits)
+            self.meetings[symmetry] = Meeting(left, right, self.budget)
             self.tried.append(f"search for moves, {symmetry}")
         return self.meetings[symmetry]
 

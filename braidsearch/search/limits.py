@@ -90,6 +90,10 @@ class Budget:
             return math.inf
         return self.limits.seconds - self.seconds
 
+    def is_out_of_time(self) -> bool:
+        """Whether the seconds are used up: long walks ask this between steps."""
+        return self.seconds_left <= 0
+
     def ending(self, share: float = 1.0) -> Ending | None:
         """The limit that has been reached, if any; ``share`` is the part of them to use."""
         limits = self.limits

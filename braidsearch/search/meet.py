@@ -9,7 +9,7 @@ from dataclasses import dataclass, field
 from braidsearch.moves import Conjugate, Move, MoveChain
 from braidsearch.normal_form.conjugacy import ClassKey, ConjugacyClass, conjugacy_class
 from braidsearch.search.class_graph import SUMMIT_CAP, ClassGraph
-from braidsearch.search.limits import Budget, Ending, SearchLimits
+from braidsearch.search.limits import Budget, Ending
 from braidsearch.search.proposals import (
     draft_destabilization,
     draft_exchange,
@@ -51,56 +51,60 @@ class Meeting:
     from either side, are nodes of one graph.
     """
 
-    def __init__(self, left: MoveChain, right: MoveChain, limits: SearchLimits) -> None:
+    def __init__(self, left: MoveChain, right: MoveChain, budget: Budget) -> None:
         self._left_chain, self._right_chain = left, right
-        self.left = Side(conjugacy_class(left.current, SUMMIT_CAP))
-        self.right = Side(conjugacy_class(right.current, SUMMIT_CAP))
+        self._budget = budget
+        self.left = Side(self._classify(left.current))
+        self.right = Side(self._classify(right.current))
         self.graph = ClassGraph()
         for side in (self.left, self.right):
             self.graph.add_class(side.start)
         larger = max(left.start.strands, right.start.strands)
-        self._max_strands = limits.max_strands or larger + _EXTRA_STRANDS
-        self._max_letters = limits.max_letters
+        self._max_strands = budget.limits.max_strands or larger + _EXTRA_STRANDS
+        self._max_letters = budget.limits.max_letters
 
     @property
     def is_met(self) -> bool:
         """Whether a class is known to both sides."""
         return not self.left.met.isdisjoint(self.right.met)
 
-    def run(self, budget: Budget, share: float = 1.0) -> Ending:
+    def run(self, share: float = 1.0) -> Ending:
         """Expand classes, on the side that has met fewer, until both meet or a limit is reached."""
         while not self.is_met:
             sides = sorted((self.left, self.right), key=lambda side: len(side.met))
             side = next((side for side in sides if side.waiting), None)
             if side is None:
                 return Ending.EXHAUSTED
-            ending = budget.ending(share)
+            ending = self._budget.ending(share)
             if ending is not None:
                 return ending
             fewest = min(self.left.fewest_strands, self.right.fewest_strands)
-            budget.tell(fewest, "search over conjugacy classes")
-            self._expand(side, budget, share)
+            self._budget.tell(fewest, "search over conjugacy classes")
+            self._expand(side, share)
         return Ending.FOUND
 
-    def _expand(self, side: Side, budget: Budget, share: float) -> None:
+    def _classify(self, braid: Braid) -> ConjugacyClass:
+        return conjugacy_class(braid, SUMMIT_CAP, self._budget.is_out_of_time)
+
+    def _expand(self, side: Side, share: float) -> None:
         """Enter the classes next to the first one that waits; a limit puts it back."""
         entry = heapq.heappop(side.waiting)
         _, depth, _, key = entry
         for draft in self._iter_drafts(self.graph.representative(key)):
-            found = conjugacy_class(draft.current, SUMMIT_CAP)
+            found = self._classify(draft.current)
             self.graph.add_class(found)
             self.graph.add_edge(key, draft, found)
-            budget.nodes += 1
+            self._budget.nodes += 1
             if found.key not in side.met:
                 side.enter(found.key, depth + 1)
             if self.is_met:
                 return
-            if budget.ending(share) is not None:
+            if self._budget.ending(share) is not None:
                 heapq.heappush(side.waiting, entry)
                 return
 
     def _iter_drafts(self, braid: Braid) -> Iterator[MoveChain]:
-        words = list(iter_words(braid, SUMMIT_CAP))
+        words = list(iter_words(braid, SUMMIT_CAP, self._budget.is_out_of_time))
         for propose in (draft_destabilization, draft_exchange):
             for by, word in words:
                 draft = propose(braid, by, word)

@@ -6,6 +6,7 @@ from collections.abc import Iterator
 
 from braidsearch.moves import MoveChain, exchange
 from braidsearch.normal_form.conjugacy import iter_summit
+from braidsearch.normal_form.conjugation import ShouldStop, never
 from braidsearch.words import Braid
 from braidsearch.words.half_twist import flip_letters, half_twist
 from braidsearch.words.handles import reduce_handles, reduce_handles_turned
@@ -13,7 +14,9 @@ from braidsearch.words.handles import reduce_handles, reduce_handles_turned
 Letters = tuple[int, ...]
 
 
-def iter_words(braid: Braid, cap: int) -> Iterator[tuple[Letters, Letters]]:
+def iter_words(
+    braid: Braid, cap: int, should_stop: ShouldStop = never
+) -> Iterator[tuple[Letters, Letters]]:
     """Words for members of the class, each with the conjugator (by, word): word = by^-1 braid by.
 
     Every member of the ultra summit set, up to ``cap``, is written in its normal form and with its
@@ -21,7 +24,7 @@ def iter_words(braid: Braid, cap: int) -> Iterator[tuple[Letters, Letters]]:
     """
     turn = half_twist(braid.strands)
     seen: set[Letters] = set()
-    for member, by in iter_summit(braid, cap):
+    for member, by in iter_summit(braid, cap, should_stop):
         for word in _spellings(member):
             if word not in seen:
                 seen.add(word)

@@ -52,7 +52,7 @@ def _destabilize_once(chain: MoveChain, budget: Budget, summit_cap: int) -> bool
         return False
     return any(
         _take(chain, draft_destabilization(braid, by, word))
-        for by, word in iter_words(braid, summit_cap)
+        for by, word in iter_words(braid, summit_cap, budget.is_out_of_time)
     )
 
 
