@@ -21,21 +21,23 @@ IntegerArray = NDArray[np.int64]
 class BatchNormalForm:
     """The left normal forms of a batch of words on the same strands.
 
-    ``infima`` has shape (words,). ``factors`` has shape (words, longest, strands): the
-    permutations of the factors, as in NormalForm, filled up with identity permutations at the end;
-    ``lengths``, shape (words,), counts the true factors.
+    ``infima`` and ``lengths``, shape (words,), hold the infimum and the number of factors of each.
+    ``names``, shape (words, longest), names the factors: rows of ``permutations``, shape
+    (simple elements, strands), in which a strand that starts at position i ends at the entry i.
+    Name 0 is the identity and fills up short normal forms.
     """
 
     strands: int
     infima: IntegerArray
     lengths: IntegerArray
-    factors: NDArray[np.int16]
+    names: NDArray[np.integer]
+    permutations: IntegerArray
 
     def __len__(self) -> int:
         return len(self.infima)
 
     def __getitem__(self, index: int) -> NormalForm:
-        rows = self.factors[index, : self.lengths[index]].tolist()
+        rows = self.permutations[self.names[index, : self.lengths[index]]].tolist()
         return NormalForm(self.strands, int(self.infima[index]), tuple(map(tuple, rows)))
 
 
@@ -77,24 +79,25 @@ def _letter_array(
 def _by_tables(letters: IntegerArray, tables: PairTables) -> BatchNormalForm:
     blocks, counts = _cut_into_blocks(letters, tables)
     order = np.argsort(-counts, kind="stable")
-    blocks, counts = blocks[:, order], counts[order]
-    factors, negatives = _factors_of_blocks(blocks, tables)
-    factors = _weigh_columns(factors, counts, tables)
-    deltas = np.cumprod(factors == tables.delta, axis=0).sum(axis=0)
-    lengths = np.cumprod(factors != tables.identity, axis=0).sum(axis=0) - deltas
-    back = np.argsort(order, kind="stable")
-    shifted = _shift_columns(factors, deltas, int(lengths.max(initial=0)), tables.identity)
+    factors, negatives = _factors_of_blocks(blocks[:, order], tables)
+    factors = _weigh_columns(factors, counts[order], tables)
+    deltas = (factors == tables.delta).sum(axis=0) if tables.delta else 0 * negatives
+    lengths = (factors != tables.identity).sum(axis=0) - deltas
+    back = np.empty_like(order)
+    back[order] = np.arange(len(order))
+    names = _shift_columns(factors, deltas, int(lengths.max(initial=0)))
     return BatchNormalForm(
         strands=tables.strands,
         infima=(deltas - negatives)[back],
         lengths=lengths[back],
-        factors=tables.permutations.astype(np.int16)[shifted[:, back].T],
+        names=names.T[back],
+        permutations=tables.permutations,
     )
 
 
 def _cut_into_blocks(
     letters: IntegerArray, tables: PairTables
-) -> tuple[IntegerArray, IntegerArray]:
+) -> tuple[NDArray[np.int16], IntegerArray]:
     """Cut every word greedily into simple elements and inverses of simple elements.
 
     Returns the states of the cutting automaton at the end of each block, shape (blocks, words),
@@ -103,33 +106,36 @@ def _cut_into_blocks(
     count, length = letters.shape
     codes = (letters + (tables.strands - 1)).T.copy()
     width = 2 * tables.strands - 1
-    blocks = np.zeros((length + 1, count), dtype=np.int64)
+    blocks = np.zeros((length + 1, count), dtype=np.int16)
     flat = blocks.reshape(-1)
-    places = np.arange(count)
-    state = np.zeros(count, dtype=np.int64)
+    first, row_steps = np.arange(count), tables.emits * count
+    places, state = first.copy(), np.zeros(count, dtype=np.int64)
     for column in codes:
-        step = state * width + column
+        step = state * width
+        step += column
         flat[places] = state
-        places += np.take(tables.emits, step) * count
-        state = np.take(tables.next_state, step)
+        places += row_steps.take(step)
+        tables.next_state.take(step, out=state, mode="clip")
     flat[places] = state
-    counts = (places - np.arange(count)) // count + (
-        state % len(tables.permutations) != tables.identity
-    )
+    counts = (places - first) // count + (state % len(tables.permutations) != tables.identity)
     return blocks[: int(counts.max(initial=0))], counts
 
 
 def _factors_of_blocks(
-    blocks: IntegerArray, tables: PairTables
-) -> tuple[IntegerArray, IntegerArray]:
+    blocks: NDArray[np.int16], tables: PairTables
+) -> tuple[NDArray[np.int16], IntegerArray]:
     """Simple factors, each flipped once for every later inverse block; the inverse blocks."""
-    negative = tables.is_negative[blocks]
-    total = negative.sum(axis=0)
-    after = total - np.cumsum(negative, axis=0)
-    return tables.factor_of_block[blocks * 2 + (after & 1)], total
+    negative = tables.is_negative.astype(np.int8).take(blocks)
+    so_far = np.cumsum(negative, axis=0, dtype=np.int32)
+    total = so_far[-1] if len(so_far) else np.zeros(blocks.shape[1], dtype=np.int32)
+    index = (so_far ^ total) & 1
+    index += 2 * blocks.astype(np.int32)
+    return tables.factor_of_block.astype(np.int16).take(index), total.astype(np.int64)
 
 
-def _weigh_columns(factors: IntegerArray, counts: IntegerArray, tables: PairTables) -> IntegerArray:
+def _weigh_columns(
+    factors: NDArray[np.int16], counts: IntegerArray, tables: PairTables
+) -> NDArray[np.integer]:
     """Insert factor after factor into left-weighted columns; ``counts`` must not increase.
 
     What is inserted already is held times n!, ready to be the left half of an index of a pair.
@@ -150,19 +156,19 @@ def _weigh_columns(factors: IntegerArray, counts: IntegerArray, tables: PairTabl
             right.take(pair, out=columns[row + 1, :active], mode="clip")
             left.take(pair, out=moving, mode="clip")
         np.multiply(moving, size, out=columns[0, :active])
-    return columns.astype(np.int64) // size
+    columns //= narrow.type(size)
+    return columns
 
 
 def _shift_columns(
-    factors: IntegerArray, shifts: IntegerArray, longest: int, fill: int
-) -> IntegerArray:
-    """Each column moved up by its own shift, cut to the longest, filled up at the end."""
-    rows = np.arange(longest)[:, None] + shifts
-    if not len(factors):
-        return np.full(rows.shape, fill, dtype=np.int64)
-    inside = rows < len(factors)
-    taken = np.take_along_axis(factors, np.minimum(rows, len(factors) - 1), axis=0)
-    return np.where(inside, taken, fill)
+    factors: NDArray[np.integer], shifts: IntegerArray, longest: int
+) -> NDArray[np.integer]:
+    """Each column moved up by its own shift, cut to the longest; identities fill up the end."""
+    height, count = factors.shape
+    padded = np.zeros((max(height, int(shifts.max(initial=0))) + longest, count), factors.dtype)
+    padded[:height] = factors
+    places = np.arange(count) + shifts * count + np.arange(longest)[:, None] * count
+    return padded.reshape(-1).take(places)
 
 
 def _by_permutations(letters: IntegerArray, strands: int) -> BatchNormalForm:
@@ -187,12 +193,13 @@ def _by_permutations(letters: IntegerArray, strands: int) -> BatchNormalForm:
     is_delta = (factors == identity[::-1]).all(axis=2)
     deltas = np.cumprod(is_delta, axis=0).sum(axis=0)
     lengths = np.cumprod((factors != identity).any(axis=2), axis=0).sum(axis=0) - deltas
-    shape = (len(sequences), int(lengths.max(initial=0)), strands)
-    kept = np.broadcast_to(identity.astype(np.int16), shape).copy()
+    names = np.zeros((len(sequences), int(lengths.max(initial=0))), dtype=np.int64)
+    kept = [identity]
     for column, (shift, length) in enumerate(zip(deltas, lengths, strict=True)):
-        kept[column, :length] = factors[shift : shift + length, column]
+        names[column, :length] = np.arange(len(kept), len(kept) + length)
+        kept.extend(factors[shift : shift + length, column])
     infima = np.array([infimum for infimum, _ in sequences], dtype=np.int64) + deltas
-    return BatchNormalForm(strands, infima, lengths, kept)
+    return BatchNormalForm(strands, infima, lengths, names, np.array(kept))
 
 
 def left_normal_forms_of(braids: Sequence[Braid]) -> BatchNormalForm:
