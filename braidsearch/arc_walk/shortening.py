@@ -1,0 +1,125 @@
+"""Short presentations of a link: cool, then heat and cool again from the best ones found."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass, field
+
+from braidsearch.arc_walk.walking import Phase, Walk, mixed_seed, walk
+from braidsearch.diagrams import (
+    ArcMove,
+    ArcMoveKind,
+    ArcPresentation,
+    apply_arc_move,
+    arcs_from_word,
+    word_from_arcs,
+)
+from braidsearch.diagrams.arc_cuts import shortest_row_cut, torus_key, word_lengths
+from braidsearch.words import Braid
+
+COOLING_TRIES_A_COLUMN = 400
+HEAT_TRIES = (100, 600)
+HEAT_SPLITS = (1, 3)
+SETTLING_TRIES = 250
+LARGEST_POOL = 64
+
+
+@dataclass(frozen=True, slots=True)
+class ShortPresentation:
+    """A presentation reached from ``start``, with the walks that lead to it.
+
+    ``arcs`` is cut between rows so that ``braid``, its word, has as few letters as possible.
+    """
+
+    start: Braid
+    arcs: ArcPresentation
+    walks: tuple[Walk, ...]
+    tries: int
+
+    @property
+    def braid(self) -> Braid:
+        """The word of the presentation."""
+        return word_from_arcs(self.arcs)
+
+    def iter_moves(self) -> Iterator[ArcMove]:
+        """The moves from arcs_from_word(start) to ``arcs``: walks, and a rotation to the cut."""
+        for part in self.walks:
+            yield from part.iter_moves()
+        end = self.walks[-1].end
+        count = shortest_row_cut(end)
+        if count:
+            yield ArcMove(ArcMoveKind.ROTATE_ROWS, count)
+
+
+@dataclass(slots=True)
+class _Pool:
+    """The presentations on the fewest strands so far: those with fewest letters, each once."""
+
+    strands: int
+    walks: list[tuple[int, tuple[Walk, ...]]] = field(default_factory=list)
+    keys: set[tuple[tuple[int, int], ...]] = field(default_factory=set)
+
+    def offer(self, walks: tuple[Walk, ...]) -> None:
+        """Take a presentation in, unless it is known or on more strands than the best."""
+        end = walks[-1]
+        if end.strands > self.strands:
+            return
+        if end.strands < self.strands:
+            self.strands = end.strands
+            self.walks.clear()
+            self.keys.clear()
+        key = torus_key(end.end)
+        if key in self.keys:
+            return
+        self.keys.add(key)
+        self.walks.append((min(word_lengths(end.end)), walks))
+        self.walks.sort(key=lambda entry: entry[0])
+        del self.walks[LARGEST_POOL:]
+
+
+def cooled(braid: Braid, seed: int, *, exchanges: float = 1.0) -> Walk:
+    """The presentation of a word, cooled with tries in proportion to its size."""
+    arcs = arcs_from_word(braid)
+    tries = COOLING_TRIES_A_COLUMN * arcs.size
+    return walk(arcs, mixed_seed(seed, 0), (Phase(tries, merges=0.25, exchanges=exchanges),))
+
+
+def find_short(
+    braid: Braid, seed: int, tries: int, *, keep: int = 8, exchanges: float = 1.0
+) -> list[ShortPresentation]:
+    """The best presentations that about ``tries`` tries reach: fewest strands, then letters.
+
+    The word's own presentation is cooled; then each round heats one of the best ones by one to
+    three splits, cools it, and takes what it finds into the pool, where only the least strand
+    count stays. At most ``keep`` results, best first; the same seed gives the same results.
+    """
+    first = cooled(braid, seed, exchanges=exchanges)
+    pool = _Pool(first.strands)
+    pool.offer((first,))
+    spent = first.plan[0].tries
+    number = 0
+    while spent < tries and pool.strands > braid.components:
+        number += 1
+        plan = _heat_plan(mixed_seed(seed, number, 1), exchanges)
+        _, chosen = pool.walks[mixed_seed(seed, number, 2) % len(pool.walks)]
+        step = walk(chosen[-1].end, mixed_seed(seed, number, 3), plan)
+        spent += sum(phase.tries for phase in plan)
+        pool.offer((*chosen, step))
+    return [_result(braid, walks, spent) for _, walks in pool.walks[:keep]]
+
+
+def _heat_plan(seed: int, exchanges: float) -> tuple[Phase, ...]:
+    least, most = HEAT_TRIES
+    fewest, largest = HEAT_SPLITS
+    tries = least + seed % (most - least + 1)
+    splits = fewest + seed // 1024 % (largest - fewest + 1)
+    return (
+        Phase(tries, splits, merges=0.0, exchanges=exchanges),
+        Phase(SETTLING_TRIES, exchanges=exchanges),
+    )
+
+
+def _result(braid: Braid, walks: tuple[Walk, ...], tries: int) -> ShortPresentation:
+    end = walks[-1].end
+    cut = ArcMove(ArcMoveKind.ROTATE_ROWS, shortest_row_cut(end))
+    return ShortPresentation(braid, apply_arc_move(end, cut), walks, tries)
