@@ -19,15 +19,6 @@ IMAGES: dict[str, str] = {
 }
 """What each symmetry makes of the closure of the right braid, in words."""
 
-TITLES: dict[str, str] = {
-    "components": "number of components",
-    "linking-numbers": "linking numbers",
-    "alexander": "Alexander polynomial",
-    "jones": "Jones polynomial",
-    "homfly": "HOMFLY-PT polynomial",
-}
-"""The invariants whose name in words is more than the name in the certificate."""
-
 _LONGEST_WORD = 24
 
 
@@ -107,8 +98,10 @@ def _explain_distinction(distinction: Distinction, most_moves: int | None) -> li
 
 def describe_invariant(distinction: Distinction) -> str:
     """The name of the invariant in words, with the parameters that select it."""
-    name = distinction.invariant
-    title = TITLES.get(name, name)
+    from braidsearch.invariants import INVARIANTS  # noqa: PLC0415 - not for proofs of sameness
+
+    titles = {invariant.name: invariant.title for invariant in INVARIANTS}
+    title = titles.get(distinction.invariant, distinction.invariant)
     if not distinction.parameters:
         return title
     given = ", ".join(f"{name} = {value}" for name, value in distinction.parameters)

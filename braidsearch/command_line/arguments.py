@@ -6,6 +6,7 @@ import argparse
 import re
 import sys
 from collections.abc import Callable, Sequence
+from itertools import takewhile
 from typing import IO, NoReturn
 
 from braidsearch.errors import InputError
@@ -34,7 +35,22 @@ class CommandParser(argparse.ArgumentParser):
 
     def read(self, arguments: Sequence[str]) -> argparse.Namespace:
         """The arguments by name; ``-1,2`` is a word wherever it stands, never an option."""
+        for argument in takewhile(lambda argument: argument != "--", arguments):
+            if not self._is_known(argument):
+                raise InputError(f"{argument}: expected only the options that --help lists")
         return self.parse_args([_guarded(argument) for argument in arguments])
+
+    def _is_known(self, argument: str) -> bool:
+        """Whether the argument is no option, or one of this parser's."""
+        if (
+            argument[:1] != "-"
+            or argument == "-"
+            or " " in argument
+            or _guarded(argument) != argument
+        ):
+            return True
+        flag = argument.partition("=")[0] if argument.startswith("--") else argument[:2]
+        return flag in self._option_string_actions
 
     def add_word(self, name: str, explanation: str) -> None:
         """A braid word as a positional argument."""
@@ -47,8 +63,14 @@ class CommandParser(argparse.ArgumentParser):
     def add_number(
         self, flag: str, read: Callable[[str], object], expected: str, explanation: str
     ) -> None:
-        """An option with a number for its value, read by ``read``."""
-        self.add_argument(flag, metavar="N", type=_number_reader(read, expected), help=explanation)
+        """An option with a number for its value, read by ``read``; absent when it is not given."""
+        self.add_argument(
+            flag,
+            metavar="N",
+            default=argparse.SUPPRESS,
+            type=_number_reader(read, expected),
+            help=explanation,
+        )
 
     def add_json(self) -> None:
         """The option --json."""
@@ -63,9 +85,8 @@ class CommandParser(argparse.ArgumentParser):
     def error(self, message: str) -> NoReturn:
         """Raise InputError with the message, and with what was expected."""
         plain = message.replace(_GUARD, "")
-        unrecognized = "unrecognized arguments: "
-        if plain.startswith(unrecognized):
-            raise InputError(f"{plain}: {_expected_instead(plain.removeprefix(unrecognized))}")
+        if plain.startswith("unrecognized arguments: "):
+            plain += ': expected each word as one argument, in quotes: "1 -2 1"'
         raise InputError(plain.removeprefix("argument "))
 
 
@@ -112,9 +133,3 @@ def _number_reader(read: Callable[[str], object], expected: str) -> Callable[[st
             raise argparse.ArgumentTypeError(f"{plain!r}: expected {expected}") from None
 
     return read_number
-
-
-def _expected_instead(extra: str) -> str:
-    if extra.startswith("-") and not _WORD_WITH_MINUS.match(extra):
-        return "expected only the options that --help lists"
-    return 'expected each word as one argument, in quotes: "1 -2 1"'

@@ -94,19 +94,31 @@ def _read_symmetries(values: Sequence[str]) -> tuple[str, ...]:
 def _read_limits(given: Namespace) -> SearchLimits:
     from braidsearch.search.limits import SearchLimits  # noqa: PLC0415 - help and mistakes come faster
 
-    named = {"seconds": given.seconds, "nodes": given.nodes, "max_strands": given.max_strands}
-    return SearchLimits(**{name: value for name, value in named.items() if value is not None})
+    bounds = ("seconds", "nodes", "max_strands")
+    return SearchLimits(**{name: getattr(given, name) for name in bounds if hasattr(given, name)})
 
 
 def _compare(left: Braid, right: Braid, up_to: Sequence[str], limits: SearchLimits) -> Verdict:
-    from braidsearch.search.driver import compare  # noqa: PLC0415 - help and mistakes come faster
-
     line = progress_line()
     try:
+        from braidsearch.search.driver import compare  # noqa: PLC0415 - help and mistakes come faster
+
         return compare(left, right, up_to=up_to, limits=limits, progress=line)
+    except KeyboardInterrupt:  # outside the search, which has its own answer to it
+        return _broken_off("interrupted")
+    except MemoryError:
+        return _broken_off("out of memory")
     finally:
         if line is not None:
             line.erase()
+
+
+def _broken_off(ending: str) -> Verdict:
+    """Undecided without a word on what was tried: it is lost with the search."""
+    from braidsearch.search.verdict import Verdict  # noqa: PLC0415 - help and mistakes come faster
+
+    explored = {"nodes": 0, "seconds": 0.0, "ending": ending, "tried": []}
+    return Verdict("undecided", None, f"the search was broken off: {ending}", None, explored)
 
 
 def _answer_verdict(verdict: Verdict, left: Braid, right: Braid, given: Namespace) -> Answer:

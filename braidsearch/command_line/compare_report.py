@@ -5,7 +5,7 @@ from __future__ import annotations
 import shlex
 from typing import TYPE_CHECKING
 
-from braidsearch.certificates.explanation import IMAGES, count_of, explain_certificate
+from braidsearch.certificates.explanation import IMAGES, explain_certificate
 from braidsearch.words import Braid, format_word
 
 if TYPE_CHECKING:
@@ -41,11 +41,10 @@ def _headline(verdict: Verdict) -> str:
 
 def _tell_tried(verdict: Verdict) -> list[str]:
     explored = verdict.explored
-    spent = f"{count_of(explored['nodes'], 'conjugacy class')}".replace("classs", "classes")
-    lines = [f"explored: {spent} in {explored['seconds']:.1f} s, ending: {explored['ending']}"]
-    lines += ["tried:", *(f"  - {tried}" for tried in explored["tried"])]
-    if verdict.suggestions:
-        lines += ["to go on:", *(f"  - {suggestion}" for suggestion in verdict.suggestions)]
+    nodes, seconds, ending = explored["nodes"], explored["seconds"], explored["ending"]
+    lines = [f"explored: {nodes} conjugacy classes in {seconds:.1f} s, ending: {ending}"]
+    for title, items in (("tried:", explored["tried"]), ("to go on:", verdict.suggestions)):
+        lines += [title, *(f"  - {item}" for item in items)] if items else []
     return lines
 
 

@@ -6,10 +6,10 @@ import sys
 from argparse import Namespace
 from collections.abc import Sequence
 
-from braidsearch.command_line.answer import Answer, json_answer
+from braidsearch.command_line.answer import Answer, json_answer, one_line
 from braidsearch.command_line.arguments import CommandParser, read_word_argument
 from braidsearch.errors import InputError
-from braidsearch.verifier import Report, verify_file, verify_text
+from braidsearch.verifier import Report, verify_text
 from braidsearch.verifier.verify import MAX_FILE_BYTES
 
 STATUS = {"valid": 0, "rejected": 1, "unreadable": 2}
@@ -37,7 +37,7 @@ def answer(arguments: Sequence[str]) -> Answer:
     given = parser.read(arguments)
     report = _verify(given)
     status, unreadable = STATUS[report.status], report.status == "unreadable"
-    hint = f"braidsearch verify: {given.file}: {report.reason}" if unreadable else ""
+    hint = one_line(f"braidsearch verify: {given.file}: {report.reason}") if unreadable else ""
     if given.json:
         keys = {"valid": report.valid, "claim": report.claim, "reason": report.reason}
         return json_answer(status, keys, hint)
@@ -48,11 +48,20 @@ def answer(arguments: Sequence[str]) -> Answer:
 
 def _verify(given: Namespace) -> Report:
     left, right = _binding("--left", given.left), _binding("--right", given.right)
-    if given.file != "-":
-        return verify_file(given.file, left, right)
+    try:
+        return verify_text(_read_bytes(given.file), left, right)
+    except OSError as error:
+        return Report("unreadable", "", f"{error.strerror}: expected a certificate file")
+
+
+def _read_bytes(file: str) -> bytes:
+    """The content, with one byte more than allowed where it is too long."""
+    if file != "-":
+        with open(file, "rb") as opened:
+            return opened.read(MAX_FILE_BYTES + 1)
     if sys.stdin is None:
         raise InputError("standard input: it is closed: expected a certificate")
-    return verify_text(sys.stdin.buffer.read(MAX_FILE_BYTES + 1), left, right)
+    return sys.stdin.buffer.read(MAX_FILE_BYTES + 1)
 
 
 def _binding(name: str, text: str | None) -> tuple[int, tuple[int, ...]] | None:
