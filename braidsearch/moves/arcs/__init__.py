@@ -1,0 +1,25 @@
+"""Chains of moves on arc presentations, translated into the moves that a proof may hold."""
+
+from braidsearch.moves.arcs.legs import (
+    Conjugation,
+    Destabilization,
+    Exchange,
+    Leg,
+    Stabilization,
+    reversed_leg,
+)
+from braidsearch.moves.arcs.translation import legs_from_arc_moves
+from braidsearch.moves.arcs.writing import short_conjugator, write_arc_moves, write_legs
+
+__all__ = [
+    "Conjugation",
+    "Destabilization",
+    "Exchange",
+    "Leg",
+    "Stabilization",
+    "legs_from_arc_moves",
+    "reversed_leg",
+    "short_conjugator",
+    "write_arc_moves",
+    "write_legs",
+]
