@@ -13,3 +13,10 @@ def braids(draw: st.DrawFn, max_strands: int = 5, max_letters: int = 20) -> Brai
         return Braid([], strands=1)
     letters = st.integers(1 - strands, strands - 1).filter(bool)
     return Braid(draw(st.lists(letters, max_size=max_letters)), strands=strands)
+
+
+@st.composite
+def braids_on(draw: st.DrawFn, strands: int, max_letters: int = 20) -> Braid:
+    """A braid word with any letters on exactly so many strands."""
+    letters = st.integers(1 - strands, strands - 1).filter(bool) if strands > 1 else st.nothing()
+    return Braid(draw(st.lists(letters, max_size=max_letters)), strands=strands)
