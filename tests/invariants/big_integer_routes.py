@@ -36,13 +36,9 @@ def jones_value(braid: Braid, bits: int) -> Fraction:
         states = following
     base = Fraction(1 << bits)
     loop = -(base**2) - base**-2
-    bracket = sum(
-        (
-            value * loop ** (_closed_loops(matching, strands) - 1)
-            for matching, value in states.items()
-        ),
-        Fraction(0),
-    )
+    bracket = Fraction(0)
+    for matching, value in states.items():
+        bracket += value * loop ** (_closed_loops(matching, strands) - 1)
     return bracket / base ** (3 * len(braid)) * (-(base**3)) ** -braid.exponent_sum
 
 

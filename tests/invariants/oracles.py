@@ -9,7 +9,7 @@ from __future__ import annotations
 from collections import Counter
 from collections.abc import Iterator
 from functools import cache
-from itertools import product
+from itertools import pairwise, product
 
 import networkx
 import sympy
@@ -185,7 +185,7 @@ def seifert_matrix(braid: Braid) -> sympy.Matrix:
     for index in range(1, braid.strands):
         places = [place for place, letter in enumerate(braid.word) if abs(letter) == index]
         assert places
-        loops += [(first, second, index) for first, second in zip(places, places[1:], strict=False)]
+        loops += [(first, second, index) for first, second in pairwise(places)]
     matrix = sympy.zeros(len(loops), len(loops))
     signs = [1 if letter > 0 else -1 for letter in braid.word]
     for row, (top, bottom, index) in enumerate(loops):
@@ -242,7 +242,7 @@ def determinant_by_seifert(braid: Braid) -> int:
 
 def _sign_changes(coefficients: list[int]) -> int:
     signs = [c > 0 for c in coefficients if c]
-    return sum(1 for first, second in zip(signs, signs[1:], strict=False) if first != second)
+    return sum(1 for first, second in pairwise(signs) if first != second)
 
 
 def _connected_parts(braid: Braid) -> list[Braid]:

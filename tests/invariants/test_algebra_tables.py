@@ -1,6 +1,7 @@
 """The tables by which Temperley-Lieb and Hecke algebras act obey the algebras' relations."""
 
 from collections import Counter
+from itertools import pairwise
 from itertools import permutations as all_permutations
 from math import comb
 
@@ -191,4 +192,4 @@ def descartes_signature(matrix):
 
 def sign_changes(coefficients):
     signs = [c > 0 for c in coefficients if c]
-    return sum(1 for first, second in zip(signs, signs[1:], strict=False) if first != second)
+    return sum(1 for first, second in pairwise(signs) if first != second)

@@ -68,7 +68,9 @@ def test_determinants(data, size, prime):
     entries = st.one_of(st.integers(0, 2), st.integers(0, prime - 1))
     matrices = [[[data.draw(entries) for _ in range(size)] for _ in range(size)] for _ in range(3)]
     stacked = np.array(matrices, dtype=np.int64).reshape(3, size, size).transpose(1, 2, 0)
-    wanted = [int(sympy.Matrix(size, size, sum(m, [])).det()) % prime for m in matrices]
+    wanted = [
+        int(sympy.Matrix(size, size, [c for row in m for c in row]).det()) % prime for m in matrices
+    ]
     assert determinants(stacked, prime).tolist() == wanted
 
 
