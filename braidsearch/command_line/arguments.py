@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import argparse
+import math
 import re
 import sys
 from collections.abc import Callable, Sequence
@@ -88,6 +89,14 @@ class CommandParser(argparse.ArgumentParser):
         if plain.startswith("unrecognized arguments: "):
             plain += ': expected each word as one argument, in quotes: "1 -2 1"'
         raise InputError(plain.removeprefix("argument "))
+
+
+def read_seconds(text: str) -> float:
+    """Seconds, at least 0. Raises ValueError for anything else."""
+    seconds = float(text)
+    if not 0 <= seconds < math.inf:
+        raise ValueError(text)
+    return seconds
 
 
 def read_word_argument(name: str, text: str) -> Braid:

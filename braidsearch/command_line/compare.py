@@ -13,7 +13,7 @@ from braidsearch.certificates import (
     write_certificate,
 )
 from braidsearch.command_line.answer import Answer, json_answer
-from braidsearch.command_line.arguments import CommandParser, read_word_argument
+from braidsearch.command_line.arguments import CommandParser, read_seconds, read_word_argument
 from braidsearch.command_line.compare_report import report_verdict
 from braidsearch.command_line.progress import progress_line
 from braidsearch.errors import InputError
@@ -64,7 +64,9 @@ def _parser() -> CommandParser:
     )
     parser.add_text("-o", "--output", metavar="FILE", explanation="certificate file (-: print it)")
     parser.add_json()
-    parser.add_number("--seconds", float, "seconds or none", "stop after so many seconds (60)")
+    parser.add_number(
+        "--seconds", read_seconds, "seconds or none", "stop after so many seconds (60)"
+    )
     parser.add_number("--nodes", int, "a count or none", "stop after so many conjugacy classes")
     parser.add_number(
         "--max-strands",

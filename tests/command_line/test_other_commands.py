@@ -165,10 +165,19 @@ def test_invariants_as_json_stand_as_in_a_certificate(run: Runner) -> None:
 
 
 def test_invariants_that_are_too_dear_are_named(run: Runner) -> None:
-    """On many strands the polynomials that cannot be computed are left out, and said to be."""
+    """What is too large is left out, and said to be; so is what would take too long."""
     word = " ".join(str(index) for index in [*range(1, 40), *range(1, 40)])
     outcome = run("invariants", word, "--json")
     assert outcome.status == 0
     assert "homfly" not in outcome.json
-    assert "HOMFLY-PT polynomial" in outcome.errors
+    assert "HOMFLY-PT polynomial (too large)" in outcome.errors
     assert json.loads(outcome.output)["components"] >= 1
+    hurried = run("invariants", "1 2 1 2", "--seconds", "0", "--json")
+    assert hurried.json == {}
+    assert "Jones polynomial (about 0 s: allow more --seconds)" in hurried.errors
+
+
+def test_invariants_with_a_bad_bound(run: Runner) -> None:
+    """A bound that is no number is named; none lifts it."""
+    assert "--seconds: 'soon'" in run.fail("invariants", "1", "--seconds", "soon")
+    assert run("invariants", "1 1", "--seconds", "none").status == 0
