@@ -7,8 +7,9 @@ from itertools import pairwise
 
 import networkx as nx
 
-from braidsearch.moves import Move, MoveChain
+from braidsearch.moves import Conjugate, Move, MoveChain
 from braidsearch.normal_form.conjugacy import ClassKey, ConjugacyClass
+from braidsearch.search.route import Stretch
 from braidsearch.words import Braid
 
 SUMMIT_CAP = 200
@@ -16,10 +17,11 @@ SUMMIT_CAP = 200
 
 
 class ClassGraph:
-    """Conjugacy classes as nodes, each with its representative braid; edges hold drafts of moves.
+    """Conjugacy classes as nodes, each with its representative braid; edges are stretches.
 
-    An edge drawn from a to b holds the moves from the representative of a to that of b, not yet
-    checked. One graph serves both sides of a query and every proposer of edges.
+    An edge drawn from a to b leads from the representative of a to a braid in b, and from there
+    by a conjugation to the representative of b; its moves are made when they are asked for. One
+    graph serves both sides of a query and every proposer of edges.
     """
 
     def __init__(self) -> None:
@@ -38,13 +40,14 @@ class ClassGraph:
         braid: Braid = self.graph.nodes[key]["representative"]
         return braid
 
-    def add_edge(self, key: ClassKey, draft: MoveChain, found: ConjugacyClass) -> None:
-        """Join a class to that of the draft's end; the draft starts at its representative."""
+    def add_edge(self, key: ClassKey, stretch: Stretch, found: ConjugacyClass, cost: int) -> None:
+        """Join a class to that in which the stretch ends; ``cost`` is a guess at its moves."""
+        self.add_class(found)
         if found.key == key or self.graph.has_edge(key, found.key):
             return
-        draft.conjugate(found.conjugator, self.representative(found.key).word)
-        moves = tuple(draft.moves)
-        self.graph.add_edge(key, found.key, moves=moves, origin=key, weight=len(moves))
+        self.graph.add_edge(
+            key, found.key, stretch=stretch, by=found.conjugator, origin=key, weight=cost
+        )
 
     def shortest_moves(self, left: ClassKey, right: ClassKey) -> list[Move]:
         """The moves along a shortest path, from representative to representative."""
@@ -53,8 +56,8 @@ class ClassGraph:
 
     def _edge_moves(self, here: ClassKey, there: ClassKey) -> list[Move]:
         data = self.graph.edges[here, there]
-        if data["origin"] == here:
-            return list(data["moves"])
-        draft = MoveChain(self.representative(there), is_checked=False)
-        draft.extend(data["moves"])
-        return draft.reversed_moves()
+        end = there if data["origin"] == here else here
+        draft = MoveChain(self.representative(data["origin"]), is_checked=False)
+        draft.extend(data["stretch"].moves)
+        draft.append(Conjugate(data["by"], self.representative(end).word))
+        return draft.moves if data["origin"] == here else draft.reversed_moves()

@@ -7,9 +7,11 @@ from dataclasses import dataclass, field
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.errors import CapacityError
 from braidsearch.invariants.table import Invariant, ladder
-from braidsearch.moves import MoveChain
+from braidsearch.moves import Move
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget
+from braidsearch.search.proof import checked_chain
+from braidsearch.search.route import Route
 from braidsearch.words import Braid, apply_symmetry
 
 
@@ -26,31 +28,31 @@ class Distinguisher:
     agreed: list[str] = field(default_factory=list)
 
     def find(
-        self, left_chain: MoveChain, right_chain: MoveChain, dearest: float, budget: Budget
+        self, left_route: Route, right_route: Route, dearest: float, budget: Budget
     ) -> Distinction | None:
         """The first invariant of estimated cost up to ``dearest`` seconds that differs.
 
-        The chains lead from left and from right to the braids on which it is computed. Only a
+        The routes lead from left and from right to the braids on which it is computed. Only a
         difference that the verifier confirms counts.
         """
-        left = left_chain.current
-        image = apply_symmetry(right_chain.current, self.symmetry)
+        left = left_route.current
+        image = apply_symmetry(right_route.current, self.symmetry)
         for invariant in ladder(left, image):
             if invariant.name in self.agreed or not invariant.certifies:
                 continue
             cost = invariant.estimated_cost(left) + invariant.estimated_cost(image)
             if cost > min(dearest, budget.seconds_left):
                 continue
-            found = self._compare(invariant, left_chain, right_chain, image)
+            found = self._compare(invariant, left_route, right_route, image)
             if found is not None:
                 return found
         return None
 
     def _compare(
-        self, invariant: Invariant, left_chain: MoveChain, right_chain: MoveChain, image: Braid
+        self, invariant: Invariant, left_route: Route, right_route: Route, image: Braid
     ) -> Distinction | None:
         try:
-            value, other = invariant.compute(left_chain.current), invariant.compute(image)
+            value, other = invariant.compute(left_route.current), invariant.compute(image)
         except CapacityError:
             return None
         if value == other:
@@ -60,10 +62,14 @@ class Distinguisher:
             symmetry=self.symmetry,
             invariant=invariant.name,
             parameters={},
-            left_moves=left_chain.moves,
-            right_moves=right_chain.moves,
+            left_moves=_proven_moves(left_route),
+            right_moves=_proven_moves(right_route),
             left=value,
             right=other,
         )
         claim = Certificate.different(self.left, self.right, [found])
         return found if judge(claim).valid else None
+
+
+def _proven_moves(route: Route) -> list[Move]:
+    return checked_chain(route.start, route.moves, route.current).moves

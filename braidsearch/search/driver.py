@@ -7,20 +7,19 @@ from typing import Any
 
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.errors import InputError
-from braidsearch.moves import MoveChain
 from braidsearch.search.distinguish import Distinguisher
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending, Progress, SearchLimits
 from braidsearch.search.meet import Meeting
 from braidsearch.search.proof import checked_chain
-from braidsearch.search.simplify import simplify
+from braidsearch.search.route import Route
+from braidsearch.search.simplify import simplified
 from braidsearch.search.verdict import Verdict
 from braidsearch.words import SYMMETRIES, Braid, apply_symmetry
 
 CHEAP_SECONDS = 0.05
 FAIR_SECONDS = 1.0
 DEAR_SECONDS = 60.0
-_SIMPLIFY_SUMMIT_CAP = 100
 _FIRST_SHARE = 0.3
 
 
@@ -69,11 +68,11 @@ class _Query:
 
     def answer(self) -> Verdict:
         """The stages in order of cost; the first that settles the question ends it."""
-        left, right = MoveChain(self.left), MoveChain(self.right)
+        left, right = Route(self.left), Route(self.right)
         if self._distinguish(left, right, CHEAP_SECONDS):
             return self._different()
-        left = simplify(self.left, self.budget, _SIMPLIFY_SUMMIT_CAP)
-        right = simplify(self.right, self.budget, _SIMPLIFY_SUMMIT_CAP)
+        left = simplified(self.left, self.budget)
+        right = simplified(self.right, self.budget)
         self.tried.append("simplification of both sides")
         if self._distinguish(left, right, FAIR_SECONDS):
             return self._different()
@@ -84,7 +83,7 @@ class _Query:
             or self.undecided(self.ending)
         )
 
-    def _distinguish(self, left: MoveChain, right: MoveChain, dearest: float) -> bool:
+    def _distinguish(self, left: Route, right: Route, dearest: float) -> bool:
         for symmetry in self.open_symmetries:
             self.budget.tell(left.current.strands, "invariants")
             found = self.distinguishers[symmetry].find(left, right, dearest, self.budget)
@@ -92,7 +91,7 @@ class _Query:
                 self.distinctions[symmetry] = found
         return not self.open_symmetries
 
-    def _search(self, left: MoveChain, start: float, end: float) -> Verdict | None:
+    def _search(self, left: Route, start: float, end: float) -> Verdict | None:
         """Search for moves for each open symmetry in turn, from one share of the limits to another.
 
         The question asked comes first: a symmetry that is met early says nothing about it.
@@ -106,11 +105,11 @@ class _Query:
                 return self._same(meeting, symmetry)
         return None
 
-    def _meeting(self, left: MoveChain, symmetry: str) -> Meeting:
+    def _meeting(self, left: Route, symmetry: str) -> Meeting:
         """The search for this symmetry, begun or as it was left."""
         if symmetry not in self.meetings:
             image = apply_symmetry(self.right, symmetry)
-            right = simplify(image, self.budget, _SIMPLIFY_SUMMIT_CAP)
+            right = simplified(image, self.budget)
             self.meetings[symmetry] = Meeting(left, right, self.budget)
             self.tried.append(f"search for moves, {symmetry}")
         return self.meetings[symmetry]

@@ -5,11 +5,27 @@ from __future__ import annotations
 from braidsearch.moves import MoveChain
 from braidsearch.search.limits import Budget
 from braidsearch.search.proposals import draft_destabilization, iter_words
+from braidsearch.search.route import Route, Stretch
 from braidsearch.words import Braid, cyclic_reduce
 from braidsearch.words.half_twist import flip_letters, half_twist
 from braidsearch.words.handles import reduce_handles, reduce_handles_turned
 
+_SUMMIT_CAP = 100
 _WORDS_ONLY_ABOVE = 300  # letters from which the summit is not walked for a destabilization
+
+
+_WALK_ABOVE = 4  # strands from which a walk looks for fewer before invariants are computed
+_SEED = 1
+
+
+def simplified(braid: Braid, budget: Budget) -> Route:
+    """The route to the handiest braid at hand: by greed, then, on many strands, by a walk."""
+    route = Route(braid, (Stretch.of_chain(simplify(braid, budget, _SUMMIT_CAP)),))
+    if route.current.strands > _WALK_ABOVE and not budget.is_out_of_time():
+        from braidsearch.search.walks import cooled_route  # noqa: PLC0415 - loads a compiler
+
+        route = cooled_route(route, _SEED)
+    return route
 
 
 def simplify(braid: Braid, budget: Budget, summit_cap: int) -> MoveChain:

@@ -1,0 +1,84 @@
+"""Walks over arc presentations as stretches of a route, and as proposals from a class."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+
+from braidsearch.arc_walk import Phase, Walk, cooled, find_short, mixed_seed, walk
+from braidsearch.diagrams import ArcMove, ArcPresentation, word_from_arcs
+from braidsearch.diagrams.arc_cuts import torus_key
+from braidsearch.search.route import Route, Stretch
+from braidsearch.search.walk_proofs import walk_moves
+from braidsearch.words import Braid
+
+TorusKey = tuple[tuple[int, int], ...]
+
+_HEAT_TRIES = (100, 600)
+_HEAT_SPLITS = (1, 3)
+_SETTLING_TRIES = 250
+_COOLING_TRIES_A_LETTER = 3_000
+
+
+def walked_stretch(start: Braid, walks: Sequence[Walk]) -> Stretch:
+    """The stretch from a word through walks that begin at its own arc presentation."""
+    end = word_from_arcs(walks[-1].end)
+    return Stretch(end, lambda: walk_moves(start, _iter_moves(walks)))
+
+
+def _iter_moves(walks: Sequence[Walk]) -> Iterator[ArcMove]:
+    for part in walks:
+        yield from part.iter_moves()
+
+
+def cooled_route(route: Route, seed: int) -> Route:
+    """The route continued to the shortest word on the fewest strands that a first walk finds."""
+    braid = route.current
+    tries = _COOLING_TRIES_A_LETTER * (len(braid) + braid.strands)
+    best = find_short(braid, seed, tries, keep=1)[0]
+    end = best.braid
+    if (end.strands, len(end)) >= (braid.strands, len(braid)):
+        return route
+    return route.extended(Stretch(end, lambda: walk_moves(braid, best.iter_moves())))
+
+
+class Walker:
+    """Short walks from one braid: heat by a few splits, cool, and see where the braid is then.
+
+    The walks start at the braid's own arc presentation, cooled once. ``known`` holds the
+    presentations (up to rotation) that need no second look, and may be shared among walkers.
+    """
+
+    def __init__(self, braid: Braid, known: set[TorusKey], seed: int) -> None:
+        self._braid = braid
+        self._known = known
+        self._seed = seed
+        self._number = 0
+        self._base: Walk | None = None
+
+    def propose(self, most_strands: int) -> Stretch | None:
+        """A stretch to a presentation not known yet on at most so many strands, if one is met."""
+        if self._base is None:
+            self._base = cooled(self._braid, self._seed)
+            return self._offer((self._base,), most_strands)
+        self._number += 1
+        seed = mixed_seed(self._seed, self._number)
+        step = walk(self._base.end, seed, _heat_plan(mixed_seed(seed, 1)))
+        return self._offer((self._base, step), most_strands)
+
+    def _offer(self, walks: tuple[Walk, ...], most_strands: int) -> Stretch | None:
+        end: ArcPresentation = walks[-1].end
+        if walks[-1].strands > most_strands:
+            return None
+        key = torus_key(end)
+        if key in self._known:
+            return None
+        self._known.add(key)
+        return walked_stretch(self._braid, walks)
+
+
+def _heat_plan(seed: int) -> tuple[Phase, ...]:
+    least, most = _HEAT_TRIES
+    fewest, largest = _HEAT_SPLITS
+    tries = least + seed % (most - least + 1)
+    splits = fewest + seed // 1024 % (largest - fewest + 1)
+    return Phase(tries, splits, merges=0.0), Phase(_SETTLING_TRIES)
