@@ -48,6 +48,8 @@ def _from_module(
     return Invariant(name, title, compute, module.estimated_cost, module.is_applicable, certifies)
 
 
+NEGLIGIBLE_SECONDS = 0.02
+
 INVARIANTS: tuple[Invariant, ...] = (
     _from_module("components", "number of components", components, components.component_count),
     _from_module(
@@ -61,7 +63,7 @@ INVARIANTS: tuple[Invariant, ...] = (
     _from_module("jones", "Jones polynomial", jones, jones.jones_polynomial),
     _from_module("homfly", "HOMFLY-PT polynomial", homfly, homfly.homfly_polynomial),
 )
-"""Every invariant, in the order of cost for braids of middling size."""
+"""Every invariant, in the order of the ladder where cost does not matter."""
 
 
 def invariant_named(name: str) -> Invariant:
@@ -85,11 +87,18 @@ def compute_invariants(braid: Braid) -> dict[str, Value]:
 def ladder(left: Braid, right: Braid) -> list[Invariant]:
     """The invariants that may tell these closures apart and certify it, cheapest first.
 
-    Those that are not applicable to both braids are left out.
+    What takes less than NEGLIGIBLE_SECONDS costs nothing beside the start of a process; among
+    those the order of the table holds, with the signature, whose sign is a matter of convention
+    in the trade, at the end. Invariants that are not applicable to both braids are left out.
     """
     steps = [
         invariant
         for invariant in INVARIANTS
         if invariant.certifies and invariant.is_applicable(left) and invariant.is_applicable(right)
     ]
-    return sorted(steps, key=lambda step: step.estimated_cost(left) + step.estimated_cost(right))
+    return sorted(
+        steps,
+        key=lambda step: max(
+            step.estimated_cost(left) + step.estimated_cost(right), NEGLIGIBLE_SECONDS
+        ),
+    )

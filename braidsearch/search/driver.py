@@ -3,19 +3,20 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Sequence
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.errors import InputError
 from braidsearch.search.distinguish import Distinguisher
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending, Progress, SearchLimits
-from braidsearch.search.meet import Meeting
-from braidsearch.search.proof import checked_chain
 from braidsearch.search.route import Route
 from braidsearch.search.simplify import simplified
 from braidsearch.search.verdict import Verdict
 from braidsearch.words import SYMMETRIES, Braid, apply_symmetry
+
+if TYPE_CHECKING:
+    from braidsearch.search.meet import Meeting
 
 CHEAP_SECONDS = 0.05
 FAIR_SECONDS = 1.0
@@ -108,6 +109,8 @@ class _Query:
     def _meeting(self, left: Route, symmetry: str) -> Meeting:
         """The search for this symmetry, begun or as it was left."""
         if symmetry not in self.meetings:
+            from braidsearch.search.meet import Meeting  # noqa: PLC0415 - loads a graph library
+
             image = apply_symmetry(self.right, symmetry)
             right = simplified(image, self.budget)
             self.meetings[symmetry] = Meeting(left, right, self.budget)

@@ -5,8 +5,8 @@ from __future__ import annotations
 import heapq
 from collections.abc import Iterator
 from dataclasses import dataclass, field
+from typing import TYPE_CHECKING
 
-from braidsearch.arc_walk import mixed_seed
 from braidsearch.moves import Conjugate, Move
 from braidsearch.normal_form.conjugacy import ClassKey, ConjugacyClass, conjugacy_class
 from braidsearch.search.class_graph import SUMMIT_CAP, ClassGraph
@@ -18,8 +18,10 @@ from braidsearch.search.proposals import (
     iter_words,
 )
 from braidsearch.search.route import Route, Stretch
-from braidsearch.search.walks import TorusKey, Walker
 from braidsearch.words import Braid
+
+if TYPE_CHECKING:
+    from braidsearch.search.walks import TorusKey, Walker
 
 _EXTRA_STRANDS = 2
 _EXPANSIONS_FIRST = 6  # classes expanded on each side before the first walk
@@ -89,7 +91,7 @@ class Meeting:
         return any(key in larger for key in smaller)
 
     def run(self, share: float = 1.0) -> Ending:
-        """Take turns, on the side that has met fewer classes, until both meet or a limit ends it."""
+        """Take turns, on the side that has met fewer classes, until they meet or a limit ends it."""
         if self.is_met:
             return Ending.FOUND
         while True:
@@ -151,6 +153,8 @@ class Meeting:
 
     def _walk(self, side: Side, share: float) -> bool:
         """Walk from classes on the fewest strands, chosen by the seed of the turn."""
+        from braidsearch.search.walks import Walker, mixed_seed  # noqa: PLC0415 - loads a compiler
+
         for number in range(_WALKS_A_TURN):
             seed = mixed_seed(side.turns, number)
             key = side.fewest[seed % len(side.fewest)]

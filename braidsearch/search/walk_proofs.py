@@ -45,6 +45,7 @@ def without_class_loops(legs: Sequence[Leg]) -> list[Leg]:
         return []
     visits = _class_visits(legs)
     graph = nx.DiGraph()
+    graph.add_nodes_from(visit.key for visit in visits.values())
     for (here, one), (there, other) in pairwise(visits.items()):
         weight = 1 + sum(_cost(leg) for leg in legs[here:there])
         known = graph.get_edge_data(one.key, other.key)
