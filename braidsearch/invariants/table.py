@@ -58,10 +58,10 @@ INVARIANTS: tuple[Invariant, ...] = (
     _from_module(
         "determinant", "determinant", determinant, determinant.link_determinant, certifies=False
     ),
-    _from_module("signature", "signature", signature, signature.link_signature),
     _from_module("alexander", "Alexander polynomial", alexander, alexander.alexander_polynomial),
     _from_module("jones", "Jones polynomial", jones, jones.jones_polynomial),
     _from_module("homfly", "HOMFLY-PT polynomial", homfly, homfly.homfly_polynomial),
+    _from_module("signature", "signature", signature, signature.link_signature),
 )
 """Every invariant, in the order of the ladder where cost does not matter."""
 

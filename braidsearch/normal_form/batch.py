@@ -79,8 +79,8 @@ def _letter_array(
 def _by_tables(letters: IntegerArray, tables: PairTables) -> BatchNormalForm:
     blocks, counts = _cut_into_blocks(letters, tables)
     order = np.argsort(-counts, kind="stable")
-    factors, negatives = _factors_of_blocks(blocks[:, order], tables)
-    factors = _weigh_columns(factors, counts[order], tables)
+    sequences, negatives = _factors_of_blocks(blocks[:, order], tables)
+    factors = _weigh_columns(sequences, counts[order], tables)
     deltas = (factors == tables.delta).sum(axis=0) if tables.delta else 0 * negatives
     lengths = (factors != tables.identity).sum(axis=0) - deltas
     back = np.empty_like(order)
@@ -168,7 +168,8 @@ def _shift_columns(
     padded = np.zeros((max(height, int(shifts.max(initial=0))) + longest, count), factors.dtype)
     padded[:height] = factors
     places = np.arange(count) + shifts * count + np.arange(longest)[:, None] * count
-    return padded.reshape(-1).take(places)
+    shifted: NDArray[np.integer] = padded.reshape(-1).take(places)
+    return shifted
 
 
 def _by_permutations(letters: IntegerArray, strands: int) -> BatchNormalForm:

@@ -85,7 +85,7 @@ def iter_summit(
 
 
 def find_conjugator(
-    left: Braid, right: Braid, cap: int = DEFAULT_SUMMIT_CAP
+    left: Braid, right: Braid, cap: int = DEFAULT_SUMMIT_CAP, should_stop: ShouldStop = never
 ) -> tuple[int, ...] | None:
     """A word ``by`` with right = by^-1 * left * by; None when none was found.
 
@@ -95,7 +95,7 @@ def find_conjugator(
         return None
     if are_equal(left, right):
         return ()
-    one, other = conjugacy_class(left, cap), conjugacy_class(right, cap)
+    one, other = (conjugacy_class(braid, cap, should_stop) for braid in (left, right))
     if one.key != other.key:
         return None
     return one.conjugator + tuple(-letter for letter in reversed(other.conjugator))

@@ -7,7 +7,7 @@ from collections.abc import Iterator
 from dataclasses import dataclass, field
 from typing import TYPE_CHECKING
 
-from braidsearch.moves import Conjugate, Move
+from braidsearch.moves import Move
 from braidsearch.normal_form.conjugacy import ClassKey, ConjugacyClass, conjugacy_class
 from braidsearch.search.class_graph import SUMMIT_CAP, ClassGraph
 from braidsearch.search.limits import Budget, Ending
@@ -91,7 +91,7 @@ class Meeting:
         return any(key in larger for key in smaller)
 
     def run(self, share: float = 1.0) -> Ending:
-        """Take turns, on the side that has met fewer classes, until they meet or a limit ends it."""
+        """Take turns, first the side that has met less, until they meet or a limit ends it."""
         if self.is_met:
             return Ending.FOUND
         while True:
@@ -153,7 +153,8 @@ class Meeting:
 
     def _walk(self, side: Side, share: float) -> bool:
         """Walk from classes on the fewest strands, chosen by the seed of the turn."""
-        from braidsearch.search.walks import Walker, mixed_seed  # noqa: PLC0415 - loads a compiler
+        from braidsearch.arc_walk import mixed_seed  # noqa: PLC0415 - loads a compiler
+        from braidsearch.search.walks import Walker  # noqa: PLC0415
 
         for number in range(_WALKS_A_TURN):
             seed = mixed_seed(side.turns, number)
@@ -177,13 +178,8 @@ class Meeting:
 
     def moves(self) -> list[Move]:
         """The moves from the left word to the right one along a shortest path; both have met."""
-        before = _to_class(self._left_route, self.left.start)
-        after = _to_class(self._right_route, self.right.start)
-        between = self.graph.shortest_moves(self.left.start.key, self.right.start.key)
+        left, right = self.left.start, self.right.start
+        before = self._left_route.conjugated(left.conjugator, left.representative)
+        after = self._right_route.conjugated(right.conjugator, right.representative)
+        between = self.graph.shortest_moves(left.key, right.key)
         return [*before.moves, *between, *after.reversed_moves()]
-
-
-def _to_class(route: Route, found: ConjugacyClass) -> Route:
-    """The route with one more step, to the representative of the class of its end."""
-    step = Conjugate(found.conjugator, found.representative.word)
-    return route.extended(Stretch(found.representative, lambda: (step,)))

@@ -6,7 +6,7 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
 from functools import cached_property
 
-from braidsearch.moves import Move, MoveChain
+from braidsearch.moves import Conjugate, Move, MoveChain
 from braidsearch.words import Braid
 
 
@@ -53,6 +53,11 @@ class Route:
     def extended(self, *stretches: Stretch) -> Route:
         """The route with more stretches at its end."""
         return Route(self.start, (*self.stretches, *stretches))
+
+    def conjugated(self, by: tuple[int, ...], end: Braid) -> Route:
+        """The route with a conjugation by ``by`` at its end, which leads to ``end``."""
+        step = Conjugate(by, end.word)
+        return self.extended(Stretch(end, lambda: (step,)))
 
     def reversed_moves(self) -> list[Move]:
         """The moves that lead from ``current`` back to ``start``."""

@@ -17,7 +17,8 @@ class Verdict:
     of the right link that gives the left one. ``reason`` is one line in words. ``certificate`` has
     been accepted by the verifier, and is None for "undecided". ``explored`` tells what was done:
     nodes, seconds, the name of the ending, and a list of what was tried. ``suggestions`` says, for
-    "undecided", how to go on.
+    "undecided", how to go on. ``image`` is, when the answer is not "same", a certificate for a
+    symmetric image that was not asked for, if one was met.
     """
 
     outcome: str
@@ -26,3 +27,4 @@ class Verdict:
     certificate: Certificate | None
     explored: Mapping[str, Any] = field(hash=False)
     suggestions: tuple[str, ...] = ()
+    image: Certificate | None = None

@@ -1,0 +1,235 @@
+"""One question: invariants and searches interleaved until one of them settles it."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING, Any
+
+from braidsearch.certificates import Certificate, Distinction
+from braidsearch.moves import Move
+from braidsearch.normal_form.conjugacy import find_conjugator
+from braidsearch.search.distinguish import Distinguisher
+from braidsearch.search.gate import judge
+from braidsearch.search.limits import Budget, Ending
+from braidsearch.search.proof import checked_chain
+from braidsearch.search.route import Route
+from braidsearch.search.simplify import simplified
+from braidsearch.search.verdict import Verdict
+from braidsearch.words import SYMMETRIES, Braid, apply_symmetry
+
+if TYPE_CHECKING:
+    from braidsearch.search.meet import Meeting
+
+CHEAP_SECONDS = 0.05
+FAIR_SECONDS = 1.0
+DEAR_SECONDS = 60.0
+_FIRST_SHARE = 0.3
+_LAST_SHARE = 0.85  # what is left after it looks for a symmetric image
+_DIRECT_CAP = 200
+_LONGEST_GLANCE = 80  # letters up to which a glance at symmetric images takes no notable time
+
+
+class Query:
+    """The two braids, the symmetries asked for, what has been found so far and what was tried."""
+
+    def __init__(self, left: Braid, right: Braid, asked: tuple[str, ...], budget: Budget) -> None:
+        self.left, self.right, self.asked, self.budget = left, right, asked, budget
+        self.distinguishers = {name: Distinguisher(left, right, name) for name in SYMMETRIES}
+        self.distinctions: dict[str, Distinction] = {}
+        self.meetings: dict[str, Meeting] = {}
+        self.routes: dict[str | None, Route] = {}
+        self.tried: list[str] = []
+        self.ending = Ending.NOT_SEARCHED
+
+    def answer(self) -> Verdict:
+        """The stages in order of cost; the first that settles the question ends it."""
+        plain = Route(self.left), Route(self.right)
+        if self._distinguish(*plain, CHEAP_SECONDS):
+            return self._different()
+        handy = self._route(None), self._route("identity")
+        if self._distinguish(*handy, FAIR_SECONDS):
+            return self._different()
+        return (
+            self._search_directly()
+            or self._search(0.0, _FIRST_SHARE)
+            or (self._different() if self._distinguish(*handy, DEAR_SECONDS) else None)
+            or self._search(_FIRST_SHARE, _LAST_SHARE)
+            or self.undecided(self.ending, self._search_image())
+        )
+
+    def open_symmetries(self) -> list[str]:
+        """The symmetries that no invariant has excluded yet, in the order asked."""
+        return [name for name in self.asked if name not in self.distinctions]
+
+    def _route(self, symmetry: str | None) -> Route:
+        """The simplified left braid (None), or image of the right one, made when first needed."""
+        if symmetry not in self.routes:
+            self.budget.tell(0, "simplifying")
+            braid = self.left if symmetry is None else apply_symmetry(self.right, symmetry)
+            self.routes[symmetry] = simplified(braid, self.budget)
+        return self.routes[symmetry]
+
+    def _distinguish(self, left: Route, right: Route, dearest: float) -> bool:
+        for symmetry in self.open_symmetries():
+            self.budget.tell(left.current.strands, "computing invariants")
+            found = self.distinguishers[symmetry].find(left, right, dearest, self.budget)
+            if found is not None:
+                self.distinctions[symmetry] = found
+        return not self.open_symmetries()
+
+    def _search_directly(self) -> Verdict | None:
+        """Whether simplification has led to conjugate braids already."""
+        for symmetry in self.open_symmetries():
+            moves = self._direct_moves(symmetry)
+            if moves is not None:
+                return self._same(moves, symmetry)
+        return None
+
+    def _direct_moves(self, symmetry: str) -> list[Move] | None:
+        left, right = self._route(None), self._route(symmetry)
+        stop = self.budget.is_out_of_time
+        by = find_conjugator(left.current, right.current, _DIRECT_CAP, stop)
+        if by is None:
+            return None
+        middle = left.conjugated(by, right.current)
+        return [*middle.moves, *right.reversed_moves()]
+
+    def _search(self, start: float, end: float) -> Verdict | None:
+        """Search for moves for each open symmetry in turn, from one share of the limits to another.
+
+        The question asked comes first: a symmetry that is met early says nothing about it.
+        """
+        symmetries = self.open_symmetries()
+        for place, symmetry in enumerate(symmetries, 1):
+            share = start + (end - start) * place / len(symmetries)
+            meeting = self._meeting(symmetry)
+            self.ending = meeting.run(share)
+            if self.ending is Ending.FOUND:
+                return self._same(meeting.moves(), symmetry)
+        return None
+
+    def _meeting(self, symmetry: str) -> Meeting:
+        """The search for this symmetry, begun or as it was left."""
+        if symmetry not in self.meetings:
+            from braidsearch.search.meet import Meeting  # noqa: PLC0415 - loads a graph library
+
+            right = self._route(symmetry)
+            self.meetings[symmetry] = Meeting(self._route(None), right, self.budget)
+            self.tried.append(f"search for moves, {symmetry}")
+        return self.meetings[symmetry]
+
+    def _search_image(self) -> Certificate | None:
+        """Sameness with a symmetric image that was not asked for, when the question stays open."""
+        others = [name for name in SYMMETRIES if name not in self.asked]
+        for place, symmetry in enumerate(others, 1):
+            if self._is_excluded(symmetry):
+                continue
+            moves = self._direct_moves(symmetry)
+            if moves is None:
+                share = _LAST_SHARE + (1 - _LAST_SHARE) * place / len(others)
+                meeting = self._meeting(symmetry)
+                if meeting.run(share) is not Ending.FOUND:
+                    continue
+                moves = meeting.moves()
+            return self._image_certificate(moves, symmetry)
+        return None
+
+    def _glance_at_images(self) -> Certificate | None:
+        """A symmetric image that is conjugate after simplification, for small braids only."""
+        if len(self.left) + len(self.right) > _LONGEST_GLANCE:
+            return None
+        for symmetry in SYMMETRIES:
+            if symmetry not in self.asked:
+                moves = self._direct_moves(symmetry)
+                if moves is not None:
+                    return self._image_certificate(moves, symmetry)
+        return None
+
+    def _is_excluded(self, symmetry: str) -> bool:
+        handy = self._route(None), self._route("identity")
+        found = self.distinguishers[symmetry].find(*handy, FAIR_SECONDS, self.budget)
+        return found is not None
+
+    def _image_certificate(self, moves: list[Move], symmetry: str) -> Certificate | None:
+        certificate = self._certificate(moves, symmetry)
+        return certificate if judge(certificate).valid else None
+
+    def _certificate(self, moves: list[Move], symmetry: str) -> Certificate:
+        image = apply_symmetry(self.right, symmetry)
+        chain = checked_chain(self.left, moves, image)
+        return Certificate.same(self.left, self.right, symmetry, chain.moves)
+
+    def _same(self, moves: list[Move], symmetry: str) -> Verdict:
+        certificate = self._certificate(moves, symmetry)
+        count = len(certificate.moves)
+        target = "RIGHT" if symmetry == "identity" else f"the {symmetry} of RIGHT"
+        reason = {
+            0: f"LEFT and {target} are the same word",
+            1: f"one move leads from LEFT to {target}",
+        }.get(count, f"{count} moves lead from LEFT to {target}")
+        return self._judged(certificate, reason, symmetry)
+
+    def _different(self) -> Verdict:
+        found = [self.distinctions[name] for name in self.asked]
+        certificate = Certificate.different(self.left, self.right, found)
+        names = ", ".join(dict.fromkeys(distinction.invariant for distinction in found))
+        reason = f"these invariants differ: {names}"
+        return self._judged(certificate, reason, None, self._glance_at_images())
+
+    def _judged(
+        self,
+        certificate: Certificate,
+        reason: str,
+        symmetry: str | None,
+        image: Certificate | None = None,
+    ) -> Verdict:
+        """The verdict, once the verifier has accepted its certificate."""
+        report = judge(certificate)
+        if not report.valid:
+            self.tried.append(f"a certificate that the verifier did not accept: {report.reason}")
+            return self.undecided(Ending.NOT_ACCEPTED)
+        reason += _image_in_words(image)
+        explored = self.explored(Ending.FOUND)
+        return Verdict(certificate.verdict, symmetry, reason, certificate, explored, image=image)
+
+    def undecided(self, ending: Ending, image: Certificate | None = None) -> Verdict:
+        """The verdict when nothing has settled the question."""
+        reason = f"neither moves nor a differing invariant found ({ending.value})"
+        reason += _image_in_words(image)
+        explored, hints = self.explored(ending), self._suggestions(ending, image)
+        return Verdict("undecided", None, reason, None, explored, hints, image)
+
+    def explored(self, ending: Ending) -> dict[str, Any]:
+        """What has been done so far: nodes, seconds, the ending and what was tried, in words."""
+        equal = [
+            f"equal invariants, {name}: {', '.join(distinguisher.agreed)}"
+            for name, distinguisher in self.distinguishers.items()
+            if distinguisher.agreed and name in self.asked
+        ]
+        return {
+            "nodes": self.budget.nodes,
+            "seconds": round(self.budget.seconds, 3),
+            "ending": ending.value,
+            "tried": equal + self.tried,
+        }
+
+    def _suggestions(self, ending: Ending, image: Certificate | None) -> tuple[str, ...]:
+        hints = {
+            Ending.TIME_LIMIT: "allow more seconds",
+            Ending.INTERRUPTED: "let the search run to its limits",
+            Ending.NODE_LIMIT: "allow more nodes",
+        }
+        found = [hints[ending]] if ending in hints else []
+        if self.budget.limits.max_strands is not None:
+            found.append("allow more strands")
+        if image is not None:
+            found.append(f"ask up to {image.symmetry} for the certificate of that")
+        elif len(self.asked) < len(SYMMETRIES):
+            found.append("ask for other symmetries too")
+        return tuple(found)
+
+
+def _image_in_words(image: Certificate | None) -> str:
+    if image is None:
+        return ""
+    names = {"mirror": "mirror image", "mirror-reverse": "reversed mirror image"}
+    return f"; RIGHT is the {names.get(str(image.symmetry), image.symmetry)} of LEFT"
