@@ -77,7 +77,7 @@ class _Pool:
         del self.walks[LARGEST_POOL:]
 
 
-def cooled(braid: Braid, seed: int, *, exchanges: float = 1.0) -> Walk:
+def cooled(braid: Braid, seed: int, *, exchanges: float = 0.02) -> Walk:
     """The presentation of a word, cooled with tries in proportion to its size."""
     arcs = arcs_from_word(braid)
     tries = COOLING_TRIES_A_COLUMN * arcs.size
@@ -85,13 +85,16 @@ def cooled(braid: Braid, seed: int, *, exchanges: float = 1.0) -> Walk:
 
 
 def find_short(
-    braid: Braid, seed: int, tries: int, *, keep: int = 8, exchanges: float = 1.0
+    braid: Braid, seed: int, tries: int, *, keep: int = 8, exchanges: float = 0.02
 ) -> list[ShortPresentation]:
     """The best presentations that about ``tries`` tries reach: fewest strands, then letters.
 
     The word's own presentation is cooled; then each round heats one of the best ones by one to
     three splits, cools it, and takes what it finds into the pool, where only the least strand
     count stays. At most ``keep`` results, best first; the same seed gives the same results.
+
+    An exchange move costs a proof four moves and the other swaps cost nothing, so only a share of
+    ``exchanges`` of them is made: a small one for short proofs, 1 to reach as far as can be.
     """
     first = cooled(braid, seed, exchanges=exchanges)
     pool = _Pool(first.strands)

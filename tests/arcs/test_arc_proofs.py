@@ -1,7 +1,8 @@
 """Moves on arc presentations, written as Markov moves and accepted by the independent verifier."""
 
 import random
-from collections.abc import Iterable
+from collections.abc import Iterable, Iterator
+from itertools import pairwise
 
 import pytest
 from hypothesis import given, settings
@@ -26,6 +27,7 @@ from braidsearch.moves.arcs import (
     Exchange,
     Leg,
     Stabilization,
+    composed,
     legs_from_arc_moves,
     reversed_leg,
     short_conjugator,
@@ -133,7 +135,7 @@ def test_cooling_a_hundred_letters_is_proven(seed: int) -> None:
     braid = Braid(
         [rng.choice([1, -1]) * rng.randint(1, strands - 1) for _ in range(100)], strands=strands
     )
-    done = cooled(braid, seed)
+    done = cooled(braid, seed, exchanges=0.5)
     assert done.moves > 1000
     check_proof(arcs_from_word(braid), done.iter_moves(), word_from_arcs(done.end))
 
@@ -183,6 +185,33 @@ def test_reversed_legs_prove_the_way_back(braid: Braid, seed: int) -> None:
     write_legs(chain, back)
     assert chain.current == braid
     assert [reversed_leg(leg) for leg in reversed(back)] == legs
+
+
+@given(braid=braids(max_strands=4, max_letters=10), seed=st.integers(0, 2**32))
+@settings(max_examples=30)
+def test_composed_legs_are_the_same_passage(braid: Braid, seed: int) -> None:
+    """Composing keeps both ends and all strand changes, and leaves no two conjugations in a row."""
+    arcs = arcs_from_word(braid)
+    done = walk(arcs, seed, (Phase(150), Phase(200, 3, merges=0.0), Phase(200)))
+    apart = [leg for move in _with_places(arcs, done.iter_moves()) for leg in move]
+    for exchanges in (False, True):
+        legs = composed(apart, exchanges=exchanges)
+        hidden = 0 if exchanges else 2 * sum(isinstance(leg, Exchange) for leg in apart)
+        assert strand_changes(legs) == strand_changes(apart) + hidden
+        for before, after in pairwise(legs):
+            assert before.target == after.source
+            assert not (isinstance(before, Conjugation) and isinstance(after, Conjugation))
+        ends = [legs[0].source, legs[-1].target] if legs else [braid, braid]
+        assert ends == [braid, word_from_arcs(done.end)]
+
+
+def _with_places(arcs: ArcPresentation, moves: Iterable[ArcMove]) -> Iterator[list[Leg]]:
+    """The legs of each move by itself, with a trivial one in front of all of them."""
+    start = word_from_arcs(arcs)
+    yield [Conjugation(start, start, ())]
+    for move in moves:
+        yield legs_from_arc_moves(arcs, [move])
+        arcs = apply_arc_move(arcs, move)
 
 
 @given(strands=st.integers(2, 6), data=st.data())

@@ -6,6 +6,7 @@ from braidsearch.moves.arcs.legs import (
     Exchange,
     Leg,
     Stabilization,
+    composed,
     reversed_leg,
 )
 from braidsearch.moves.arcs.translation import legs_from_arc_moves
@@ -17,6 +18,7 @@ __all__ = [
     "Exchange",
     "Leg",
     "Stabilization",
+    "composed",
     "legs_from_arc_moves",
     "reversed_leg",
     "short_conjugator",

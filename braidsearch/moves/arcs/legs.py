@@ -105,6 +105,27 @@ def shortened_exchange(leg: Exchange) -> Exchange:
     return Exchange(leg.strands, alpha, beta, leg.sign)
 
 
+def exchange_as_strand_changes(leg: Exchange) -> list[Leg]:
+    """The exchange through one stabilization and one destabilization, three conjugations around.
+
+    With t the generator after s (for sign 1), alpha s beta s^-1 is conjugate to
+    s alpha s beta s^-2; with t added, that is conjugate to s^-2 beta s alpha s t; with t dropped,
+    to alpha s^-1 beta s.
+    """
+    s, t = leg.sign * (leg.strands - 1), leg.sign * leg.strands
+    around = Braid.trusted((s, *leg.alpha, s, *leg.beta, -s, -s), leg.strands)
+    back = Braid.trusted((-s, -s, *leg.beta, s, *leg.alpha, s), leg.strands)
+    middle = (s, *leg.alpha, s, t, *leg.beta, s, *leg.alpha, s, t)
+    up, down = Stabilization(around, leg.sign), Destabilization(back, leg.sign)
+    return [
+        Conjugation(leg.source, around, (-s,)),
+        up,
+        Conjugation(up.target, down.source, middle),
+        down,
+        Conjugation(back, leg.target, (-s, -s, *leg.beta, s)),
+    ]
+
+
 def exchange_as_conjugation(leg: Exchange) -> Letters | None:
     """What the exchange conjugates by, when alpha or beta visibly commutes with s; else None.
 
@@ -172,3 +193,22 @@ class LegBuilder:
         word = free_reduce_letters((*after, *before))
         self.add(Destabilization(Braid.trusted(tuple(word), strands - 1), sign))
         self.conjugate(after)
+
+
+def composed(legs: Sequence[Leg], *, exchanges: bool) -> list[Leg]:
+    """The same passage with neighbouring conjugations composed to one.
+
+    Exchanges stay legs of their own if ``exchanges``; otherwise they are taken apart, and their
+    first and last conjugations composed with what stands beside them.
+    """
+    if not legs:
+        return []
+    builder = LegBuilder(legs[0].source)
+    for leg in legs:
+        if isinstance(leg, Exchange) and not exchanges:
+            for part in exchange_as_strand_changes(leg):
+                builder.add(part)
+        else:
+            builder.add(leg)
+    builder.settle(legs[-1].target.word)
+    return builder.legs
