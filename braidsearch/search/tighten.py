@@ -1,0 +1,150 @@
+"""``tighten``: the fewest strands, then the fewest letters, that a search reaches."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass, field
+from typing import Any
+
+from braidsearch.certificates import Certificate
+from braidsearch.errors import CapacityError
+from braidsearch.invariants.table import invariant_named
+from braidsearch.moves import Conjugate
+from braidsearch.normal_form.conjugacy import ClassKey
+from braidsearch.search.explorer import Explorer, Side
+from braidsearch.search.gate import judge
+from braidsearch.search.limits import Budget, Ending, Progress, SearchLimits
+from braidsearch.search.proof import checked_chain
+from braidsearch.search.proposals import iter_words
+from braidsearch.search.simplify import simplified
+from braidsearch.words import Braid
+
+_PATIENCE = 400  # nodes without progress after which fewer letters are given up
+_SUMMIT_CAP = 200
+_DEAREST = 20.0
+
+
+@dataclass(frozen=True)
+class Tightening:
+    """What ``tighten`` found.
+
+    ``braid`` closes to the same oriented link as the word given, which ``certificate``, accepted by
+    the verifier, proves. ``lower_bound`` is the least number of strands that the Morton-Franks-
+    Williams inequality allows (None where the HOMFLY-PT polynomial is out of reach).
+    ``explored`` tells what was done, as for ``compare``.
+    """
+
+    braid: Braid
+    certificate: Certificate
+    lower_bound: int | None
+    explored: Mapping[str, Any] = field(hash=False)
+
+    @property
+    def is_minimal(self) -> bool:
+        """Whether no braid on fewer strands closes to this link: the bound is met."""
+        return self.lower_bound == self.braid.strands
+
+
+def strands_lower_bound(braid: Braid) -> int | None:
+    """The least number of strands of any braid for this link, by its HOMFLY-PT polynomial.
+
+    Morton, Seifert circles and knot polynomials, 1986; Franks, Williams, Braids and the Jones
+    polynomial, 1987: twice (strands - 1) is at least the spread of the exponents of v. None when
+    the polynomial is too costly.
+    """
+    homfly = invariant_named("homfly")
+    if not homfly.is_applicable(braid) or homfly.estimated_cost(braid) > _DEAREST:
+        return None
+    try:
+        value = homfly.compute(braid)
+    except CapacityError:
+        return None
+    exponents = [term[0] for term in value]  # type: ignore[index, union-attr]
+    return (max(exponents) - min(exponents)) // 2 + 1
+
+
+def tighten(
+    braid: Braid,
+    *,
+    limits: SearchLimits | None = None,
+    progress: Callable[[Progress], None] | None = None,
+) -> Tightening:
+    """A word on the fewest strands, and then with the fewest letters, that the search reaches.
+
+    The search ends when the lower bound on strands is met and no shorter word has turned up for a
+    while, or at the limits.
+    """
+    return _Tightener(braid, Budget(limits or SearchLimits(), progress)).answer()
+
+
+class _Tightener:
+    """The search: the side explored, the best word so far, its class, and how it is reached there.
+
+    ``by`` conjugates the representative of the class ``place`` to the best word.
+    """
+
+    def __init__(self, braid: Braid, budget: Budget) -> None:
+        self.budget = budget
+        self.start = braid
+        route = simplified(braid, budget)
+        self.explorer = Explorer(budget, route.current.strands)
+        self.side: Side = self.explorer.begin(route)
+        self.lower_bound = strands_lower_bound(route.current)
+        self.best, self.place = route.current, self.side.start.key
+        self.by = tuple(-letter for letter in reversed(self.side.start.conjugator))
+        self.last_progress = 0
+        self.looked_at: set[ClassKey] = set()
+        self._look_at(self.place)
+
+    def answer(self) -> Tightening:
+        """Explore to the end, and prove what was found."""
+        try:
+            ending = self._explore()
+        except KeyboardInterrupt:
+            ending = Ending.INTERRUPTED
+        moves = self.explorer.moves_to(self.side, self.place)
+        last = Conjugate(self.by, self.best.word)
+        chain = checked_chain(self.start, [*moves, last], self.best)
+        certificate = Certificate.same(self.start, self.best, "identity", chain.moves)
+        report = judge(certificate)
+        if not report.valid:
+            raise CapacityError(f"the verifier did not accept the certificate: {report.reason}")
+        explored = {
+            "nodes": self.budget.nodes,
+            "seconds": round(self.budget.seconds, 3),
+            "ending": ending.value,
+        }
+        return Tightening(self.best, certificate, self.lower_bound, explored)
+
+    def _explore(self) -> Ending:
+        while not self._is_settled():
+            ending = self.budget.ending()
+            if ending is not None:
+                return ending
+            self.budget.tell(self.best.strands, f"tightening, {len(self.best)} letters")
+            for key in self.explorer.take_turn(self.side):
+                self._look_at(key)
+                if self._is_settled() or self.budget.ending() is not None:
+                    break
+        return Ending.FOUND
+
+    def _is_settled(self) -> bool:
+        if self.best.strands == 1:
+            return True
+        waited = self.budget.nodes - self.last_progress
+        return self.best.strands == self.lower_bound and waited >= _PATIENCE
+
+    def _look_at(self, key: ClassKey) -> None:
+        """Take the shortest word of a class, when it is better than the best one."""
+        if key in self.looked_at or key[0] > self.best.strands:
+            return
+        self.looked_at.add(key)
+        representative = self.explorer.graph.representative(key)
+        words = iter_words(representative, _SUMMIT_CAP, self.budget.is_out_of_time)
+        by, shortest = min(words, key=lambda found: len(found[1]))
+        found = Braid.trusted(shortest, key[0])
+        if (found.strands, len(found)) < (self.best.strands, len(self.best)):
+            self.best, self.place, self.by = found, key, by
+            self.last_progress = self.budget.nodes
+            if self.lower_bound is None:
+                self.lower_bound = strands_lower_bound(found)
