@@ -77,7 +77,8 @@ def _explain_same(certificate: Certificate, most_moves: int | None) -> list[str]
         f"  is {image} of {_named('right', certificate.right)}",
     ]
     if not certificate.moves:
-        return [*claim, "proof: the words are the same, letter by letter"]
+        target = _image_of_right(certificate.symmetry)
+        return [*claim, f"proof: LEFT is {target}, letter by letter"]
     lines = [f"proof: {count_of(len(certificate.moves), 'move')}, from LEFT"]
     lines += _number_moves(certificate.moves, most_moves)
     return [*claim, *lines, f"  which is {_image_of_right(certificate.symmetry)}, letter by letter"]

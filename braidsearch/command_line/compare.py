@@ -140,11 +140,13 @@ def _answer_verdict(verdict: Verdict, left: Braid, right: Braid, given: Namespac
 
 
 def _verdict_to_json(verdict: Verdict) -> dict[str, object]:
-    certificate = verdict.certificate
+    certificate, explored = verdict.certificate, dict(verdict.explored)
+    if verdict.image is not None:  # a symmetric image that was not asked for
+        explored["image"] = certificate_to_json(verdict.image)
     return {
         "outcome": verdict.outcome,
         "symmetry": verdict.symmetry,
         "reason": verdict.reason,
         "certificate": None if certificate is None else certificate_to_json(certificate),
-        "explored": dict(verdict.explored),
+        "explored": explored,
     }

@@ -21,6 +21,8 @@ def report_verdict(verdict: Verdict, left: Braid, right: Braid, output: str | No
     if verdict.certificate is None:
         return "\n".join(lines + _tell_tried(verdict) + _tell_missing(output))
     lines.append(explain_certificate(verdict.certificate, most_moves=_MOST_MOVES))
+    if verdict.image is not None:
+        lines.append(f"symmetric image: --up-to {verdict.image.symmetry} gives its certificate")
     return "\n".join(lines + _tell_check(left, right, output))
 
 

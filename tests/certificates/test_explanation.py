@@ -63,8 +63,10 @@ def test_equal_words_need_no_move() -> None:
     """A chain without moves is said to be one."""
     braid = Braid([1] * 40)
     text = explain_certificate(Certificate.same(braid, braid, "identity", []))
-    assert "the words are the same, letter by letter" in text
+    assert text.endswith("\nproof: LEFT is RIGHT, letter by letter")
     assert "(40 letters)" in text
+    mirrored = explain_certificate(Certificate.same(braid, braid.mirror(), "mirror", []))
+    assert mirrored.endswith("\nproof: LEFT is the mirror of RIGHT, letter by letter")
 
 
 @given(certificates, st.integers(0, 6))

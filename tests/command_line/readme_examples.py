@@ -70,7 +70,10 @@ def rewrite_readme() -> None:
     """Put the output of now into the README."""
     text = README.read_text(encoding="utf-8")
     with tempfile.TemporaryDirectory() as folder:
-        made = iter(run_blocks(console_blocks(text), Path(folder)))
+        outputs = run_blocks(console_blocks(text), Path(folder))
+    if "internal error" in "".join(outputs):
+        raise RuntimeError("an example ended in an internal error: nothing was written")
+    made = iter(outputs)
     fresh = _CONSOLE.sub(lambda _: f"```console\n{next(made)}```", text)
     README.write_text(fresh, encoding="utf-8")
 

@@ -22,6 +22,7 @@ def test_commands_print_what_the_readme_shows(tmp_path: Path) -> None:
     blocks = console_blocks(TEXT)
     assert sum(len(commands_of(block)) for block in blocks) >= 12
     assert run_blocks(blocks, tmp_path) == blocks
+    assert "internal error" not in TEXT
 
 
 def test_python_session_of_the_readme(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
