@@ -2,9 +2,7 @@
 
 from __future__ import annotations
 
-import difflib
 import sys
-import traceback
 from collections.abc import Sequence
 from importlib import import_module
 from typing import NoReturn
@@ -96,6 +94,8 @@ def _help_text() -> str:
 
 
 def _unknown_command(command: str) -> str:
+    import difflib  # noqa: PLC0415 - only for this mistake
+
     close = difflib.get_close_matches(command, COMMANDS, n=1)
     meant = f" (did you mean {close[0]}?)" if close else ""
     return f"{command!r}: expected a command, one of {', '.join(COMMANDS)}{meant}"
@@ -107,6 +107,8 @@ def _fail(name: str, message: str) -> int:
 
 
 def _describe_defect(error: Exception) -> str:
+    import traceback  # noqa: PLC0415 - only for a defect
+
     place = traceback.extract_tb(error.__traceback__)[-1]
     file = place.filename.replace("\\", "/").rsplit("/", 1)[-1]
     where = f"{type(error).__name__} in {file}, line {place.lineno}"
