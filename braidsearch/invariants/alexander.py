@@ -24,7 +24,6 @@ from braidsearch.invariants.wide_integers import IntArray
 from braidsearch.words.braid import Braid
 
 _LARGEST_COST = 3e3
-_BITS_OF_A_PRIME = 30.9
 _BLOCK_ENTRIES = 1 << 22
 
 
@@ -58,7 +57,7 @@ def _factor_cost(braid: Braid) -> float:
     letters, strands = len(braid), braid.strands
     primes = 1 + letters / 33
     points = 1 + letters / 2
-    return primes * (1e-4 + 6e-6 * letters + 5e-9 * points * strands * (letters + strands**2))
+    return primes * (1.5e-4 + 1e-5 * letters + 4e-9 * points * strands * (letters + strands**2))
 
 
 def _is_within_capacity(braid: Braid) -> bool:
@@ -122,8 +121,11 @@ def _burau_minors(braid: Braid, points: IntArray, inverses: IntArray, prime: int
     Verkettungen, 1936) takes the colours (x, y) at a letter sigma_i to (x + t (y - x), x), and at
     its inverse to (y, y + (x - y) / t). B fixes the column (1, ..., 1) and the row
     (1, t, ..., t^(n-1)), so the minors of B - 1 without row r and some column are equal up to
-    sign and the unit t^r. Without row 0 the minor is, up to sign, the polynomial with exponents
-    0 to N - n + 1 divided by t once for each negative letter.
+    sign and the unit t^r. Without row 0 the minor is, up to sign, F(t) / t^m for m negative
+    letters and the polynomial F with exponents 0 to N - n + 1: B(1/t) is conjugate to the
+    transpose of the inverse (Squier, The Burau representation is unitary, 1984), whose
+    determinant is a sign times t^(2m - N), so the minor's exponents lie symmetrically about
+    (N - 2m - n + 1) / 2, and those of F about (N - n + 1) / 2.
     """
 
     def under(over: IntArray, colour: IntArray, unit: IntArray) -> IntArray:

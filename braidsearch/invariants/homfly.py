@@ -55,7 +55,7 @@ def _factor_cost(braid: Braid) -> float:
     letters = len(braid)
     limbs = 1 + letters / 400
     entries = factorial(min(braid.strands, 2 * MAX_STRANDS)) * (4 + letters / 2) * limbs
-    return 3e-4 + 1e-5 * letters + 1e-9 * (letters + 40) * entries
+    return 1e-4 + 1e-5 * letters + 1e-9 * (letters + 40) * entries
 
 
 def _is_within_capacity(braid: Braid) -> bool:
@@ -78,7 +78,7 @@ def _homfly_of_factor(braid: Braid) -> Polynomial:
             f"expected at most {MAX_STRANDS} strands, and fewer letters the more strands"
         )
     terms: dict[tuple[int, ...], int] = {}
-    for circles, coefficients in enumerate(_trace(_hecke_element(braid), braid.strands)):
+    for circles, coefficients in enumerate(trace_of(_hecke_element(braid), braid.strands)):
         lowest_v = braid.exponent_sum - braid.strands + 1 + circles
         for z_exponent, coefficient in enumerate(coefficients):
             for place in range(circles + 1 if coefficient else 0):
@@ -160,8 +160,13 @@ def _in_order_of_products(table: WideRows, strands: list[int]) -> WideRows:
     return table
 
 
-def _trace(table: WideRows, size: int) -> list[list[int]]:
-    """The coefficients of z for each number of strands that came apart, 0 to size - 1."""
+def trace_of(table: WideRows, size: int) -> list[list[int]]:
+    """The Ocneanu trace of an element on ``size`` strands, by how many strands came apart.
+
+    Rows of ``table``, which is used up, are coefficients of T_w in the order of ``permutations``,
+    columns are powers of z; the last (size - 1) (size - 2) / 2 columns must be zero. The result
+    has for each number, 0 to size - 1, the coefficients of z.
+    """
     for strands in range(size, 1, -1):
         table.reserve(strands)
         table.limbs = [_close_last_strand(limb, strands) for limb in table.limbs]

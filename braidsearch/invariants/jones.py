@@ -54,7 +54,7 @@ def _factor_cost(braid: Braid) -> float:
     letters = len(braid)
     diagrams = comb(2 * braid.strands, braid.strands) // (braid.strands + 1)
     limbs = 1 + letters / 400
-    return 3e-4 + 2e-5 * letters + 7e-10 * limbs * diagrams * letters**2
+    return 5e-5 + 1e-5 * letters + 8e-10 * limbs * diagrams * letters**2
 
 
 def _is_within_capacity(braid: Braid) -> bool:

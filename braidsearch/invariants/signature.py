@@ -24,7 +24,7 @@ def link_signature(braid: Braid) -> int:
 def estimated_cost(braid: Braid) -> float:
     """Seconds that ``link_signature`` needs, to within a factor of a few."""
     factors = closure_pieces(braid).factors
-    return 2e-5 + sum(2e-5 * len(factor) + 4e-9 * _work(factor) for factor in factors)
+    return 2e-5 + sum(5e-6 * len(factor) + 4e-9 * _work(factor) for factor in factors)
 
 
 def is_applicable(braid: Braid) -> bool:
@@ -56,26 +56,27 @@ def _signature_of_factor(braid: Braid) -> int:
     front = SymmetricFront()
     around = [front.add_vertex() if column % 2 == 0 else -1 for column in range(braid.strands + 1)]
     front.ground(around[0])
-    letters_left = [0] * (braid.strands + 1)
-    for letter in braid.word:
-        letters_left[abs(letter)] += 1
-    current, correction = list(around), 0
-    for letter in braid.word:
+    _add_letters(front, braid, around)
+    for vertex in around[2::2]:
+        front.complete(vertex)
+    return front.signature - sum(1 if letter > 0 else -1 for letter in braid.word if letter % 2)
+
+
+def _add_letters(front: "SymmetricFront", braid: Braid, around: list[int]) -> None:
+    """Add each letter's square; ``around`` are the regions that reach around the closure."""
+    last = {abs(letter): place for place, letter in enumerate(braid.word)}
+    current = list(around)
+    for place, letter in enumerate(braid.word):
         column, sign = abs(letter), 1 if letter > 0 else -1
         if column % 2:
-            correction += sign
             front.add_square(current[column - 1], current[column + 1], sign)
             continue
-        letters_left[column] -= 1
         above = current[column]
         # The last region of a column is its first, around the closure.
-        current[column] = front.add_vertex() if letters_left[column] else around[column]
+        current[column] = around[column] if place == last[column] else front.add_vertex()
         front.add_square(above, current[column], -sign)
         if above != around[column]:
             front.complete(above)
-    for vertex in around[2::2]:
-        front.complete(vertex)
-    return front.signature - correction
 
 
 class SymmetricFront:

@@ -184,6 +184,20 @@ def test_signatures_of_forms(data, size):
     assert front.signature == descartes_signature(matrix[:size, :size])
 
 
+def test_signature_of_a_form_without_squares():
+    """2 (xy + xz + yz) has the eigenvalues 2, -1, -1: no variable is a pivot until they mix."""
+    front = SymmetricFront()
+    names = [front.add_vertex() for _ in range(4)]
+    front.ground(names[3])
+    for first, second in [(0, 1), (0, 2), (1, 2)]:
+        front.add_square(names[first], names[second], -1)
+    for name in names[:3]:
+        front.add_square(name, names[3], 2)
+    for name in names[:3]:
+        front.complete(name)
+    assert front.signature == -1
+
+
 def descartes_signature(matrix):
     coefficients = matrix.charpoly().all_coeffs()
     mirrored = [c * (-1) ** place for place, c in enumerate(coefficients)]

@@ -15,7 +15,7 @@ def disagreements(rows):
         for braid in row.braids:
             for name in NAMES:
                 invariant = invariant_named(name)
-                if invariant.estimated_cost(braid) > 2:
+                if not invariant.is_applicable(braid) or invariant.estimated_cost(braid) > 2:
                     continue
                 checked += 1
                 if invariant.compute(braid) != getattr(row, name):

@@ -5,6 +5,7 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
+from braidsearch.invariants.homfly import trace_of
 from braidsearch.invariants.wide_integers import LIMB_BITS, WideRows
 
 
@@ -60,3 +61,23 @@ def test_totals_of_rows_and_trimming():
     table.trim()
     assert (table.low, table.high) == (2, 4)
     assert table.totals(np.array([0, 2])) == [6, 8]
+
+
+@pytest.mark.parametrize("power", [0, 30, 45, 59, 60, 200])
+def test_the_trace_of_large_elements(power):
+    """The Ocneanu trace of 2^power times an element is 2^power times its trace, without wrapping.
+
+    All 720 coefficients are at the limit that the headroom allows, the worst that can come.
+    """
+    table = WideRows(720, 40)
+    table.limbs[0][:, 0] = 1
+    table.high = 40
+    for _ in range(power):
+        table.reserve(1)
+        table.limbs = [limb << 1 for limb in table.limbs]
+    small = WideRows(720, 40)
+    small.limbs[0][:, 0] = 1
+    small.high = 40
+    wanted = [[value << power for value in row] for row in trace_of(small, 6)]
+    assert trace_of(table, 6) == wanted
+    assert max(max(row) for row in wanted) >> power > 2**8
