@@ -16,6 +16,7 @@ TorusKey = tuple[tuple[int, int], ...]
 _HEAT_TRIES = (100, 600)
 _HEAT_SPLITS = (1, 3)
 _SETTLING_TRIES = 250
+_EXCHANGE_SHARES = (0.05, 0.3, 1.0)  # few exchanges keep proofs short, many reach further
 _COOLING_TRIES_A_LETTER = 3_000
 
 
@@ -77,8 +78,11 @@ class Walker:
 
 
 def _heat_plan(seed: int) -> tuple[Phase, ...]:
+    """A heat and the cooling after it; all their numbers are drawn from the seed."""
     least, most = _HEAT_TRIES
     fewest, largest = _HEAT_SPLITS
     tries = least + seed % (most - least + 1)
     splits = fewest + seed // 1024 % (largest - fewest + 1)
-    return Phase(tries, splits, merges=0.0), Phase(_SETTLING_TRIES)
+    exchanges = _EXCHANGE_SHARES[seed // 4096 % len(_EXCHANGE_SHARES)]
+    heat = Phase(tries, splits, merges=0.0, exchanges=exchanges)
+    return heat, Phase(_SETTLING_TRIES, exchanges=exchanges)
