@@ -16,7 +16,7 @@ from braidsearch.command_line.answer import Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser, read_seconds, read_word_argument
 from braidsearch.command_line.compare_report import report_verdict
 from braidsearch.command_line.progress import progress_line
-from braidsearch.errors import InputError
+from braidsearch.errors import BraidsearchError, InputError
 from braidsearch.words import SYMMETRIES, Braid
 
 if TYPE_CHECKING:
@@ -110,6 +110,8 @@ def _compare(left: Braid, right: Braid, up_to: Sequence[str], limits: SearchLimi
         return _broken_off("interrupted")
     except MemoryError:
         return _broken_off("out of memory")
+    except BraidsearchError as error:  # the words were read, so this is a bound that was met
+        return _broken_off(str(error))
     finally:
         if line is not None:
             line.erase()

@@ -28,10 +28,8 @@ class ProgressLine:
         if progress.seconds < max(FIRST_AFTER, self._last + _BETWEEN):
             return
         self._last = progress.seconds
-        line = (
-            f"{progress.seconds:.0f} s, {progress.nodes} classes, "
-            f"{progress.strands} strands: {progress.doing}"
-        )
+        strands = f", {progress.strands} strands" if progress.strands else ""
+        line = f"{progress.seconds:.0f} s, {progress.nodes} classes{strands}: {progress.doing}"
         self._overwrite(line[: shutil.get_terminal_size().columns - 1])
 
     def erase(self) -> None:

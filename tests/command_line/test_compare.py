@@ -8,6 +8,7 @@ from typing import Any
 import pytest
 
 from braidsearch.certificates import Certificate, read_certificate
+from braidsearch.errors import CapacityError, InputError
 from braidsearch.search import driver
 from braidsearch.search.limits import SearchLimits
 from braidsearch.search.verdict import Verdict
@@ -249,12 +250,18 @@ def test_mistakes_get_one_line(run: Runner, arguments: list[str], said: str) -> 
 
 
 @pytest.mark.parametrize(
-    ("raised", "ending"), [(KeyboardInterrupt, "interrupted"), (MemoryError, "out of memory")]
+    ("raised", "ending"),
+    [
+        (KeyboardInterrupt(), "interrupted"),
+        (MemoryError(), "out of memory"),
+        (CapacityError("too many"), "too many"),
+        (InputError("a word that grew too long"), "a word that grew too long"),
+    ],
 )
 def test_a_search_broken_off_is_undecided(
-    run: Runner, monkeypatch: pytest.MonkeyPatch, raised: type[BaseException], ending: str
+    run: Runner, monkeypatch: pytest.MonkeyPatch, raised: BaseException, ending: str
 ) -> None:
-    """Ctrl-C and lack of memory never become a verdict: exit status 3."""
+    """Ctrl-C, lack of memory and a bound met on the way never become a verdict: exit status 3."""
 
     def compare(*_: Any, **__: Any) -> Verdict:
         raise raised
