@@ -908,15 +908,23 @@ def join(partner: dict[int, int], one: int, two: int) -> int:
     return 0
 
 
+class Packed(NamedTuple):
+    """q^low times a polynomial in q^2, which is held as the integer that it is at q^2 = 2^width."""
+
+    low: int
+    value: int
+
+
 def jones(braid: Braid, work: Work) -> list[list[int]]:
     """The Jones polynomial, exponents counting half powers of t.
 
     V = (-A^3)^(-writhe) <D> with t = A^-4 (Kauffman, State models and the Jones polynomial,
     1987), where <positive crossing> = A <both strands on> + 1/A <turned back>, a circle is worth
     -(A^2 + A^-2) and one circle is worth 1. A state of the swept part is a matching of its open
-    arcs; its value is a polynomial in q = A^2, held as the integer that it is at q = 2^width.
-    L letters on n strands have 2^L states of at most L + n circles, so the absolute values of
-    all coefficients sum to at most 2^(2L + n), and width = 2L + n + 2 keeps them apart.
+    arcs; its value is a polynomial in q = A^2 whose exponents have one parity, since the change
+    of one smoothing changes the number of circles by one. L letters on n strands have 2^L states
+    of at most L + n circles, so the absolute values of all coefficients sum to at most
+    2^(2L + n), and width = 2L + n + 2 keeps them apart.
     """
     crossings, free = crossings_of(braid)
     letters = len(crossings)
@@ -924,63 +932,66 @@ def jones(braid: Braid, work: Work) -> list[list[int]]:
     starts = range(0, letters, letters // 12 + 1)
     order = min((sweep(crossings, start, work) for start in starts), default=(0, []))[1]
     opened: list[int] = []
-    states: dict[tuple[int, ...], int] = {(): 1}
-    lowest = 0  # the values are to be multiplied by q^lowest
+    states: dict[tuple[int, ...], Packed] = {(): Packed(0, 1)}
     for crossing in order:
-        opened, states, circles = add_crossing(opened, states, crossing, width, work)
-        lowest -= circles
-    value = states[()]
+        opened, states = add_crossing(opened, states, crossing, width, work)
+    total = states[()]
     for _ in range(free):
-        work.spend(40 + (value.bit_length() >> 10))
-        value, lowest = -(value + (value << 2 * width)), lowest - 1
-    numbers = divide_by_circle(unpack(value, width, work))
-    # A^(-letters) was taken out at the crossings; q^lowest * q, since a circle too many is divided
+        work.spend(40 + (total.value.bit_length() >> 10))
+        total = times_circle(total, width)
+    numbers = divide_by_circle(unpack(total.value, width, work))
+    # Each crossing had q and 1 in place of A and 1/A; the circle divided by was q^-1 (1 + q^2).
     writhe = sum(crossing[4] for crossing in crossings)
-    shift = 2 * (lowest + 1) - letters - 3 * writhe
-    unit = -1 if writhe % 2 else 1
-    terms = [[-(shift + 2 * power) // 2, unit * c] for power, c in enumerate(numbers) if c]
-    return sorted(terms)
+    low, unit = 2 * (total.low + 1) - letters - 3 * writhe, -1 if writhe % 2 else 1
+    return sorted([-low // 2 - 2 * power, unit * c] for power, c in enumerate(numbers) if c)
 
 
 def add_crossing(
     opened: list[int],
-    states: dict[tuple[int, ...], int],
+    states: dict[tuple[int, ...], Packed],
     crossing: Crossing,
     width: int,
     work: Work,
-) -> tuple[list[int], dict[tuple[int, ...], int], int]:
-    """Both smoothings of one more crossing: open arcs, states, and a power of q taken out.
+) -> tuple[list[int], dict[tuple[int, ...], Packed]]:
+    """Both smoothings of one more crossing: the arcs then open, and the states.
 
-    A state lists the partner of each open arc, in the order of the open arcs. The factors are
-    q and 1 in place of A and 1/A, and -(q^2 + 1) for a circle; with q^m taken out of the whole,
-    m the most circles that close at once, no exponent is negative.
+    A state lists the partner of each open arc, in the order of the open arcs.
     """
     a, b, c, d, sign = crossing
     arcs = (a, b, c, d)
     after = [arc for arc in opened if arc not in arcs]
     after += [arc for arc in arcs if arc not in opened and arcs.count(arc) == 1]
     through, back = ((a, c), (b, d)), ((a, b), (c, d))
-    steps = []
-    for state, value in states.items():
-        work.spend(80 + 4 * len(opened) + (value.bit_length() >> 8))
+    result: dict[tuple[int, ...], Packed] = {}
+    bits = 0
+    for state, packed in states.items():
+        bits += packed.value.bit_length()
+        if bits > MAX_STATE_BITS:
+            raise RejectedError("too large for this verifier: the state sum of the bracket")
+        work.spend(80 + 4 * len(opened) + (packed.value.bit_length() >> 8))
         for power, pairs in ((1, through), (0, back)) if sign > 0 else ((0, through), (1, back)):
             partner = dict(zip(opened, state, strict=True))
             circles = sum(join(partner, one, two) for one, two in pairs)
-            steps.append((tuple(partner[arc] for arc in after), value, power, circles))
-    most = max(circles for _, _, _, circles in steps)
-    result: dict[tuple[int, ...], int] = {}
-    bits = 0
-    for key, value, power, circles in steps:
-        term = value << width * (power + most - circles)
-        for _ in range(circles):
-            term = -(term + (term << 2 * width))
-        bits += term.bit_length()
-        if bits > MAX_STATE_BITS:
-            raise RejectedError(
-                "too large for this verifier: the state sum of the Jones polynomial"
-            )
-        result[key] = result.get(key, 0) + term
-    return after, result, most
+            term = Packed(packed.low + power, packed.value)
+            for _ in range(circles):
+                term = times_circle(term, width)
+            key = tuple(partner[arc] for arc in after)
+            result[key] = add_packed(result[key], term, width) if key in result else term
+    return after, result
+
+
+def times_circle(packed: Packed, width: int) -> Packed:
+    """The product with -(q + 1/q)."""
+    return Packed(packed.low - 1, -(packed.value + (packed.value << width)))
+
+
+def add_packed(one: Packed, two: Packed, width: int) -> Packed:
+    """The sum of two polynomials whose exponents have the same parity."""
+    if one.low > two.low:
+        one, two = two, one
+    if (two.low - one.low) % 2:
+        raise RejectedError("exponents of both parities in one state of the bracket")
+    return Packed(one.low, one.value + (two.value << width * ((two.low - one.low) // 2)))
 
 
 def unpack(value: int, width: int, work: Work) -> list[int]:
@@ -996,13 +1007,13 @@ def unpack(value: int, width: int, work: Work) -> list[int]:
 
 
 def divide_by_circle(numbers: list[int]) -> list[int]:
-    """The quotient of a polynomial by -(q^2 + 1), lowest power first."""
-    quotient = [0, 0]
+    """The quotient of a polynomial in q^2 by -(1 + q^2), lowest power first."""
+    quotient = [0]
     for number in numbers:
-        quotient.append(-number - quotient[-2])
-    if quotient[-2:] != [0, 0]:
+        quotient.append(-number - quotient[-1])
+    if quotient[-1]:
         raise RejectedError("the state sum is not a multiple of a circle's value")
-    return quotient[2:-2]
+    return quotient[1:-1]
 
 
 # Characters of the Hecke algebra, in Young's seminormal form.
@@ -1170,7 +1181,8 @@ Check a braidsearch certificate. WORD is signed integers, such as "1 -2 1 -2", w
 count in front where it is more than the word needs: "4: 1 -2 1 -2". With --left or --right the
 certificate must be about exactly these braids. Exit status: 0 valid, 1 rejected, 2 unreadable.
 """
-WORD = re.compile(r"\s*(?:([0-9]{1,9})\s*:)?\s*((?:[+-]?[0-9]{1,9}(?:\s*,\s*|\s+|$))*)")
+INTEGER = "[+-]?[0-9]{1,9}"
+WORD = re.compile(rf"\s*(?:([0-9]{{1,9}})\s*:)?\s*({INTEGER}(?:(?:\s*,\s*|\s+){INTEGER})*)?\s*")
 
 
 class UsageError(Exception):
@@ -1185,25 +1197,33 @@ def main(arguments: Sequence[str]) -> int:
             return write(HELP, 0)
         report = verify_file(options["file"], options.get("left"), options.get("right"))
     except UsageError as error:
-        print(f"{error}; {USAGE}", file=sys.stderr)
-        return 2
+        return complain(f"{error}; {USAGE}")
     except KeyboardInterrupt:
-        print("interrupted: nothing is shown", file=sys.stderr)
-        return 2
+        return complain("interrupted: nothing is shown")
     status = {"valid": 0, "rejected": 1}.get(report.status, 2)
     if options.get("json"):
         data = {"valid": report.valid, "claim": report.claim, "reason": report.reason}
         return write(json.dumps(data) + "\n", status)
-    claim = f"claim: {report.claim}\n" if report.claim else ""
-    return write(f"{report.status}: {report.reason}\n{claim}", status)
+    if report.status == "unreadable":
+        return complain(f"unreadable: {report.reason}")
+    return write(f"{report.status}: {report.reason}\nclaim: {report.claim}\n", status)
+
+
+def complain(text: str) -> int:
+    """Write one line to standard error; returns the exit status for it."""
+    if sys.stderr is not None:
+        print(text, file=sys.stderr)
+    return 2
 
 
 def write(text: str, status: int) -> int:
     """Write to standard output; what could not be said in full does not end in success."""
+    if sys.stdout is None:
+        return 2
     try:
         sys.stdout.write(text)
         sys.stdout.flush()
-    except OSError:
+    except OSError:  # the reader has gone: nothing may be tried again at exit
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
         return 2
     return status
@@ -1215,21 +1235,18 @@ def parse_arguments(arguments: Sequence[str]) -> dict[str, Any] | None:
     waiting = iter(arguments)
     for argument in waiting:
         option, equals, value = argument.partition("=")
-        found: dict[str, Any]
         if argument in ("-h", "--help"):
             return None
+        name, given = "file", argument
         if argument == "--json":
-            found = {"json": True}
+            name = "json"
         elif option in ("--left", "--right"):
-            text = value if equals else next(waiting, "")
-            found = {option[2:]: parse_word(text, option)}
+            name, given = option[2:], value if equals else next(waiting, "")
         elif argument.startswith("-"):
             raise UsageError(f"unknown option {shown(argument)}")
-        else:
-            found = {"file": argument}
-        if found.keys() & options.keys():
-            raise UsageError(f"{shown(argument)}: more than one is given")
-        options |= found
+        if name in options:
+            raise UsageError(f"{shown(argument)}: {name} is given already")
+        options[name] = parse_word(given, option) if name in ("left", "right") else given
     if "file" not in options:
         raise UsageError("no FILE is given")
     return options
@@ -1240,7 +1257,7 @@ def parse_word(text: str, option: str) -> Braid:
     match = WORD.fullmatch(text)
     if match is None or not text.strip():
         raise UsageError(f'{option} {shown(text)}: expected signed integers such as "1 -2 1 -2"')
-    word = tuple(int(token) for token in re.findall(r"[+-]?[0-9]+", match[2]))
+    word = tuple(int(token) for token in re.findall(INTEGER, match[2] or ""))
     needed = max(map(abs, word), default=0) + 1
     strands = int(match[1]) if match[1] else needed
     if 0 in word or not needed <= strands <= MAX_STRANDS:
