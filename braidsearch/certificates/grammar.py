@@ -36,6 +36,22 @@ DISTINCTION_FIELDS: Final = (
     "right",
 )
 
+VALUE_WIDTHS: Final[dict[str, int]] = {
+    "components": 0,
+    "linking-numbers": 1,
+    "alexander": 2,
+    "jones": 2,
+    "homfly": 3,
+    "signature": 0,
+}
+"""The invariants of this version, with the shape of their values.
+
+0 is an integer, 1 a list of integers, and more a list of entries of so many integers.
+"""
+
+MAX_MOVES: Final = 100_000
+"""The longest list of moves that a certificate may hold."""
+
 
 def move_name(move: Move) -> str:
     """The name under which a move stands in a certificate."""

@@ -12,15 +12,17 @@ from braidsearch.certificates.grammar import (
     CLAIM_FIELDS,
     DISTINCTION_FIELDS,
     FORMAT,
+    MAX_MOVES,
     MOVE_FIELDS,
     MOVES,
     PROOF_FIELDS,
+    VALUE_WIDTHS,
     VERSION,
 )
 from braidsearch.certificates.values import Certificate, Distinction
 from braidsearch.errors import InputError
 from braidsearch.moves import Move
-from braidsearch.words import SYMMETRIES, Braid
+from braidsearch.words import MAX_LETTERS, MAX_STRANDS, SYMMETRIES, Braid
 
 
 def read_certificate(path: str | os.PathLike[str]) -> Certificate:
@@ -99,7 +101,8 @@ def _read_braid(data: Any, where: str) -> Braid:
 
 
 def _read_moves(data: Any, where: str) -> list[Move]:
-    return [_read_move(item, f"{where}[{i}]") for i, item in enumerate(_read_list(data, where))]
+    items = _read_list(data, where, MAX_MOVES)
+    return [_read_move(item, f"{where}[{i}]") for i, item in enumerate(items)]
 
 
 def _read_move(data: Any, where: str) -> Move:
@@ -118,22 +121,24 @@ def _read_move_field(data: Any, field: str, where: str) -> Any:
     number = _read_integer(data, where)
     if field == "sign" and number not in (1, -1):
         _refuse(where, data, "1 or -1")
-    if field == "strands" and number < 1:
-        _refuse(where, data, "at least 1")
+    if field == "strands" and not 1 <= number <= MAX_STRANDS:
+        _refuse(where, data, f"an integer from 1 to {MAX_STRANDS}")
     return number
 
 
 def _read_letters(data: Any, where: str) -> tuple[int, ...]:
     letters = tuple(
-        _read_integer(item, f"{where}[{i}]") for i, item in enumerate(_read_list(data, where))
+        _read_integer(item, f"{where}[{i}]")
+        for i, item in enumerate(_read_list(data, where, MAX_LETTERS))
     )
-    if 0 in letters:
-        _refuse(f"{where}[{letters.index(0)}]", 0, "a non-zero integer")
+    for place, letter in enumerate(letters):
+        if not 1 <= abs(letter) < MAX_STRANDS:
+            _refuse(f"{where}[{place}]", letter, f"a letter, 1 to {MAX_STRANDS - 1} in size")
     return letters
 
 
 def _read_distinctions(data: Any) -> list[Distinction]:
-    items = _read_list(data, "distinctions")
+    items = _read_list(data, "distinctions", len(SYMMETRIES))
     if not items:
         _refuse("distinctions", data, "at least one")
     return [_read_distinction(item, f"distinctions[{i}]") for i, item in enumerate(items)]
@@ -141,23 +146,35 @@ def _read_distinctions(data: Any) -> list[Distinction]:
 
 def _read_distinction(data: Any, where: str) -> Distinction:
     _check_keys(data, DISTINCTION_FIELDS, where)
-    if not isinstance(data["invariant"], str):
-        _refuse(f"{where}.invariant", data["invariant"], "the name of an invariant")
-    if not isinstance(data["parameters"], dict):
-        _refuse(f"{where}.parameters", data["parameters"], "an object")
-    try:
-        return Distinction(
-            symmetry=_read_symmetry(data["symmetry"], f"{where}.symmetry"),
-            invariant=data["invariant"],
-            parameters=data["parameters"],
-            left_moves=_read_moves(data["left_moves"], f"{where}.left_moves"),
-            right_moves=_read_moves(data["right_moves"], f"{where}.right_moves"),
-            left=data["left"],
-            right=data["right"],
-        )
-    except InputError as error:
-        message = str(error)
-        raise InputError(message if where in message else f"{where}: {message}") from None
+    name = data["invariant"]
+    if not isinstance(name, str) or name not in VALUE_WIDTHS:
+        _refuse(f"{where}.invariant", name, f"one of {', '.join(VALUE_WIDTHS)}")
+    _check_keys(data["parameters"], (), f"{where}.parameters")
+    return Distinction(
+        symmetry=_read_symmetry(data["symmetry"], f"{where}.symmetry"),
+        invariant=name,
+        parameters=data["parameters"],
+        left_moves=_read_moves(data["left_moves"], f"{where}.left_moves"),
+        right_moves=_read_moves(data["right_moves"], f"{where}.right_moves"),
+        left=_read_value(data["left"], VALUE_WIDTHS[name], f"{where}.left"),
+        right=_read_value(data["right"], VALUE_WIDTHS[name], f"{where}.right"),
+    )
+
+
+def _read_value(data: Any, width: int, where: str) -> Any:
+    if width == 0:
+        return _read_integer(data, where)
+    items = enumerate(_read_list(data, where))
+    if width == 1:
+        return [_read_integer(item, f"{where}[{i}]") for i, item in items]
+    return [_read_entry(item, width, f"{where}[{i}]") for i, item in items]
+
+
+def _read_entry(data: Any, width: int, where: str) -> list[int]:
+    entry = [_read_integer(item, f"{where}[{i}]") for i, item in enumerate(_read_list(data, where))]
+    if len(entry) != width:
+        _refuse(where, data, f"{width} integers")
+    return entry
 
 
 def _read_symmetry(data: Any, where: str) -> str:
@@ -166,9 +183,11 @@ def _read_symmetry(data: Any, where: str) -> str:
     return data
 
 
-def _read_list(data: Any, where: str) -> list[Any]:
+def _read_list(data: Any, where: str, most: int | None = None) -> list[Any]:
     if not isinstance(data, list):
         _refuse(where, data, "a list")
+    if most is not None and len(data) > most:
+        raise InputError(f"{where}: {len(data)} entries: expected at most {most}")
     return data
 
 
@@ -192,10 +211,14 @@ def _check_keys(data: Any, expected: Iterable[str], where: str) -> None:
             raise InputError(f"{where}: no key {name!r}: expected the keys {', '.join(names)}")
     for key in data:
         if key not in names:
-            raise InputError(f"{where}: unknown key {key!r}: expected the keys {', '.join(names)}")
+            known = f"the keys {', '.join(names)}" if names else "no key"
+            raise InputError(f"{where}: unknown key {_shown(key)}: expected {known}")
 
 
 def _refuse(where: str, found: Any, expected: str) -> NoReturn:
-    shown = json.dumps(found, default=repr)
-    cut = shown if len(shown) <= 40 else shown[:37] + "..."
-    raise InputError(f"{where}: {cut}: expected {expected}")
+    raise InputError(f"{where}: {_shown(found)}: expected {expected}")
+
+
+def _shown(found: Any) -> str:
+    text = json.dumps(found, default=repr)
+    return text if len(text) <= 40 else text[:37] + "..."

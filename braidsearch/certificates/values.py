@@ -87,6 +87,9 @@ class Certificate:
         elif self.verdict == "different":
             if self.symmetry is not None or self.moves or not self.distinctions:
                 raise InputError("a certificate of difference: expected distinctions alone")
+            symmetries = [distinction.symmetry for distinction in self.distinctions]
+            if len(set(symmetries)) < len(symmetries):
+                raise InputError("distinctions: expected each symmetry at most once")
         else:
             raise InputError(f"verdict {self.verdict!r}: expected same or different")
 

@@ -75,6 +75,8 @@ def test_shapes_that_claim_nothing_are_refused() -> None:
         Certificate.different(TREFOIL, MIRROR, [])
     with pytest.raises(InputError, match="expected distinctions alone"):
         Certificate(TREFOIL, MIRROR, "different", "mirror", distinctions=(distinction(),))
+    with pytest.raises(InputError, match="each symmetry at most once"):
+        Certificate.different(TREFOIL, MIRROR, [distinction(), distinction()])
     with pytest.raises(InputError, match="expected none"):
         Certificate(TREFOIL, TREFOIL, "same", "identity", distinctions=(distinction(),))
     with pytest.raises(InputError, match="symmetry 'turn'"):
