@@ -1,6 +1,7 @@
 """The names that scripts rely on, and the top level of the project."""
 
 import fnmatch
+import re
 from pathlib import Path
 
 import pytest
@@ -70,6 +71,18 @@ def test_the_package_is_typed_and_carries_the_format() -> None:
     """What is installed tells type checkers that it has types, and sceptics what a file means."""
     assert (PACKAGE / "py.typed").is_file()
     assert (PACKAGE / "verifier" / "FORMAT.md").is_file()
+
+
+def test_developers_find_every_benchmark() -> None:
+    """Each script that can be run is named in DEVELOPERS.md, and each name there is a script."""
+    scripts = {
+        file.name
+        for file in (PROJECT / "benchmarks").glob("*.py")
+        if "__main__" in file.read_text(encoding="utf-8")
+    }
+    text = (PROJECT / "DEVELOPERS.md").read_text(encoding="utf-8")
+    table = text.split("## Benchmarks")[1].split("\n## ")[0]
+    assert set(re.findall(r"^\| `(\w+\.py)`", table, re.MULTILINE)) == scripts
 
 
 def test_the_top_level_is_what_the_design_names() -> None:
