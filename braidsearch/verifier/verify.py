@@ -105,7 +105,7 @@ def verify_text(text: str | bytes, left: Bound = None, right: Bound = None) -> R
 def verify_file(path: str | os.PathLike[str], left: Bound = None, right: Bound = None) -> Report:
     """Verify a certificate file as ``verify_text`` does; a missing file is unreadable."""
     try:
-        with open(path, "rb") as file:
+        with open(os.fspath(path), "rb") as file:  # a number would be an open descriptor
             content = file.read(MAX_FILE_BYTES + 1)
     except (OSError, ValueError, TypeError) as error:
         cause = getattr(error, "strerror", None) or str(error)
@@ -241,7 +241,11 @@ def check_value(where: str, invariant: str, braid: Braid, stated: Any, work: Wor
     form, compute = INVARIANTS[invariant]
     if form and stated != canonical(stated, form):
         raise RejectedError(f"{where}: the value is not in canonical form")
-    if stated != compute(cyclically_reduced(braid), work):
+    try:
+        value = compute(cyclically_reduced(braid), work)
+    except RejectedError as error:
+        raise RejectedError(f"{where}: {error}") from None
+    if stated != value:
         raise RejectedError(f"{where}: the stated {invariant} is not the recomputed one")
 
 
@@ -481,7 +485,8 @@ def list_of(reader: Reader, most: int, least: int = 0) -> Reader:
         if type(data) is not list:
             raise UnreadableError(f"{shown(data)}: expected a list")
         if not least <= len(data) <= most:
-            raise UnreadableError(f"{len(data)} entries: expected {least} to {most}")
+            span = f"{least} to {most}" if least < most else f"{most}"
+            raise UnreadableError(f"{len(data)} entries: expected {span}")
         entries: list[Any] = []
         try:
             entries.extend(map(reader, data))
@@ -590,10 +595,10 @@ CLAIMS: dict[str, dict[str, Reader]] = {
 
 
 def shown(value: object) -> str:
-    """A value as a message quotes it: plain characters, one line, cut short."""
+    """A value as a message quotes it: in JSON's plain characters, one line, cut short."""
     if isinstance(value, list | dict):
         return "a list" if isinstance(value, list) else "an object"
-    text = ascii(value)
+    text = json.dumps(value)
     return text if len(text) <= 40 else text[:37] + "..."
 
 
