@@ -39,7 +39,7 @@ def iter_link_pairs() -> Iterator[Pair]:
 def iter_knot_pairs() -> Iterator[Pair]:
     """Knots with two words in one cell."""
     for row in link_list()[1:]:
-        words = [integers(part) for part in row["braid_notation"].split("],")]
+        words = [integers(part) for part in re.split(r"\]\s*,\s*\[", row["braid_notation"])]
         if len(words) == 2:
             yield row["name"], Braid(words[0]), Braid(words[1])
 

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from dataclasses import dataclass, field
 
 from braidsearch.arc_walk.walking import Phase, Walk, mixed_seed, walk
@@ -14,7 +14,7 @@ from braidsearch.diagrams import (
     arcs_from_word,
     word_from_arcs,
 )
-from braidsearch.diagrams.arc_cuts import shortest_row_cut, torus_key, word_lengths
+from braidsearch.diagrams.arc_cuts import presentation_key, shortest_row_cut, word_lengths
 from braidsearch.words import Braid
 
 COOLING_TRIES_A_COLUMN = 400
@@ -68,7 +68,7 @@ class _Pool:
             self.strands = end.strands
             self.walks.clear()
             self.keys.clear()
-        key = torus_key(end.end)
+        key = presentation_key(end.end)
         if key in self.keys:
             return
         self.keys.add(key)
@@ -84,8 +84,14 @@ def cooled(braid: Braid, seed: int, *, exchanges: float = 0.02) -> Walk:
     return walk(arcs, mixed_seed(seed, 0), (Phase(tries, merges=0.25, exchanges=exchanges),))
 
 
-def find_short(
-    braid: Braid, seed: int, tries: int, *, keep: int = 8, exchanges: float = 0.02
+def find_short(  # noqa: PLR0913 - each option has its own default
+    braid: Braid,
+    seed: int,
+    tries: int,
+    *,
+    keep: int = 8,
+    should_stop: Callable[[], bool] = lambda: False,
+    exchanges: float = 0.02,
 ) -> list[ShortPresentation]:
     """The best presentations that about ``tries`` tries reach: fewest strands, then letters.
 
@@ -101,7 +107,7 @@ def find_short(
     pool.offer((first,))
     spent = first.plan[0].tries
     number = 0
-    while spent < tries and pool.strands > braid.components:
+    while spent < tries and pool.strands > braid.components and not should_stop():
         number += 1
         plan = _heat_plan(mixed_seed(seed, number, 1), exchanges)
         _, chosen = pool.walks[mixed_seed(seed, number, 2) % len(pool.walks)]

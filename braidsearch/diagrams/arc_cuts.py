@@ -4,6 +4,8 @@ from __future__ import annotations
 
 from braidsearch.diagrams.arc_presentation import ArcPresentation, read_columns
 
+LARGEST_TURNED = 64  # columns up to which a key is found over all rotations
+
 
 def word_lengths(arcs: ArcPresentation) -> tuple[int, ...]:
     """For each k, the letters of the word once the first k rows are rotated to the bottom.
@@ -43,3 +45,13 @@ def torus_key(arcs: ArcPresentation) -> tuple[tuple[int, int], ...]:
         turned = columns[first:] + columns[:first]
         candidates.append(tuple([((s - top) % size, (e - top) % size) for s, e in turned]))
     return min(candidates)
+
+
+def presentation_key(arcs: ArcPresentation) -> tuple[tuple[int, int], ...]:
+    """A value that different presentations never share; rotated ones do, if they are small.
+
+    On many columns all rotations would take long, and the presentation itself is the key.
+    """
+    if arcs.size > LARGEST_TURNED:
+        return tuple(zip(arcs.starts, arcs.ends, strict=True))
+    return torus_key(arcs)

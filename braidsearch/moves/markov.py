@@ -4,9 +4,9 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
-from braidsearch.errors import InputError
+from braidsearch.errors import CapacityError, InputError
 from braidsearch.normal_form import are_equal
-from braidsearch.words import Braid
+from braidsearch.words import MAX_LETTERS, Braid
 
 
 @dataclass(frozen=True, slots=True)
@@ -52,8 +52,13 @@ def apply_move(current: Braid, move: Move) -> Braid:
     """The braid after the move, which is checked.
 
     By Markov's theorem (Markov, 1935; Birman, Braids, links and mapping class groups, 1974) the
-    closures of both are the same oriented link. Raises InputError for a false step.
+    closures of both are the same oriented link. Raises InputError for a false step, CapacityError
+    for a word that a certificate cannot hold.
     """
+    if len(move.word) > MAX_LETTERS:
+        raise CapacityError(
+            f"a move to {len(move.word)} letters: at most {MAX_LETTERS} are written"
+        )
     if isinstance(move, Rewrite):
         return _apply_conjugate(current, (), move.word, "rewrite")
     if isinstance(move, Conjugate):
@@ -66,9 +71,10 @@ def apply_move(current: Braid, move: Move) -> Braid:
 def _apply_conjugate(
     current: Braid, by: tuple[int, ...], word: tuple[int, ...], name: str
 ) -> Braid:
-    conjugator = Braid(by, current.strands)
-    result = Braid(word, current.strands)
-    if not are_equal(conjugator * result, current * conjugator):
+    conjugator, result = Braid(by, current.strands).word, Braid(word, current.strands)
+    before = Braid.trusted(current.word + conjugator, current.strands)
+    after = Braid.trusted(conjugator + result.word, current.strands)
+    if not are_equal(before, after):
         raise InputError(f"{name} to {list(word)}: expected a word for the element as conjugated")
     return result
 

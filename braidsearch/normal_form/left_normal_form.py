@@ -13,6 +13,7 @@ from braidsearch.normal_form.simple_elements import (
     simple_elements,
 )
 from braidsearch.words import Braid
+from braidsearch.words.reduction import free_reduce_letters
 
 Element = tuple[int, tuple[int, ...]]
 """A braid as the inner loops hold it: the infimum, and the names of the simple factors."""
@@ -59,13 +60,27 @@ def left_normal_form(braid: Braid) -> NormalForm:
 
 
 def are_equal(left: Braid, right: Braid) -> bool:
-    """Whether two words are the same element of the braid group on the same strands."""
+    """Whether two words are the same element of the braid group on the same strands.
+
+    What both begin and end with, freely reduced, is left out of the comparison.
+    """
     if left.strands != right.strands:
         return False
-    if left.word == right.word:
+    one, other = _without_common_ends(
+        free_reduce_letters(left.word), free_reduce_letters(right.word)
+    )
+    if one == other:
         return True
     elements = simple_elements(left.strands)
-    return element_of_word(elements, left.word) == element_of_word(elements, right.word)
+    return element_of_word(elements, one) == element_of_word(elements, other)
+
+
+def _without_common_ends(one: list[int], other: list[int]) -> tuple[list[int], list[int]]:
+    shorter = min(len(one), len(other))
+    start = next((i for i in range(shorter) if one[i] != other[i]), shorter)
+    room = shorter - start
+    end = next((i for i in range(room) if one[-1 - i] != other[-1 - i]), room)
+    return one[start : len(one) - end], other[start : len(other) - end]
 
 
 def element_of_word(elements: SimpleElements, word: Sequence[int]) -> Element:

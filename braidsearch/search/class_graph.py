@@ -12,9 +12,6 @@ from braidsearch.normal_form.conjugacy import ClassKey, ConjugacyClass
 from braidsearch.search.route import Stretch
 from braidsearch.words import Braid
 
-SUMMIT_CAP = 200
-"""Members of an ultra summit set that the search walks at most, for each class."""
-
 
 class ClassGraph:
     """Conjugacy classes as nodes, each with its representative braid; edges are stretches.

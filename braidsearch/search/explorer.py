@@ -9,7 +9,8 @@ from typing import TYPE_CHECKING
 
 from braidsearch.moves import Move
 from braidsearch.normal_form.conjugacy import ClassKey, ConjugacyClass, conjugacy_class
-from braidsearch.search.class_graph import SUMMIT_CAP, ClassGraph
+from braidsearch.search.class_graph import ClassGraph
+from braidsearch.search.effort import summit_cap
 from braidsearch.search.limits import Budget
 from braidsearch.search.proposals import (
     draft_destabilization,
@@ -21,7 +22,7 @@ from braidsearch.search.route import Route, Stretch
 from braidsearch.words import Braid
 
 if TYPE_CHECKING:
-    from braidsearch.search.walks import TorusKey, Walker
+    from braidsearch.search.walks import PresentationKey, Walker
 
 _EXTRA_STRANDS = 2
 _EXPANSIONS_FIRST = 6  # classes expanded on a side before its first walk
@@ -46,7 +47,7 @@ class Side:
     fewest_strands: int = 0
     fewest: list[ClassKey] = field(default_factory=list)
     walkers: dict[ClassKey, Walker] = field(default_factory=dict)
-    known: set[TorusKey] = field(default_factory=set)
+    known: set[PresentationKey] = field(default_factory=set)
     turns: int = 0
     fruitless_walks: int = 0
 
@@ -112,7 +113,7 @@ class Explorer:
         return found.key
 
     def _classify(self, braid: Braid) -> ConjugacyClass:
-        return conjugacy_class(braid, SUMMIT_CAP, self.budget.is_out_of_time)
+        return conjugacy_class(braid, summit_cap(braid), self.budget.is_out_of_time)
 
     def _expand(self, side: Side) -> Iterator[ClassKey]:
         """Enter the classes next to the first one that waits."""
@@ -128,7 +129,7 @@ class Explorer:
                 heapq.heappush(side.waiting, entry)
 
     def _iter_stretches(self, braid: Braid) -> Iterator[Stretch]:
-        words = list(iter_words(braid, SUMMIT_CAP, self.budget.is_out_of_time))
+        words = list(iter_words(braid, summit_cap(braid), self.budget.is_out_of_time))
         for propose in (draft_destabilization, draft_exchange):
             for by, word in words:
                 draft = propose(braid, by, word)

@@ -20,6 +20,7 @@ class Ending(Enum):
     NODE_LIMIT = "node limit"
     TIME_LIMIT = "time limit"
     INTERRUPTED = "interrupted"
+    TOO_LARGE = "too large"
     NOT_SEARCHED = "not searched"
     NOT_ACCEPTED = "certificate not accepted"
 
@@ -36,7 +37,7 @@ class SearchLimits:
     """
 
     seconds: float | None = 60.0
-    nodes: int | None = 20_000
+    nodes: int | None = 200_000
     max_strands: int | None = None
     max_letters: int = 2_000
 

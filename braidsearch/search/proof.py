@@ -7,12 +7,13 @@ from itertools import groupby
 
 from braidsearch.moves import Conjugate, Move, MoveChain, Rewrite
 from braidsearch.normal_form import are_equal
-from braidsearch.normal_form.conjugacy import ClassKey, conjugacy_class, find_conjugator
+from braidsearch.normal_form.conjugators import short_conjugator
+from braidsearch.search.visits import visit
 from braidsearch.words import Braid
 from braidsearch.words.handles import reduce_handles
 
-_SHORTCUT_CAP = 200
-_LONGEST_SHORTENED = 400
+_LONGEST_SHORTENED = 400  # moves up to which a chain is searched for detours
+_LARGEST_SPELLING = 5_000  # letters times strands up to which a normal form is worth its time
 
 
 def checked_chain(start: Braid, moves: Iterable[Move], end: Braid) -> MoveChain:
@@ -45,26 +46,35 @@ def merged_moves(start: Braid, moves: Iterable[Move]) -> list[Move]:
 def _one_move(current: Braid, by: tuple[int, ...], word: tuple[int, ...]) -> list[Move]:
     if current.word == word:
         return []
-    shortest = reduce_handles(Braid.trusted(by, current.strands)).word
+    shortest = _shortest_spelling(by, current.strands)
     if not shortest or are_equal(current, Braid.trusted(word, current.strands)):
         return [Rewrite(word)]
     return [Conjugate(shortest, word)]
 
 
+def _shortest_spelling(by: tuple[int, ...], strands: int) -> tuple[int, ...]:
+    """A short word that conjugates as ``by`` does, by handles or by the normal form."""
+    reduced = reduce_handles(Braid.trusted(by, strands)).word
+    if len(reduced) * strands > _LARGEST_SPELLING:
+        return reduced
+    return min(reduced, short_conjugator(reduced, strands), key=len)
+
+
 def without_detours(chain: MoveChain) -> MoveChain:
     """A chain from the same start to the same end that skips what lies between conjugate stages."""
-    keys = [conjugacy_class(braid, _SHORTCUT_CAP).key for braid in chain.braids]
-    last_place: dict[ClassKey, int] = {key: place for place, key in enumerate(keys)}
+    if len(chain) < 2:
+        return chain
+    visits = [visit(braid) for braid in chain.braids]
+    last_place = {visit.key: place for place, visit in enumerate(visits)}
     shorter = MoveChain(chain.start)
     place = 0
     while place < len(chain):
-        far = last_place[keys[place]]
+        far = last_place[visits[place].key]
         if far > place + 1:
-            by = find_conjugator(chain.braids[place], chain.braids[far], _SHORTCUT_CAP)
-            if by is not None:
-                shorter.extend(_one_move(chain.braids[place], by, chain.braids[far].word))
-                place = far
-                continue
-        shorter.append(chain.moves[place])
-        place += 1
+            by = visits[place].conjugator_to(visits[far])
+            shorter.extend(_one_move(chain.braids[place], by, chain.braids[far].word))
+            place = far
+        else:
+            shorter.append(chain.moves[place])
+            place += 1
     return shorter if len(shorter) < len(chain) else chain

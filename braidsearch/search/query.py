@@ -5,7 +5,8 @@ from __future__ import annotations
 from typing import TYPE_CHECKING, Any
 
 from braidsearch.certificates import Certificate, Distinction
-from braidsearch.moves import Move
+from braidsearch.invariants.table import invariant_named
+from braidsearch.moves import Conjugate, Move
 from braidsearch.normal_form.conjugacy import find_conjugator
 from braidsearch.search.distinguish import Distinguisher
 from braidsearch.search.gate import judge
@@ -14,7 +15,8 @@ from braidsearch.search.proof import checked_chain
 from braidsearch.search.route import Route
 from braidsearch.search.simplify import simplified
 from braidsearch.search.verdict import Verdict
-from braidsearch.words import SYMMETRIES, Braid, apply_symmetry
+from braidsearch.words import SYMMETRIES, Braid, apply_symmetry, cyclic_reduce
+from braidsearch.words.reduction import find_rotation
 
 if TYPE_CHECKING:
     from braidsearch.search.meet import Meeting
@@ -45,6 +47,9 @@ class Query:
         plain = Route(self.left), Route(self.right)
         if self._distinguish(*plain, CHEAP_SECONDS):
             return self._different()
+        rotated = self._compare_rotations()
+        if rotated is not None:
+            return rotated
         handy = self._route(None), self._route("identity")
         if self._distinguish(*handy, FAIR_SECONDS):
             return self._different()
@@ -75,6 +80,19 @@ class Query:
             if found is not None:
                 self.distinctions[symmetry] = found
         return not self.open_symmetries()
+
+    def _compare_rotations(self) -> Verdict | None:
+        """Whether the words, cyclically reduced, are rotations of each other: seen at once."""
+        reduced, by = cyclic_reduce(self.left)
+        for symmetry in self.open_symmetries():
+            image = apply_symmetry(self.right, symmetry)
+            other, back = cyclic_reduce(image)
+            shift = find_rotation(reduced, other)
+            if shift is not None:
+                inverse = tuple(-letter for letter in reversed(back))
+                step = Conjugate((*by, *reduced.word[:shift], *inverse), image.word)
+                return self._same([step], symmetry)
+        return None
 
     def _search_directly(self) -> Verdict | None:
         """Whether simplification has led to conjugate braids already."""
@@ -114,13 +132,16 @@ class Query:
 
             right = self._route(symmetry)
             self.meetings[symmetry] = Meeting(self._route(None), right, self.budget)
-            self.tried.append(f"search for moves, {symmetry}")
+            image = "" if symmetry in self.asked else " (a symmetric image, not asked for)"
+            self.tried.append(f"search for moves, {symmetry}{image}")
         return self.meetings[symmetry]
 
     def _search_image(self) -> Certificate | None:
         """Sameness with a symmetric image that was not asked for, when the question stays open."""
         others = [name for name in SYMMETRIES if name not in self.asked]
         for place, symmetry in enumerate(others, 1):
+            if self.budget.ending() is not None:
+                return None
             if self._is_excluded(symmetry):
                 continue
             moves = self._direct_moves(symmetry)
@@ -171,8 +192,8 @@ class Query:
     def _different(self) -> Verdict:
         found = [self.distinctions[name] for name in self.asked]
         certificate = Certificate.different(self.left, self.right, found)
-        names = ", ".join(dict.fromkeys(distinction.invariant for distinction in found))
-        reason = f"these invariants differ: {names}"
+        titles = (invariant_named(distinction.invariant).title for distinction in found)
+        reason = f"told apart by the {' and the '.join(dict.fromkeys(titles))}"
         return self._judged(certificate, reason, None, self._glance_at_images())
 
     def _judged(

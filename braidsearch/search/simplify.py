@@ -11,30 +11,37 @@ from braidsearch.words.half_twist import flip_letters, half_twist
 from braidsearch.words.handles import reduce_handles, reduce_handles_turned
 
 _SUMMIT_CAP = 100
-_WORDS_ONLY_ABOVE = 300  # letters from which the summit is not walked for a destabilization
-
-
-_WALK_ABOVE = 4  # strands from which a walk looks for fewer before invariants are computed
+_LONGEST_SUMMIT = 100  # letters up to which the summit is walked for a destabilization
+_LONGEST_HANDLES = 400  # letters up to which handles are reduced
+_WALK_STRANDS, _WALK_LETTERS = 5, 40  # from either of them on a walk comes first
 _SEED = 1
 
 
 def simplified(braid: Braid, budget: Budget) -> Route:
-    """The route to the handiest braid at hand: by greed, then, on many strands, by a walk."""
-    route = Route(braid, (Stretch.of_chain(simplify(braid, budget, _SUMMIT_CAP)),))
-    if route.current.strands > _WALK_ABOVE and not budget.is_out_of_time():
+    """The route to the handiest braid at hand: by greed, but for large braids by a walk first."""
+    route = Route(braid)
+    if braid.strands >= _WALK_STRANDS or len(braid) >= _WALK_LETTERS:
+        route = _greedy(route, budget, 0)
         from braidsearch.search.walks import cooled_route  # noqa: PLC0415 - loads a compiler
 
-        route = cooled_route(route, _SEED)
-    return route
+        route = cooled_route(route, _SEED, budget.is_out_of_time)
+    return _greedy(route, budget, _SUMMIT_CAP)
+
+
+def _greedy(route: Route, budget: Budget, summit_cap: int) -> Route:
+    return route.extended(Stretch.of_chain(simplify(route.current, budget, summit_cap)))
 
 
 def simplify(braid: Braid, budget: Budget, summit_cap: int) -> MoveChain:
     """A chain of moves to a braid with fewer strands or letters, as far as greed goes.
 
+    The chain is a draft: whoever makes a proof of it checks it. ``summit_cap`` bounds the members
+    of a summit that are looked at; 0 leaves summits alone.
+
     Handle reduction and cyclic reduction shorten the word; a generator at either end that occurs
     once is destabilized away, looked for in the word and in words of the summit of its class.
     """
-    chain = MoveChain(braid)
+    chain = MoveChain(braid, is_checked=False)
     while True:
         shorten(chain)
         if not _destabilize_once(chain, budget, summit_cap):
@@ -55,6 +62,8 @@ def shorten(chain: MoveChain) -> None:
 
 
 def _without_handles(braid: Braid) -> Braid:
+    if len(braid) > _LONGEST_HANDLES:
+        return braid
     return min((reduce_handles(braid), reduce_handles_turned(braid)), key=len)
 
 
@@ -64,7 +73,7 @@ def _destabilize_once(chain: MoveChain, budget: Budget, summit_cap: int) -> bool
     for by, word in (((), braid.word), turned):
         if _take(chain, draft_destabilization(braid, by, word)):
             return True
-    if len(braid) > _WORDS_ONLY_ABOVE or budget.ending() is not None:
+    if len(braid) > _LONGEST_SUMMIT or not summit_cap or budget.is_out_of_time():
         return False
     return any(
         _take(chain, draft_destabilization(braid, by, word))

@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Hashable, Iterable, Sequence
-from dataclasses import dataclass
+from collections.abc import Iterable, Sequence
 from itertools import pairwise
 
 import networkx as nx
@@ -17,10 +16,9 @@ from braidsearch.moves.arcs import (
     legs_from_arc_moves,
     write_legs,
 )
-from braidsearch.normal_form.conjugacy import conjugacy_class
+from braidsearch.search.visits import Visit, visit
 from braidsearch.words import Braid
 
-_SUMMIT_CAP = 200
 _MOST_STRANDS = 7  # up to which classes are found fast enough to look for loops
 _EXCHANGE_COST = 7
 
@@ -62,41 +60,21 @@ def without_class_loops(legs: Sequence[Leg]) -> list[Leg]:
     return [*shortened, *_conjugation(current, visits[last]), *legs[last:]]
 
 
-@dataclass(frozen=True)
-class _Visit:
-    """A stage of the walk: its braid, the name of its class, and what conjugates it to that name.
-
-    On many strands no class is found: the stage then has a name of its own.
-    """
-
-    braid: Braid
-    key: Hashable
-    conjugator: tuple[int, ...] = ()
-
-
-def _class_visits(legs: Sequence[Leg]) -> dict[int, _Visit]:
+def _class_visits(legs: Sequence[Leg]) -> dict[int, Visit]:
     """The visit before leg number i, for the stages at which the class may be a new one."""
-    visits = {0: _visit(legs[0].source)}
+    visits = {0: visit(legs[0].source)}
     for place, leg in enumerate(legs, 1):
         if not isinstance(leg, Conjugation) and leg.target.strands <= _MOST_STRANDS:
-            visits[place] = _visit(leg.target)
+            visits[place] = visit(leg.target)
     return visits
-
-
-def _visit(braid: Braid) -> _Visit:
-    if braid.strands > _MOST_STRANDS:
-        return _Visit(braid, braid)
-    found = conjugacy_class(braid, _SUMMIT_CAP)
-    return _Visit(braid, found.key, found.conjugator)
 
 
 def _cost(leg: Leg) -> int:
     return _EXCHANGE_COST if isinstance(leg, Exchange) else 1
 
 
-def _conjugation(here: _Visit, there: _Visit) -> list[Leg]:
+def _conjugation(here: Visit, there: Visit) -> list[Leg]:
     """The conjugation from one member of a class to another, through the representative."""
     if here.braid == there.braid:
         return []
-    back = tuple(-letter for letter in reversed(there.conjugator))
-    return [Conjugation(here.braid, there.braid, here.conjugator + back)]
+    return [Conjugation(here.braid, there.braid, here.conjugator_to(there))]

@@ -6,12 +6,13 @@ from collections.abc import Iterator, Sequence
 
 from braidsearch.arc_walk import Phase, Walk, cooled, find_short, mixed_seed, walk
 from braidsearch.diagrams import ArcMove, ArcPresentation, word_from_arcs
-from braidsearch.diagrams.arc_cuts import torus_key
+from braidsearch.diagrams.arc_cuts import presentation_key
+from braidsearch.normal_form.conjugation import ShouldStop, never
 from braidsearch.search.route import Route, Stretch
 from braidsearch.search.walk_proofs import walk_moves
 from braidsearch.words import Braid
 
-TorusKey = tuple[tuple[int, int], ...]
+PresentationKey = tuple[tuple[int, int], ...]
 
 _HEAT_TRIES = (100, 600)
 _HEAT_SPLITS = (1, 3)
@@ -31,11 +32,11 @@ def _iter_moves(walks: Sequence[Walk]) -> Iterator[ArcMove]:
         yield from part.iter_moves()
 
 
-def cooled_route(route: Route, seed: int) -> Route:
+def cooled_route(route: Route, seed: int, should_stop: ShouldStop = never) -> Route:
     """The route continued to the shortest word on the fewest strands that a first walk finds."""
     braid = route.current
     tries = _COOLING_TRIES_A_LETTER * (len(braid) + braid.strands)
-    best = find_short(braid, seed, tries, keep=1)[0]
+    best = find_short(braid, seed, tries, keep=1, should_stop=should_stop)[0]
     end = best.braid
     if (end.strands, len(end)) >= (braid.strands, len(braid)):
         return route
@@ -49,7 +50,7 @@ class Walker:
     presentations (up to rotation) that need no second look, and may be shared among walkers.
     """
 
-    def __init__(self, braid: Braid, known: set[TorusKey], seed: int) -> None:
+    def __init__(self, braid: Braid, known: set[PresentationKey], seed: int) -> None:
         self._braid = braid
         self._known = known
         self._seed = seed
@@ -70,7 +71,7 @@ class Walker:
         end: ArcPresentation = walks[-1].end
         if walks[-1].strands > most_strands:
             return None
-        key = torus_key(end)
+        key = presentation_key(end)
         if key in self._known:
             return None
         self._known.add(key)

@@ -6,8 +6,7 @@ from braidsearch.words.braid import Braid
 from braidsearch.words.half_twist import flip_letters
 from braidsearch.words.reduction import free_reduce_letters
 
-_ROUNDS_PER_LETTER = 50
-_GROWTH = 4
+_STEPS_A_LETTER = 60
 
 
 def reduce_handles(braid: Braid) -> Braid:
@@ -15,21 +14,14 @@ def reduce_handles(braid: Braid) -> Braid:
 
     A handle is sigma_j^e v sigma_j^-e where v has no sigma_(j-1) and no sigma_j, and sigma_(j+1)
     in one sign only; pushing the strand across takes both sigma_j away. Dehornoy, A fast method
-    for comparing braids, 1997. When the word grows beyond four times its length, or the count of
-    rounds runs out, the shortest word met is returned.
+    for comparing braids, 1997. Where that would take very many steps, or ends in a longer word,
+    the freely reduced word is returned.
     """
     word = free_reduce_letters(braid.word)
-    best = word
-    for _ in range(_ROUNDS_PER_LETTER * (len(word) + 1)):
-        handle = _first_handle(word)
-        if handle is None:
-            break
-        word = free_reduce_letters(_without_handle(word, *handle))
-        if len(word) > _GROWTH * (len(best) + 8):
-            break
-        if len(word) <= len(best):
-            best = word
-    return Braid.trusted(tuple(best), braid.strands)
+    reduced = _without_handles(word, _STEPS_A_LETTER * (len(word) + 10))
+    if reduced is None or len(reduced) > len(word):
+        reduced = word
+    return Braid.trusted(tuple(reduced), braid.strands)
 
 
 def reduce_handles_turned(braid: Braid) -> Braid:
@@ -39,37 +31,55 @@ def reduce_handles_turned(braid: Braid) -> Braid:
     return Braid.trusted(flip_letters(turned.word, strands), strands)
 
 
-def _first_handle(word: list[int]) -> tuple[int, int] | None:
-    """The places (first, last) of the handle that ends first; it holds no other handle."""
-    last_place: dict[int, int] = {}
-    for place, letter in enumerate(word):
-        index = abs(letter)
-        start = last_place.get(index)
-        if start is not None and word[start] == -letter and _is_handle(word, start, place):
-            return start, place
-        last_place[index] = place
+def _without_handles(word: list[int], steps: int) -> list[int] | None:
+    """Reduce the handle that ends first, again and again; None when the steps run out.
+
+    ``done`` is free of handles, so the handle that a new letter closes holds no other one; what
+    is pushed out of it is read again.
+    """
+    done: list[int] = []
+    waiting = word[::-1]
+    while waiting:
+        letter = waiting.pop()
+        start = _handle_start(done, letter)
+        if start is None:
+            done.append(letter)
+        else:
+            waiting.extend(reversed(_pushed_across(done[start], done[start + 1 :])))
+            del done[start:]
+        steps -= 1
+        if steps < 0:
+            return None
+    return done
+
+
+def _handle_start(done: list[int], letter: int) -> int | None:
+    """The place of the letter with which ``letter`` closes a handle, if it closes one."""
+    index = abs(letter)
+    sign_above = 0
+    for place in range(len(done) - 1, -1, -1):
+        other = done[place]
+        if other == -letter:
+            return place
+        if other == letter or abs(other) == index - 1:
+            return None
+        if abs(other) == index + 1:
+            sign = 1 if other > 0 else -1
+            if sign_above == -sign:
+                return None
+            sign_above = sign
     return None
 
 
-def _is_handle(word: list[int], start: int, place: int) -> bool:
-    index = abs(word[place])
-    signs = set()
-    for letter in word[start + 1 : place]:
-        if abs(letter) == index - 1:
-            return False
-        if abs(letter) == index + 1:
-            signs.add(letter > 0)
-    return len(signs) < 2
-
-
-def _without_handle(word: list[int], start: int, place: int) -> list[int]:
-    index, sign = abs(word[start]), 1 if word[start] > 0 else -1
+def _pushed_across(first: int, inside: list[int]) -> list[int]:
+    """What becomes of the inside of a handle that begins with ``first``."""
+    index, sign = abs(first), 1 if first > 0 else -1
     above = index + 1
-    inside: list[int] = []
-    for letter in word[start + 1 : place]:
+    pushed: list[int] = []
+    for letter in inside:
         if abs(letter) == above:
             middle = index if letter > 0 else -index
-            inside.extend((-sign * above, middle, sign * above))
+            pushed.extend((-sign * above, middle, sign * above))
         else:
-            inside.append(letter)
-    return word[:start] + inside + word[place + 1 :]
+            pushed.append(letter)
+    return pushed

@@ -32,3 +32,23 @@ def cyclic_reduce(braid: Braid) -> tuple[Braid, tuple[int, ...]]:
         depth += 1
     core = reduced[depth : len(reduced) - depth]
     return Braid.trusted(tuple(core), braid.strands), tuple(reduced[:depth])
+
+
+def find_rotation(left: Braid, right: Braid) -> int | None:
+    """The number of letters to move from the front of ``left`` to its end to get ``right``.
+
+    None where no rotation of the word does. The letters moved conjugate one word to the other.
+    """
+    length = len(left)
+    if left.strands != right.strands or length != len(right):
+        return None
+    if left.word == right.word:
+        return 0
+    doubled = _as_text(left.word * 2)
+    found = doubled.find(_as_text(right.word))
+    return None if found < 0 else doubled[:found].count(" ")
+
+
+def _as_text(word: tuple[int, ...]) -> str:
+    """The word with a blank in front of and behind each letter, for the search of substrings."""
+    return " " + " ".join(map(str, word)) + " "

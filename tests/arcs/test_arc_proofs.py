@@ -30,12 +30,12 @@ from braidsearch.moves.arcs import (
     composed,
     legs_from_arc_moves,
     reversed_leg,
-    short_conjugator,
     write_arc_moves,
     write_legs,
 )
 from braidsearch.moves.arcs.legs import exchange_as_conjugation, inverse_letters
 from braidsearch.normal_form import are_equal
+from braidsearch.normal_form.conjugators import short_conjugator
 from braidsearch.verifier.verify import verify_text
 from braidsearch.words import Braid
 from tests.arcs.oracle import random_move

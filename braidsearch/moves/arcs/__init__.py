@@ -10,7 +10,7 @@ from braidsearch.moves.arcs.legs import (
     reversed_leg,
 )
 from braidsearch.moves.arcs.translation import legs_from_arc_moves
-from braidsearch.moves.arcs.writing import short_conjugator, write_arc_moves, write_legs
+from braidsearch.moves.arcs.writing import write_arc_moves, write_legs
 
 __all__ = [
     "Conjugation",
@@ -21,7 +21,6 @@ __all__ = [
     "composed",
     "legs_from_arc_moves",
     "reversed_leg",
-    "short_conjugator",
     "write_arc_moves",
     "write_legs",
 ]

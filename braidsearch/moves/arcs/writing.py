@@ -7,11 +7,10 @@ from collections.abc import Iterable, Sequence
 from braidsearch.diagrams.arc_moves import ArcMove
 from braidsearch.diagrams.arc_presentation import ArcPresentation
 from braidsearch.errors import InputError
-from braidsearch.moves.arcs.legs import Conjugation, Leg, Letters, Stabilization, composed
+from braidsearch.moves.arcs.legs import Conjugation, Leg, Stabilization, composed
 from braidsearch.moves.arcs.translation import legs_from_arc_moves
 from braidsearch.moves.chain import MoveChain
-from braidsearch.normal_form import NormalForm, left_normal_form
-from braidsearch.words import Braid
+from braidsearch.normal_form.conjugators import short_conjugator
 
 
 def write_arc_moves(chain: MoveChain, arcs: ArcPresentation, moves: Iterable[ArcMove]) -> None:
@@ -38,19 +37,3 @@ def write_legs(chain: MoveChain, legs: Sequence[Leg]) -> None:
             chain.stabilize(leg.sign)
         else:
             chain.destabilize()
-
-
-def short_conjugator(by: Letters, strands: int) -> Letters:
-    """A short word that conjugates as ``by`` does: full twists are central and dropped.
-
-    The candidates are ``by`` and the normal form with every power of delta of one parity, since
-    the negative powers are worked into the factors.
-    """
-    form = left_normal_form(Braid.trusted(tuple(by), strands))
-    parity = form.infimum % 2
-    candidates = [tuple(by)]
-    for infimum in range(-len(form.factors) - 1, 2):
-        if infimum % 2 == parity:
-            turned = NormalForm(strands, infimum, form.factors)
-            candidates.append(turned.to_braid().word)
-    return min(candidates, key=len)
