@@ -26,6 +26,7 @@ if TYPE_CHECKING:
 
 _EXTRA_STRANDS = 2
 _EXPANSIONS_FIRST = 6  # classes expanded on a side before its first walk
+_TURNS_AN_EXPANSION = 3  # after that, one turn in so many expands a class, the others walk
 _WALKS_A_TURN = 60
 _WALKS_A_NODE = 20  # fruitless walks that count as one node
 _WALK_COST, _EXPANSION_COST = 8, 3
@@ -91,7 +92,7 @@ class Explorer:
         A turn may be given up at any time; what it left undone is taken up again.
         """
         side.turns += 1
-        is_walk = side.turns > _EXPANSIONS_FIRST and side.turns % 2 == 0
+        is_walk = side.turns > _EXPANSIONS_FIRST and side.turns % _TURNS_AN_EXPANSION != 0
         if side.waiting and not is_walk:
             return self._expand(side)
         return self._walk(side)
@@ -121,21 +122,22 @@ class Explorer:
         _, depth, _, key = entry
         is_done = False
         try:
-            for stretch in self._iter_stretches(self.graph.representative(key)):
+            most = min(self._max_strands, side.fewest_strands + 1)
+            for stretch in self._iter_stretches(self.graph.representative(key), most):
                 yield self._enter(side, key, stretch, depth + 1, _EXPANSION_COST)
             is_done = True
         finally:
             if not is_done:
                 heapq.heappush(side.waiting, entry)
 
-    def _iter_stretches(self, braid: Braid) -> Iterator[Stretch]:
+    def _iter_stretches(self, braid: Braid, most_strands: int) -> Iterator[Stretch]:
         words = list(iter_words(braid, summit_cap(braid), self.budget.is_out_of_time))
         for propose in (draft_destabilization, draft_exchange):
             for by, word in words:
                 draft = propose(braid, by, word)
                 if draft is not None:
                     yield Stretch.of_chain(draft)
-        if braid.strands < self._max_strands and len(braid) < self.budget.limits.max_letters:
+        if braid.strands < most_strands and len(braid) < self.budget.limits.max_letters:
             yield from map(Stretch.of_chain, iter_stabilizations(braid))
 
     def _walk(self, side: Side) -> Iterator[ClassKey]:

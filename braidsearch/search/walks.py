@@ -14,10 +14,10 @@ from braidsearch.words import Braid
 
 PresentationKey = tuple[tuple[int, int], ...]
 
-_HEAT_TRIES = (100, 600)
-_HEAT_SPLITS = (1, 3)
-_SETTLING_TRIES = 250
-_EXCHANGE_SHARES = (0.05, 0.3, 1.0)  # few exchanges keep proofs short, many reach further
+_HEAT_TRIES = (100, 2_000)
+_HEAT_SPLITS = (1, 5)
+_SETTLING_TRIES = 400
+_EXCHANGE_SHARES = (0.1, 0.3, 1.0)  # few exchanges keep proofs short, many reach further
 _COOLING_TRIES_A_LETTER = 3_000
 
 
