@@ -26,6 +26,7 @@ if TYPE_CHECKING:
     from braidsearch.errors import BraidsearchError, CapacityError, InputError
     from braidsearch.search.driver import compare
     from braidsearch.search.limits import Progress, SearchLimits
+    from braidsearch.search.tighten import Tightening, tighten
     from braidsearch.search.verdict import Verdict
     from braidsearch.verifier import Report
     from braidsearch.words import Braid, format_word, parse_word
@@ -42,6 +43,7 @@ _HOMES: dict[str, str] = {
     "Progress": "search.limits",
     "Report": "verifier",
     "SearchLimits": "search.limits",
+    "Tightening": "search.tighten",
     "Verdict": "search.verdict",
     "compare": "search.driver",
     "explain_certificate": "certificates",
@@ -50,6 +52,7 @@ _HOMES: dict[str, str] = {
     "parse_certificate": "certificates",
     "parse_word": "words",
     "read_certificate": "certificates",
+    "tighten": "search.tighten",
     "write_certificate": "certificates",
 }
 
@@ -63,6 +66,7 @@ __all__ = [
     "Progress",
     "Report",
     "SearchLimits",
+    "Tightening",
     "Verdict",
     "__version__",
     "compare",
@@ -72,6 +76,7 @@ __all__ = [
     "parse_certificate",
     "parse_word",
     "read_certificate",
+    "tighten",
     "verify",
     "write_certificate",
 ]

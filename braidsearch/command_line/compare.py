@@ -13,9 +13,10 @@ from braidsearch.certificates import (
     write_certificate,
 )
 from braidsearch.command_line.answer import Answer, json_answer
-from braidsearch.command_line.arguments import CommandParser, read_seconds, read_word_argument
+from braidsearch.command_line.arguments import CommandParser, read_word_argument
 from braidsearch.command_line.compare_report import report_verdict
 from braidsearch.command_line.progress import progress_line
+from braidsearch.command_line.search_limits import add_limits, read_limits
 from braidsearch.errors import BraidsearchError, InputError
 from braidsearch.words import SYMMETRIES, Braid
 
@@ -45,7 +46,7 @@ def answer(arguments: Sequence[str]) -> Answer:
     if given.output == "-" and given.json:
         raise InputError("-o -: expected a file, since --json prints the certificate already")
     left, right = _read_braids(given)
-    up_to, limits = _read_symmetries(given.up_to or []), _read_limits(given)
+    up_to, limits = _read_symmetries(given.up_to or []), read_limits(given)
     if given.output not in (None, "-"):
         check_destination(given.output)
     verdict = _compare(left, right, up_to, limits)
@@ -64,16 +65,7 @@ def _parser() -> CommandParser:
     )
     parser.add_text("-o", "--output", metavar="FILE", explanation="certificate file (-: print it)")
     parser.add_json()
-    parser.add_number(
-        "--seconds", read_seconds, "seconds or none", "stop after so many seconds (60)"
-    )
-    parser.add_number("--nodes", int, "a count or none", "stop after so many conjugacy classes")
-    parser.add_number(
-        "--max-strands",
-        int,
-        "a count or none",
-        "most strands on the way (two more than the larger word has)",
-    )
+    add_limits(parser)
     return parser
 
 
@@ -91,13 +83,6 @@ def _read_symmetries(values: Sequence[str]) -> tuple[str, ...]:
             raise InputError(f"--up-to: {name!r}: expected any, or {', '.join(SYMMETRIES[1:])}")
     wanted = SYMMETRIES if "any" in names else names
     return tuple(symmetry for symmetry in SYMMETRIES[1:] if symmetry in wanted)
-
-
-def _read_limits(given: Namespace) -> SearchLimits:
-    from braidsearch.search.limits import SearchLimits  # noqa: PLC0415 - help and mistakes come faster
-
-    bounds = ("seconds", "nodes", "max_strands")
-    return SearchLimits(**{name: getattr(given, name) for name in bounds if hasattr(given, name)})
 
 
 def _compare(left: Braid, right: Braid, up_to: Sequence[str], limits: SearchLimits) -> Verdict:

@@ -22,6 +22,7 @@ from braidsearch.errors import BraidsearchError, InputError
 COMMANDS: dict[str, str] = {
     "compare": "say whether two closed braids are the same link, with a certificate",
     "verify": "replay a certificate",
+    "tighten": "fewest strands, then fewest letters, for the same link",
     "normalise": "reduced word, left normal form and conjugacy summit of a braid",
     "invariants": "invariants of the closure of a braid",
 }

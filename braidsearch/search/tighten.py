@@ -129,10 +129,13 @@ class _Tightener:
         return Ending.FOUND
 
     def _is_settled(self) -> bool:
-        if self.best.strands == 1:
+        if self.best.strands != self.lower_bound:
+            return self.best.strands == 1
+        # On the fewest strands the exponent sum is an invariant of the link (Dynnikov, Prasolov,
+        # Bypasses for rectangular diagrams, 2013), so a word of one sign has the fewest letters.
+        if len(self.best) == abs(self.best.exponent_sum):
             return True
-        waited = self.budget.nodes - self.last_progress
-        return self.best.strands == self.lower_bound and waited >= _PATIENCE
+        return self.budget.nodes - self.last_progress >= _PATIENCE
 
     def _look_at(self, key: ClassKey) -> None:
         """Take the shortest word of a class, when it is better than the best one."""
