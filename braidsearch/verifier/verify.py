@@ -290,7 +290,7 @@ def apply_move(braid: Braid, move: Move, work: Work) -> Braid:
     if move.move == "stabilize":
         made = Braid(strands + 1, (*word, move.sign * strands))
     elif move.move == "destabilize":
-        if strands == 1 or word[-1:] != (move.sign * (strands - 1),):
+        if word[-1:] != (move.sign * (strands - 1),):  # on one strand: letter 0, in no word
             raise RejectedError("the current word does not end in the letter to be taken away")
         made = Braid(strands - 1, word[:-1])
         check_inside(made.word, made.strands)
@@ -640,6 +640,20 @@ def components(braid: Braid, work: Work) -> int:
 
 def linking_numbers(braid: Braid, work: Work) -> list[int]:
     """The linking numbers of all pairs of components, sorted: half the signed crossings."""
+    return sorted(crossings // 2 for crossings in signed_crossings(braid, work).values())
+
+
+def linking_sums(braid: Braid, work: Work) -> list[int]:
+    """For each component, the sum of its linking numbers with all others; sorted."""
+    sums = [0] * components(braid, work)
+    for pair, crossings in signed_crossings(braid, work).items():
+        for number in pair:
+            sums[number] += crossings // 2
+    return sorted(sums)
+
+
+def signed_crossings(braid: Braid, work: Work) -> dict[tuple[int, int], int]:
+    """The sum of the signs of the crossings between each two components, an even number."""
     row = component_numbers(braid)
     count = max(row) + 1
     work.spend(4 * len(braid.word) + braid.strands + 4 * count * count)
@@ -649,7 +663,7 @@ def linking_numbers(braid: Braid, work: Work) -> list[int]:
         if row[i] != row[i + 1]:
             doubled[min(row[i], row[i + 1]), max(row[i], row[i + 1])] += 1 if letter > 0 else -1
         row[i], row[i + 1] = row[i + 1], row[i]
-    return sorted(crossings // 2 for crossings in doubled.values())
+    return doubled
 
 
 # A Seifert surface of the closed braid: a disc for each strand, a twisted band for each letter.
@@ -1170,6 +1184,7 @@ def character(
 INVARIANTS: dict[str, tuple[int, Callable[[Braid, Work], Any]]] = {
     "components": (0, components),
     "linking-numbers": (1, linking_numbers),
+    "linking-sums": (1, linking_sums),
     "alexander": (2, alexander),
     "jones": (2, jones),
     "homfly": (3, homfly),

@@ -63,7 +63,7 @@ def distinction_holds(data: Any, item: Any) -> bool:
     if item.keys() != sides | {"symmetry", "invariant", "parameters"} or item["parameters"] != {}:
         return False
     name = item["invariant"]
-    if not is_one_of(name, {*WIDTHS, "components", "linking-numbers", "signature"}):
+    if not is_one_of(name, {*WIDTHS, "components", "linking-numbers", "linking-sums", "signature"}):
         return False
     if not (has_form(name, item["left"]) and has_form(name, item["right"])):
         return False
@@ -83,7 +83,7 @@ def has_form(name: str, value: Any) -> bool:
         return type(value) is int
     if not isinstance(value, list):
         return False
-    if name == "linking-numbers":
+    if name in ("linking-numbers", "linking-sums"):
         return all(type(number) is int for number in value)
     return all(
         isinstance(entry, list)

@@ -10,7 +10,15 @@ from tests.verifier import oracles
 from tests.verifier.judge import SYMMETRIES
 
 Certificate = dict[str, Any]
-INVARIANTS = ("components", "linking-numbers", "alexander", "jones", "homfly", "signature")
+INVARIANTS = (
+    "components",
+    "linking-numbers",
+    "linking-sums",
+    "alexander",
+    "jones",
+    "homfly",
+    "signature",
+)
 
 
 def random_word(generator: random.Random, strands: int, letters: int) -> list[int]:

@@ -31,6 +31,8 @@ def value(name: str, strands: int, word: Any) -> Any:
         return oracles.component_count(braid)
     if name == "linking-numbers":
         return oracles.linking_numbers(braid)
+    if name == "linking-sums":
+        return oracles.linking_sums(braid)
     if name == "alexander":
         return alexander_by_burau(braid)
     if name == "jones":

@@ -72,6 +72,10 @@ def test_4_checking_nothing_is_no_success():
     assert status_of("malformed", "empty-file") == "unreadable"
     assert verify.main([]) == 2
     assert verify.main(["no such file"]) == 2
+    braid = verify.Braid(1, ())
+    empty = verify.Claim("braidsearch certificate", 1, braid, braid, "different")
+    with pytest.raises(verify.RejectedError, match="nothing is shown to differ"):
+        verify.check_claim(empty, verify.Work())
 
 
 def test_5_an_early_failure_is_not_forgotten():
@@ -154,7 +158,7 @@ def test_a_defect_does_not_pass_for_a_proof(monkeypatch):
     """An error of the verifier's own is reported as rejected, and named as a defect."""
 
     def broken(*_):
-        raise ZeroDivisionError
+        raise LookupError
 
     monkeypatch.setattr(verify, "apply_move", broken)
     report = verify_file(path_of("accepted", "same-trefoil-on-three-strands"))
