@@ -39,6 +39,7 @@ DISTINCTION_FIELDS: Final = (
 VALUE_WIDTHS: Final[dict[str, int]] = {
     "components": 0,
     "linking-numbers": 1,
+    "linking-sums": 1,
     "alexander": 2,
     "jones": 2,
     "homfly": 3,

@@ -7,6 +7,7 @@ from braidsearch.invariants.homfly import homfly_polynomial
 from braidsearch.invariants.jones import jones_polynomial
 from braidsearch.invariants.laurent import format_polynomial, mirror_image, sympy_expression
 from braidsearch.invariants.linking_numbers import pair_linking_numbers
+from braidsearch.invariants.linking_sums import component_linking_sums
 from braidsearch.invariants.signature import link_signature
 from braidsearch.invariants.table import (
     INVARIANTS,
@@ -23,6 +24,7 @@ __all__ = [
     "Value",
     "alexander_polynomial",
     "component_count",
+    "component_linking_sums",
     "compute_invariants",
     "format_polynomial",
     "homfly_polynomial",

@@ -55,8 +55,8 @@ def normalise_units(polynomial: Polynomial) -> Polynomial:
 def mirror_image(name: str, value: Any) -> Any:
     """The value that the named invariant takes on the mirror image of a link with ``value``.
 
-    Jones: t to 1/t. HOMFLY-PT: v to 1/v and z to -z. Signature and linking numbers change sign;
-    components, Alexander polynomial and determinant stay.
+    Jones: t to 1/t. HOMFLY-PT: v to 1/v and z to -z. Signature, linking numbers and their
+    sums change sign; components, Alexander polynomial and determinant stay.
     """
     if name == "jones":
         return sorted([-exponent, coefficient] for exponent, coefficient in value)
@@ -64,7 +64,7 @@ def mirror_image(name: str, value: Any) -> Any:
         return sorted([-v, z, -c if z % 2 else c] for v, z, c in value)
     if name == "signature":
         return -value
-    if name == "linking-numbers":
+    if name in ("linking-numbers", "linking-sums"):
         return sorted(-number for number in value)
     if name in ("components", "alexander", "determinant"):
         return value

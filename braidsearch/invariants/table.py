@@ -12,6 +12,7 @@ from braidsearch.invariants import (
     homfly,
     jones,
     linking_numbers,
+    linking_sums,
     signature,
 )
 from braidsearch.words.braid import Braid
@@ -54,6 +55,12 @@ INVARIANTS: tuple[Invariant, ...] = (
     _from_module("components", "number of components", components, components.component_count),
     _from_module(
         "linking-numbers", "linking numbers", linking_numbers, linking_numbers.pair_linking_numbers
+    ),
+    _from_module(
+        "linking-sums",
+        "sums of linking numbers",
+        linking_sums,
+        linking_sums.component_linking_sums,
     ),
     _from_module(
         "determinant", "determinant", determinant, determinant.link_determinant, certifies=False

@@ -82,6 +82,19 @@ def linking_numbers(braid: Braid) -> list[int]:
     return sorted(numbers)
 
 
+def linking_sums(braid: Braid) -> list[int]:
+    """For each component, the signs of the crossings where it goes over another one, added."""
+    paths = strand_paths(braid)
+    owner_under = {
+        place: number for number, path in enumerate(paths) for place, over in path if not over
+    }
+    signs = [1 if letter > 0 else -1 for letter in braid.word]
+    return sorted(
+        sum(signs[place] for place, over in path if over and owner_under[place] != number)
+        for number, path in enumerate(paths)
+    )
+
+
 def jones_by_states(braid: Braid) -> Polynomial:
     """The Kauffman bracket as a sum over all 2^N smoothings (Kauffman, 1987), loops counted."""
     bracket: Counter[int] = Counter()

@@ -11,6 +11,7 @@ from tests.strategies import braids
 ORACLES = {
     "components": oracles.component_count,
     "linking-numbers": oracles.linking_numbers,
+    "linking-sums": oracles.linking_sums,
     "determinant": oracles.determinant_by_seifert,
     "signature": oracles.signature_by_seifert,
     "alexander": oracles.alexander_by_seifert,
@@ -27,7 +28,9 @@ def test_small_words(name, braid):
     assert invariant_named(name).compute(braid) == ORACLES[name](braid)
 
 
-@pytest.mark.parametrize("name", ["components", "linking-numbers", "determinant", "signature"])
+@pytest.mark.parametrize(
+    "name", ["components", "linking-numbers", "linking-sums", "determinant", "signature"]
+)
 @settings(max_examples=60)
 @given(braid=braids(max_strands=7, max_letters=30))
 def test_numbers_of_longer_words(name, braid):

@@ -101,6 +101,8 @@ def test_split_unions(left, right):
     zeros = [0] * (left.components * right.components)
     numbers = value("linking-numbers", left) + value("linking-numbers", right) + zeros
     assert value("linking-numbers", union) == sorted(numbers)
+    sums = value("linking-sums", left) + value("linking-sums", right)
+    assert value("linking-sums", union) == sorted(sums)
 
 
 @pytest.mark.parametrize("strands", [1, 2, 3, 7, 20])
