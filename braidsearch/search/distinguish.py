@@ -6,12 +6,13 @@ from dataclasses import dataclass, field
 
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.errors import CapacityError
-from braidsearch.invariants.table import Invariant, ladder
+from braidsearch.invariants.table import NEGLIGIBLE_SECONDS, Invariant, ladder
 from braidsearch.moves import Move
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget
 from braidsearch.search.proof import checked_chain
 from braidsearch.search.route import Route
+from braidsearch.search.verification_cost import verification_seconds
 from braidsearch.words import Braid, apply_symmetry
 
 
@@ -37,11 +38,9 @@ class Distinguisher:
         """
         left = left_route.current
         image = apply_symmetry(right_route.current, self.symmetry)
-        for invariant in ladder(left, image):
-            if invariant.name in self.agreed or not invariant.certifies:
-                continue
-            cost = invariant.estimated_cost(left) + invariant.estimated_cost(image)
-            if cost > min(dearest, budget.seconds_left):
+        bound = min(dearest, budget.seconds_left)
+        for cost, invariant in _ladder_with_verification(left, image):
+            if invariant.name in self.agreed or cost > bound:
                 continue
             found = self._compare(invariant, left_route, right_route, image)
             if found is not None:
@@ -69,6 +68,21 @@ class Distinguisher:
         )
         claim = Certificate.different(self.left, self.right, [found])
         return found if judge(claim).valid else None
+
+
+def _ladder_with_verification(left: Braid, right: Braid) -> list[tuple[float, Invariant]]:
+    """The invariants with what they cost, in seconds, the verifier's share included."""
+    costs = [
+        (
+            sum(
+                invariant.estimated_cost(braid) + verification_seconds(invariant.name, braid)
+                for braid in (left, right)
+            ),
+            invariant,
+        )
+        for invariant in ladder(left, right)
+    ]
+    return sorted(costs, key=lambda pair: max(pair[0], NEGLIGIBLE_SECONDS))
 
 
 def _proven_moves(route: Route) -> list[Move]:

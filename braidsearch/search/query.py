@@ -6,22 +6,23 @@ from typing import TYPE_CHECKING, Any
 
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.invariants.table import invariant_named
-from braidsearch.moves import Conjugate, Move
+from braidsearch.moves import Move
 from braidsearch.normal_form.conjugacy import find_conjugator
 from braidsearch.search.distinguish import Distinguisher
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending
 from braidsearch.search.proof import checked_chain
 from braidsearch.search.route import Route
-from braidsearch.search.simplify import simplified
+from braidsearch.search.simplify import greedy_route, simplified
 from braidsearch.search.verdict import Verdict
-from braidsearch.words import SYMMETRIES, Braid, apply_symmetry, cyclic_reduce
+from braidsearch.words import SYMMETRIES, Braid, apply_symmetry
 from braidsearch.words.reduction import find_rotation
 
 if TYPE_CHECKING:
     from braidsearch.search.meet import Meeting
 
 CHEAP_SECONDS = 0.05
+CHEAP_SECONDS_A_LETTER = 1e-4  # long words take as long to simplify
 FAIR_SECONDS = 1.0
 DEAR_SECONDS = 60.0
 _FIRST_SHARE = 0.3
@@ -38,6 +39,7 @@ class Query:
         self.distinguishers = {name: Distinguisher(left, right, name) for name in SYMMETRIES}
         self.distinctions: dict[str, Distinction] = {}
         self.meetings: dict[str, Meeting] = {}
+        self.greedy: dict[str | None, Route] = {}
         self.routes: dict[str | None, Route] = {}
         self.tried: list[str] = []
         self.ending = Ending.NOT_SEARCHED
@@ -45,7 +47,8 @@ class Query:
     def answer(self) -> Verdict:
         """The stages in order of cost; the first that settles the question ends it."""
         plain = Route(self.left), Route(self.right)
-        if self._distinguish(*plain, CHEAP_SECONDS):
+        letters = len(self.left) + len(self.right)
+        if self._distinguish(*plain, CHEAP_SECONDS + letters * CHEAP_SECONDS_A_LETTER):
             return self._different()
         rotated = self._compare_rotations()
         if rotated is not None:
@@ -65,12 +68,18 @@ class Query:
         """The symmetries that no invariant has excluded yet, in the order asked."""
         return [name for name in self.asked if name not in self.distinctions]
 
-    def _route(self, symmetry: str | None) -> Route:
-        """The simplified left braid (None), or image of the right one, made when first needed."""
-        if symmetry not in self.routes:
-            self.budget.tell(0, "simplifying")
+    def _greedy(self, symmetry: str | None) -> Route:
+        """The left braid (None), or an image of the right one, with visible reductions made."""
+        if symmetry not in self.greedy:
             braid = self.left if symmetry is None else apply_symmetry(self.right, symmetry)
-            self.routes[symmetry] = simplified(braid, self.budget)
+            self.greedy[symmetry] = greedy_route(braid, self.budget)
+        return self.greedy[symmetry]
+
+    def _route(self, symmetry: str | None) -> Route:
+        """The same simplified as far as possible, made when first needed."""
+        if symmetry not in self.routes:
+            self.budget.tell(self.left.strands, "simplifying")
+            self.routes[symmetry] = simplified(self._greedy(symmetry), self.budget)
         return self.routes[symmetry]
 
     def _distinguish(self, left: Route, right: Route, dearest: float) -> bool:
@@ -82,16 +91,14 @@ class Query:
         return not self.open_symmetries()
 
     def _compare_rotations(self) -> Verdict | None:
-        """Whether the words, cyclically reduced, are rotations of each other: seen at once."""
-        reduced, by = cyclic_reduce(self.left)
+        """Whether the reduced words are rotations of each other, which is seen at once."""
+        left = self._greedy(None)
         for symmetry in self.open_symmetries():
-            image = apply_symmetry(self.right, symmetry)
-            other, back = cyclic_reduce(image)
-            shift = find_rotation(reduced, other)
+            right = self._greedy(symmetry)
+            shift = find_rotation(left.current, right.current)
             if shift is not None:
-                inverse = tuple(-letter for letter in reversed(back))
-                step = Conjugate((*by, *reduced.word[:shift], *inverse), image.word)
-                return self._same([step], symmetry)
+                middle = left.conjugated(left.current.word[:shift], right.current)
+                return self._same([*middle.moves, *right.reversed_moves()], symmetry)
         return None
 
     def _search_directly(self) -> Verdict | None:

@@ -17,11 +17,15 @@ _WALK_STRANDS, _WALK_LETTERS = 5, 40  # from either of them on a walk comes firs
 _SEED = 1
 
 
-def simplified(braid: Braid, budget: Budget) -> Route:
-    """The route to the handiest braid at hand: by greed, but for large braids by a walk first."""
-    route = Route(braid)
+def greedy_route(braid: Braid, budget: Budget) -> Route:
+    """The route by visible reductions and destabilizations alone, which takes little time."""
+    return _greedy(Route(braid), budget, 0)
+
+
+def simplified(route: Route, budget: Budget) -> Route:
+    """A greedy route continued to the handiest braid at hand: for large braids by a walk first."""
+    braid = route.current
     if braid.strands >= _WALK_STRANDS or len(braid) >= _WALK_LETTERS:
-        route = _greedy(route, budget, 0)
         from braidsearch.search.walks import cooled_route  # noqa: PLC0415 - loads a compiler
 
         route = cooled_route(route, _SEED, budget.is_out_of_time)

@@ -16,7 +16,7 @@ from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending, Progress, SearchLimits
 from braidsearch.search.proof import checked_chain
 from braidsearch.search.proposals import iter_words
-from braidsearch.search.simplify import simplified
+from braidsearch.search.simplify import greedy_route, simplified
 from braidsearch.words import Braid
 
 _PATIENCE = 400  # nodes without progress after which fewer letters are given up
@@ -86,7 +86,7 @@ class _Tightener:
     def __init__(self, braid: Braid, budget: Budget) -> None:
         self.budget = budget
         self.start = braid
-        route = simplified(braid, budget)
+        route = simplified(greedy_route(braid, budget), budget)
         self.explorer = Explorer(budget, route.current.strands)
         self.side: Side = self.explorer.begin(route)
         self.lower_bound = strands_lower_bound(route.current)
