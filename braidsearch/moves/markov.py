@@ -55,10 +55,9 @@ def apply_move(current: Braid, move: Move) -> Braid:
     closures of both are the same oriented link. Raises InputError for a false step, CapacityError
     for a word that a certificate cannot hold.
     """
-    if len(move.word) > MAX_LETTERS:
-        raise CapacityError(
-            f"a move to {len(move.word)} letters: at most {MAX_LETTERS} are written"
-        )
+    longest = max(len(move.word), len(move.by) if isinstance(move, Conjugate) else 0)
+    if longest > MAX_LETTERS:
+        raise CapacityError(f"a move with {longest} letters: expected {MAX_LETTERS} at most")
     if isinstance(move, Rewrite):
         return _apply_conjugate(current, (), move.word, "rewrite")
     if isinstance(move, Conjugate):

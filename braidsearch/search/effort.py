@@ -3,6 +3,7 @@
 from braidsearch.words import Braid
 
 SUMMIT_CAP = 200
+MOST_TURNED = 40  # strands up to which a proof may turn a braid over: the half twist grows fast
 _LARGEST_SUMMIT = 800  # strands times letters up to which summits are walked
 
 
@@ -12,4 +13,5 @@ def summit_cap(braid: Braid) -> int:
     Large braids are named by the end of their cyclic sliding alone: two names may then stand for
     one class, which costs a search some luck and a proof nothing.
     """
-    return SUMMIT_CAP if len(braid) * braid.strands <= _LARGEST_SUMMIT else 0
+    is_small = braid.strands <= MOST_TURNED and len(braid) * braid.strands <= _LARGEST_SUMMIT
+    return SUMMIT_CAP if is_small else 0

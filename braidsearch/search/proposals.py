@@ -7,6 +7,7 @@ from collections.abc import Iterator
 from braidsearch.moves import MoveChain, exchange
 from braidsearch.normal_form.conjugacy import iter_summit
 from braidsearch.normal_form.conjugation import ShouldStop, never
+from braidsearch.search.effort import MOST_TURNED
 from braidsearch.words import Braid
 from braidsearch.words.half_twist import flip_letters, half_twist
 from braidsearch.words.handles import reduce_handles, reduce_handles_turned
@@ -22,14 +23,20 @@ def iter_words(
     Every member of the ultra summit set, up to ``cap``, is written in its normal form and with its
     handles reduced from either side; then all of that turned over by the half twist.
     """
-    turn = half_twist(braid.strands)
+    turns = turnings(braid)
     seen: set[Letters] = set()
     for member, by in iter_summit(braid, cap, should_stop):
         for word in _spellings(member):
             if word not in seen:
                 seen.add(word)
                 yield by, word
-                yield by + turn, flip_letters(word, braid.strands)
+                for turn in turns:
+                    yield by + turn, flip_letters(word, braid.strands)
+
+
+def turnings(braid: Braid) -> list[Letters]:
+    """The half twist by which to turn a braid over, unless it has too many strands for that."""
+    return [half_twist(braid.strands)] if braid.strands <= MOST_TURNED else []
 
 
 def _spellings(member: Braid) -> list[Letters]:

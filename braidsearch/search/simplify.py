@@ -4,10 +4,10 @@ from __future__ import annotations
 
 from braidsearch.moves import MoveChain
 from braidsearch.search.limits import Budget
-from braidsearch.search.proposals import draft_destabilization, iter_words
+from braidsearch.search.proposals import draft_destabilization, iter_words, turnings
 from braidsearch.search.route import Route, Stretch
 from braidsearch.words import Braid, cyclic_reduce
-from braidsearch.words.half_twist import flip_letters, half_twist
+from braidsearch.words.half_twist import flip_letters
 from braidsearch.words.handles import reduce_handles, reduce_handles_turned
 
 _SUMMIT_CAP = 100
@@ -73,8 +73,8 @@ def _without_handles(braid: Braid) -> Braid:
 
 def _destabilize_once(chain: MoveChain, budget: Budget, summit_cap: int) -> bool:
     braid = chain.current
-    turned = half_twist(braid.strands), flip_letters(braid.word, braid.strands)
-    for by, word in (((), braid.word), turned):
+    turned = [(turn, flip_letters(braid.word, braid.strands)) for turn in turnings(braid)]
+    for by, word in [((), braid.word), *turned]:
         if _take(chain, draft_destabilization(braid, by, word)):
             return True
     if len(braid) > _LONGEST_SUMMIT or not summit_cap or budget.is_out_of_time():
