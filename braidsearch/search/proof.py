@@ -11,8 +11,10 @@ from braidsearch.normal_form.conjugators import short_conjugator
 from braidsearch.search.visits import visit
 from braidsearch.words import Braid
 from braidsearch.words.handles import reduce_handles
+from braidsearch.words.reduction import free_reduce_letters
 
 _LONGEST_SHORTENED = 400  # moves up to which a chain is searched for detours
+_LONGEST_HANDLES = 1_500  # letters up to which handles are worth reducing
 _LARGEST_SPELLING = 5_000  # letters times strands up to which a normal form is worth its time
 
 
@@ -54,7 +56,9 @@ def _one_move(current: Braid, by: tuple[int, ...], word: tuple[int, ...]) -> lis
 
 def _shortest_spelling(by: tuple[int, ...], strands: int) -> tuple[int, ...]:
     """A short word that conjugates as ``by`` does, by handles or by the normal form."""
-    reduced = reduce_handles(Braid.trusted(by, strands)).word
+    reduced = tuple(free_reduce_letters(by))
+    if len(reduced) <= _LONGEST_HANDLES:
+        reduced = reduce_handles(Braid.trusted(reduced, strands)).word
     if len(reduced) * strands > _LARGEST_SPELLING:
         return reduced
     return min(reduced, short_conjugator(reduced, strands), key=len)
