@@ -29,6 +29,7 @@ _FIRST_SHARE = 0.3
 _LAST_SHARE = 0.85  # what is left after it looks for a symmetric image
 _DIRECT_CAP = 200
 _LONGEST_GLANCE = 80  # letters up to which a glance at symmetric images takes no notable time
+_MOST_GLANCED = 12  # and strands
 
 
 class Query:
@@ -163,7 +164,8 @@ class Query:
 
     def _glance_at_images(self) -> Certificate | None:
         """A symmetric image that is conjugate after simplification, for small braids only."""
-        if len(self.left) + len(self.right) > _LONGEST_GLANCE:
+        letters, strands = len(self.left) + len(self.right), self.left.strands
+        if letters > _LONGEST_GLANCE or max(strands, self.right.strands) > _MOST_GLANCED:
             return None
         for symmetry in SYMMETRIES:
             if symmetry not in self.asked:
