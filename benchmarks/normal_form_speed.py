@@ -1,6 +1,6 @@
 """How fast normal forms and conjugacy classes are found: single words, batches, long words.
 
-Run: python benchmarks/normal_form_speed.py
+Run: python -m benchmarks.normal_form_speed
 
 Three tables. Batch: 10,000 random words of 40 letters on 5 strands, as one array and one by one in
 the same run, so that the ratio holds on a noisy machine. Long words: one random word on 20
@@ -11,22 +11,22 @@ random word's conjugacy class.
 Measured on two shared cores, CPython 3.11, NumPy 2.4:
 
     10,000 words, 40 letters, 5 strands     ms    us a word
-      as one array                         13.6       1.36
-      one by one                          296.9      29.69
-      ratio: median 21.7, 20.2 to 22.3
+      as one array                         10.3       1.03
+      one by one                          285.1      28.51
+      ratio: median 27.6, 10.8 to 30.2
     one word on 20 strands     seconds   growth exponent
-         625 letters             0.076
-        1250 letters             0.166   1.12
-        2500 letters             0.317   0.93
-        5000 letters             0.683   1.11
-       10000 letters             1.502   1.14
+         625 letters             0.063
+        1250 letters             0.167   1.39
+        2500 letters             0.305   0.87
+        5000 letters             0.715   1.23
+       10000 letters             1.519   1.09
     class of one word          median ms   nine in ten   median size   largest
       10 letters, 3 strands            0.05          0.12             4        16
-      12 letters, 4 strands            0.12          0.23             8        32
-      15 letters, 5 strands            0.28          0.80            12       140
-      20 letters, 6 strands            0.71          2.44            16      1080
-      24 letters, 7 strands            1.95          6.17            19      2004
-      30 letters, 8 strands            3.45         21.47            18      2004
+      12 letters, 4 strands            0.12          0.22             8        32
+      15 letters, 5 strands            0.28          0.78            12       140
+      20 letters, 6 strands            0.69          2.35            16      1080
+      24 letters, 7 strands            1.86          5.60            19      2004
+      30 letters, 8 strands            2.63         19.86            18      2004
 
 The batch does 1.8 million left-weightings, 176 a word, in about 6 ms: two table look-ups and an
 addition each, near the rate at which NumPy gathers from a table in cache (0.5 ns an entry). The
@@ -43,7 +43,7 @@ import numpy as np
 from braidsearch.normal_form import left_normal_form
 from braidsearch.normal_form.batch import left_normal_forms
 from braidsearch.normal_form.conjugacy import conjugacy_class
-from braidsearch.normal_form.simple_elements import simple_elements
+from braidsearch.normal_form.simple_elements import _collection
 from braidsearch.words import Braid
 
 ROUNDS = 5
@@ -90,7 +90,7 @@ def length_table() -> None:
     before = None
     for letters in (625, 1_250, 2_500, 5_000, 10_000):
         braid = random_braid(generator, 20, letters)
-        simple_elements.cache_clear()  # each length starts without remembered products
+        _collection.cache_clear()  # each length starts without remembered products
         taken = seconds(lambda b=braid: left_normal_form(b))
         growth = "" if before is None else f"{math.log2(taken / before):.2f}"
         print(f"  {letters:6d} letters          {taken:8.3f}   {growth}")

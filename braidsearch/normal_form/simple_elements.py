@@ -6,7 +6,9 @@ from functools import lru_cache
 from typing import Any
 
 Permutation = tuple[int, ...]
-_MEMO_LIMIT = 1_000_000
+_MEMO_LIMIT = 250_000  # answers of one operation that are remembered
+_MOST_NAMES = 1 << 19  # elements named in one collection before a fresh one is begun
+_SHIFT = 32  # two names make one key
 
 
 class SimpleElements:
@@ -29,10 +31,10 @@ class SimpleElements:
         self.starts: list[int] = []
         self.finishes: list[int] = []
         self._numbers: dict[Permutation, int] = {}
-        self._pairs: dict[tuple[int, int], tuple[int, int]] = {}
-        self._meets: dict[tuple[int, int], int] = {}
-        self._joins: dict[tuple[int, int], int] = {}
-        self._residues: dict[tuple[int, int], int] = {}
+        self._pairs: dict[int, tuple[int, int]] = {}
+        self._meets: dict[int, int] = {}
+        self._joins: dict[int, int] = {}
+        self._residues: dict[int, int] = {}
         self._complements: dict[int, int] = {}
         self._flips: dict[int, int] = {}
         self._words: dict[int, tuple[int, ...]] = {}
@@ -62,10 +64,11 @@ class SimpleElements:
         """The left-weighted pair with the same product: all that can move left has moved."""
         if not self.starts[right] & ~self.finishes[left]:
             return left, right
-        found = self._pairs.get((left, right))
+        key = left << _SHIFT | right
+        found = self._pairs.get(key)
         if found is None:
             found = self._left_weighted(left, right)
-            _remember(self._pairs, (left, right), found)
+            _remember(self._pairs, key, found)
         return found
 
     def _left_weighted(self, left: int, right: int) -> tuple[int, int]:
@@ -129,7 +132,7 @@ class SimpleElements:
         """The greatest common left divisor."""
         if not self.starts[first] & self.starts[second]:
             return self.identity
-        key = (first, second) if first < second else (second, first)
+        key = first << _SHIFT | second if first < second else second << _SHIFT | first
         found = self._meets.get(key)
         if found is None:
             found = self._common_prefix(self.permutations[first], self.permutations[second])
@@ -138,7 +141,7 @@ class SimpleElements:
 
     def join(self, first: int, second: int) -> int:
         """The least common right multiple: delta divided by a common right divisor."""
-        key = (first, second) if first < second else (second, first)
+        key = first << _SHIFT | second if first < second else second << _SHIFT | first
         found = self._joins.get(key)
         if found is None:
             one, other = self.complement(first), self.complement(second)
@@ -151,10 +154,11 @@ class SimpleElements:
         """The least r such that ``element`` divides ``left`` * r."""
         if element == self.identity:
             return element
-        found = self._residues.get((left, element))
+        key = left << _SHIFT | element
+        found = self._residues.get(key)
         if found is None:
             found = self.quotient(left, self.join(left, element))
-            _remember(self._residues, (left, element), found)
+            _remember(self._residues, key, found)
         return found
 
     def _common_prefix(self, first: Permutation, second: Permutation) -> int:
@@ -179,9 +183,20 @@ class SimpleElements:
         return found
 
 
-@lru_cache(maxsize=64)
 def simple_elements(strands: int) -> SimpleElements:
-    """The one shared collection for this number of strands."""
+    """The shared collection for this number of strands; a very large one is begun afresh.
+
+    So names hold within one computation, and are not kept from one to the next.
+    """
+    shared = _collection(strands)
+    if len(shared.permutations) > _MOST_NAMES:
+        _collection.cache_clear()
+        shared = _collection(strands)
+    return shared
+
+
+@lru_cache(maxsize=32)
+def _collection(strands: int) -> SimpleElements:
     return SimpleElements(strands)
 
 
