@@ -6,6 +6,27 @@ The link table of the package ``database-knotinfo`` (C. Livingston, A. H. Moore,
 to 11 crossings) has two columns of braid words; the knot table has rows with two words. Each row
 with two different words is compared as it stands. The rows that stay undecided, and those that
 differ, are written to DIR/published_pairs_open.txt: name, outcome, reason and both words.
+
+Measured on two shared cores, 60 s a row:
+
+    knots: 74
+      same           48   64.86 %
+      different       0    0.00 %
+      undecided      26   35.14 %
+      seconds      median 0.65, nine in ten 2.48, at most 5.31
+      moves        median 47, nine in ten 168, at most 754
+      verification median 0.006, nine in ten 0.030, at most 0.137
+    links: 2703
+      same         2701   99.93 %
+      different       0    0.00 %
+      undecided       2    0.07 %
+      seconds      median 0.10, nine in ten 0.83, at most 9.63
+      moves        median 5, nine in ten 73, at most 919
+      verification median 0.001, nine in ten 0.008, at most 0.177
+
+All 26 knots that stay undecided, and the link L11n369{0,1}, are joined to the reverse: the second
+word is the reverse of the first (the knots are all not invertible). L10n99{0,0,0} was undecided in
+that run; its words are two links, told apart by the sums of linking numbers, added since.
 """
 
 import argparse
