@@ -13,7 +13,7 @@ from braidsearch.words import Braid
 from braidsearch.words.handles import reduce_handles
 from braidsearch.words.reduction import free_reduce_letters
 
-_LONGEST_SHORTENED = 400  # moves up to which a chain is searched for detours
+_LONGEST_SHORTENED = 3_000  # moves up to which a chain is searched for detours
 _LONGEST_HANDLES = 1_500  # letters up to which handles are worth reducing
 _LARGEST_SPELLING = 5_000  # letters times strands up to which a normal form is worth its time
 
