@@ -12,5 +12,9 @@ class InputError(BraidsearchError, ValueError):
     """
 
 
+class OutOfTimeError(BraidsearchError):
+    """A computation that was asked to mind the time has been told to stop before its end."""
+
+
 class CapacityError(BraidsearchError):
     """The input is well formed, but larger than the named method is built for."""

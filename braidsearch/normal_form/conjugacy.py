@@ -5,17 +5,14 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 
-from braidsearch.normal_form.conjugation import (
-    ShouldStop,
-    conjugator_word,
-    never,
-    slide_to_circuit,
-)
+from braidsearch.normal_form.conjugation import conjugator_word, slide_to_circuit
 from braidsearch.normal_form.left_normal_form import (
     Element,
+    ShouldStop,
     are_equal,
     element_of_word,
     element_word,
+    never,
 )
 from braidsearch.normal_form.simple_elements import Permutation, SimpleElements, simple_elements
 from braidsearch.normal_form.summit import Summit, ultra_summit_set
@@ -57,7 +54,8 @@ def conjugacy_class(
 ) -> ConjugacyClass:
     """The class of a braid: cyclic sliding, then the ultra summit set up to ``cap`` members.
 
-    ``should_stop`` is asked on the way; once it says so, the class is returned as incomplete.
+    ``should_stop`` is asked on the way; once it says so, the class is returned as incomplete,
+    or, where not even the normal form is found by then, OutOfTimeError is raised.
     """
     elements = simple_elements(braid.strands)
     to_summit, summit = _find_summit(elements, braid, cap, should_stop)
@@ -93,7 +91,7 @@ def find_conjugator(
     """
     if left.strands != right.strands or left.exponent_sum != right.exponent_sum:
         return None
-    if are_equal(left, right):
+    if are_equal(left, right, should_stop):
         return ()
     one, other = (conjugacy_class(braid, cap, should_stop) for braid in (left, right))
     if one.key != other.key:
@@ -104,7 +102,7 @@ def find_conjugator(
 def _find_summit(
     elements: SimpleElements, braid: Braid, cap: int, should_stop: ShouldStop
 ) -> tuple[tuple[int, ...], Summit]:
-    element = element_of_word(elements, braid.word)
+    element = element_of_word(elements, braid.word, should_stop)
     start, to_summit = slide_to_circuit(elements, element, should_stop)
     return to_summit, ultra_summit_set(elements, start, cap, should_stop)
 

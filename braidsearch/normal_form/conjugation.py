@@ -2,21 +2,17 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
-
-from braidsearch.normal_form.left_normal_form import Element, push_left, push_right
+from braidsearch.normal_form.left_normal_form import (
+    Element,
+    ShouldStop,
+    never,
+    push_left,
+    push_right,
+)
 from braidsearch.normal_form.simple_elements import SimpleElements
-
-ShouldStop = Callable[[], bool]
-"""Asked between steps: whether a long walk should end early, with what it has."""
 
 Conjugators = tuple[int, ...]
 """Simple elements by which to conjugate one after the other: their product, left to right."""
-
-
-def never() -> bool:
-    """Walks that are to end by themselves ask this."""
-    return False
 
 
 def conjugate_by_simple(elements: SimpleElements, element: Element, by: int) -> Element:

@@ -2,9 +2,10 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Callable, Iterable, Sequence
 from dataclasses import dataclass
 
+from braidsearch.errors import OutOfTimeError
 from braidsearch.normal_form.simple_elements import (
     Permutation,
     SimpleElements,
@@ -15,8 +16,18 @@ from braidsearch.normal_form.simple_elements import (
 from braidsearch.words import Braid
 from braidsearch.words.reduction import free_reduce_letters
 
+_FACTORS_A_QUESTION = 16
+
+ShouldStop = Callable[[], bool]
+"""Asked between steps: whether a long computation should end before its end."""
+
 Element = tuple[int, tuple[int, ...]]
 """A braid as the inner loops hold it: the infimum, and the names of the simple factors."""
+
+
+def never() -> bool:
+    """Computations that are to end by themselves ask this."""
+    return False
 
 
 @dataclass(frozen=True)
@@ -59,10 +70,11 @@ def left_normal_form(braid: Braid) -> NormalForm:
     return NormalForm(braid.strands, infimum, factors)
 
 
-def are_equal(left: Braid, right: Braid) -> bool:
+def are_equal(left: Braid, right: Braid, should_stop: ShouldStop = never) -> bool:
     """Whether two words are the same element of the braid group on the same strands.
 
-    What both begin and end with, freely reduced, is left out of the comparison.
+    What both begin and end with, freely reduced, is left out of the comparison. Raises
+    OutOfTimeError when ``should_stop`` says so on the way.
     """
     if left.strands != right.strands:
         return False
@@ -72,7 +84,8 @@ def are_equal(left: Braid, right: Braid) -> bool:
     if one == other:
         return True
     elements = simple_elements(left.strands)
-    return element_of_word(elements, one) == element_of_word(elements, other)
+    first = element_of_word(elements, one, should_stop)
+    return first == element_of_word(elements, other, should_stop)
 
 
 def _without_common_ends(one: list[int], other: list[int]) -> tuple[list[int], list[int]]:
@@ -83,12 +96,19 @@ def _without_common_ends(one: list[int], other: list[int]) -> tuple[list[int], l
     return one[start : len(one) - end], other[start : len(other) - end]
 
 
-def element_of_word(elements: SimpleElements, word: Sequence[int]) -> Element:
-    """The normal form of a word, in the names that the inner loops use."""
+def element_of_word(
+    elements: SimpleElements, word: Sequence[int], should_stop: ShouldStop = never
+) -> Element:
+    """The normal form of a word, in the names that the inner loops use.
+
+    Raises OutOfTimeError when ``should_stop`` says so on the way.
+    """
     infimum, sequence = simple_sequence(elements, word)
     factors: list[int] = []
-    for factor in sequence:
+    for place, factor in enumerate(sequence):
         infimum += push_right(elements, factors, factor)
+        if place % _FACTORS_A_QUESTION == 0 and should_stop():
+            raise OutOfTimeError("a normal form was not finished in time")
     return infimum, tuple(factors)
 
 

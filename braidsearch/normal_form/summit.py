@@ -7,14 +7,12 @@ from dataclasses import dataclass, field
 
 from braidsearch.normal_form.conjugation import (
     Conjugators,
-    ShouldStop,
     conjugate_by_simple,
     cycle,
     initial_factor,
     inverse_element,
-    never,
 )
-from braidsearch.normal_form.left_normal_form import Element
+from braidsearch.normal_form.left_normal_form import Element, ShouldStop, never
 from braidsearch.normal_form.simple_elements import SimpleElements
 
 

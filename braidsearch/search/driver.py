@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Sequence
 
-from braidsearch.errors import CapacityError, InputError
+from braidsearch.errors import CapacityError, InputError, OutOfTimeError
 from braidsearch.search.limits import Budget, Ending, Progress, SearchLimits
 from braidsearch.search.query import Query
 from braidsearch.search.verdict import Verdict
@@ -36,5 +36,7 @@ def compare(
         return query.answer()
     except KeyboardInterrupt:
         return query.undecided(Ending.INTERRUPTED)
+    except OutOfTimeError:
+        return query.undecided(Ending.TIME_LIMIT)
     except CapacityError:
         return query.undecided(Ending.TOO_LARGE)

@@ -6,7 +6,7 @@ from collections.abc import Iterator
 
 from braidsearch.moves import MoveChain, exchange
 from braidsearch.normal_form.conjugacy import iter_summit
-from braidsearch.normal_form.conjugation import ShouldStop, never
+from braidsearch.normal_form.left_normal_form import ShouldStop, never
 from braidsearch.search.effort import MOST_TURNED
 from braidsearch.words import Braid
 from braidsearch.words.half_twist import flip_letters, half_twist

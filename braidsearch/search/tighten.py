@@ -7,9 +7,9 @@ from dataclasses import dataclass, field
 from typing import Any
 
 from braidsearch.certificates import Certificate
-from braidsearch.errors import CapacityError
+from braidsearch.errors import CapacityError, OutOfTimeError
 from braidsearch.invariants.table import invariant_named
-from braidsearch.moves import Conjugate
+from braidsearch.moves import Conjugate, Move
 from braidsearch.normal_form.conjugacy import ClassKey
 from braidsearch.search.explorer import Explorer, Side
 from braidsearch.search.gate import judge
@@ -45,15 +45,15 @@ class Tightening:
         return self.lower_bound == self.braid.strands
 
 
-def strands_lower_bound(braid: Braid) -> int | None:
+def strands_lower_bound(braid: Braid, seconds: float = _DEAREST) -> int | None:
     """The least number of strands of any braid for this link, by its HOMFLY-PT polynomial.
 
     Morton, Seifert circles and knot polynomials, 1986; Franks, Williams, Braids and the Jones
     polynomial, 1987: twice (strands - 1) is at least the spread of the exponents of v. None when
-    the polynomial is too costly.
+    the polynomial takes more than so many seconds, by estimate.
     """
     homfly = invariant_named("homfly")
-    if not homfly.is_applicable(braid) or homfly.estimated_cost(braid) > _DEAREST:
+    if not homfly.is_applicable(braid) or homfly.estimated_cost(braid) > seconds:
         return None
     try:
         value = homfly.compute(braid)
@@ -78,23 +78,18 @@ def tighten(
 
 
 class _Tightener:
-    """The search: the side explored, the best word so far, its class, and how it is reached there.
-
-    ``by`` conjugates the representative of the class ``place`` to the best word.
-    """
+    """The search: what has been explored, the best word so far, and the moves that lead to it."""
 
     def __init__(self, braid: Braid, budget: Budget) -> None:
         self.budget = budget
         self.start = braid
-        route = simplified(greedy_route(braid, budget), budget)
-        self.explorer = Explorer(budget, route.current.strands)
-        self.side: Side = self.explorer.begin(route)
-        self.lower_bound = strands_lower_bound(route.current)
-        self.best, self.place = route.current, self.side.start.key
-        self.by = tuple(-letter for letter in reversed(self.side.start.conjugator))
+        self.route = simplified(greedy_route(braid, budget), budget)
+        self.best = self.route.current
+        self.make_moves: Callable[[], list[Move]] = lambda: self.route.moves
+        self.lower_bound = self._bound_of(self.best)
+        self.explorer = Explorer(budget, self.best.strands)
         self.last_progress = 0
         self.looked_at: set[ClassKey] = set()
-        self._look_at(self.place)
 
     def answer(self) -> Tightening:
         """Explore to the end, and prove what was found."""
@@ -102,9 +97,9 @@ class _Tightener:
             ending = self._explore()
         except KeyboardInterrupt:
             ending = Ending.INTERRUPTED
-        moves = self.explorer.moves_to(self.side, self.place)
-        last = Conjugate(self.by, self.best.word)
-        chain = checked_chain(self.start, [*moves, last], self.best)
+        except OutOfTimeError:
+            ending = Ending.TIME_LIMIT
+        chain = checked_chain(self.start, self.make_moves(), self.best)
         certificate = Certificate.same(self.start, self.best, "identity", chain.moves)
         report = judge(certificate)
         if not report.valid:
@@ -116,14 +111,21 @@ class _Tightener:
         }
         return Tightening(self.best, certificate, self.lower_bound, explored)
 
+    def _bound_of(self, braid: Braid) -> int | None:
+        return strands_lower_bound(braid, min(_DEAREST, self.budget.seconds_left))
+
     def _explore(self) -> Ending:
+        if self._is_settled():
+            return Ending.FOUND
+        side = self.explorer.begin(self.route)
+        self._look_at(side, side.start.key)
         while not self._is_settled():
             ending = self.budget.ending()
             if ending is not None:
                 return ending
             self.budget.tell(self.best.strands, f"tightening, {len(self.best)} letters")
-            for key in self.explorer.take_turn(self.side):
-                self._look_at(key)
+            for key in self.explorer.take_turn(side):
+                self._look_at(side, key)
                 if self._is_settled() or self.budget.ending() is not None:
                     break
         return Ending.FOUND
@@ -137,7 +139,7 @@ class _Tightener:
             return True
         return self.budget.nodes - self.last_progress >= _PATIENCE
 
-    def _look_at(self, key: ClassKey) -> None:
+    def _look_at(self, side: Side, key: ClassKey) -> None:
         """Take the shortest word of a class, when it is better than the best one."""
         if key in self.looked_at or key[0] > self.best.strands:
             return
@@ -146,8 +148,10 @@ class _Tightener:
         words = iter_words(representative, _SUMMIT_CAP, self.budget.is_out_of_time)
         by, shortest = min(words, key=lambda found: len(found[1]))
         found = Braid.trusted(shortest, key[0])
-        if (found.strands, len(found)) < (self.best.strands, len(self.best)):
-            self.best, self.place, self.by = found, key, by
-            self.last_progress = self.budget.nodes
-            if self.lower_bound is None:
-                self.lower_bound = strands_lower_bound(found)
+        if (found.strands, len(found)) >= (self.best.strands, len(self.best)):
+            return
+        last = Conjugate(by, shortest)
+        self.best, self.last_progress = found, self.budget.nodes
+        self.make_moves = lambda: [*self.explorer.moves_to(side, key), last]
+        if self.lower_bound is None:
+            self.lower_bound = self._bound_of(found)

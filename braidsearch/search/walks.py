@@ -7,7 +7,7 @@ from collections.abc import Iterator, Sequence
 from braidsearch.arc_walk import Phase, Walk, cooled, find_short, mixed_seed, walk
 from braidsearch.diagrams import ArcMove, ArcPresentation, word_from_arcs
 from braidsearch.diagrams.arc_cuts import presentation_key
-from braidsearch.normal_form.conjugation import ShouldStop, never
+from braidsearch.normal_form.left_normal_form import ShouldStop, never
 from braidsearch.search.route import Route, Stretch
 from braidsearch.search.walk_proofs import walk_moves
 from braidsearch.words import Braid
