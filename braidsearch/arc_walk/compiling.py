@@ -3,16 +3,40 @@
 from __future__ import annotations
 
 import contextlib
-from collections.abc import Callable
+import signal
+import threading
+from collections.abc import Callable, Iterator
+from types import FrameType
 from typing import Any, TypeVar
 
 _Function = TypeVar("_Function", bound=Callable[..., Any])
 
 
+@contextlib.contextmanager
+def interrupts_deferred() -> Iterator[None]:
+    """Hold a keyboard interrupt back until the block ends, and raise it then.
+
+    The compiler calls back into Python from places where an exception is printed and lost.
+    """
+    handler = signal.getsignal(signal.SIGINT)
+    if threading.current_thread() is not threading.main_thread() or not callable(handler):
+        yield
+        return
+    held: list[tuple[int, FrameType | None]] = []
+    signal.signal(signal.SIGINT, lambda number, frame: held.append((number, frame)))
+    try:
+        yield
+    finally:
+        signal.signal(signal.SIGINT, handler)
+    if held:
+        handler(*held[-1])
+
+
 def _load_compiler() -> Callable[..., Any] | None:
     """The compiler's decorator, or None where it is not installed or is switched off."""
     try:
-        from numba import config, njit  # noqa: PLC0415 - optional, and slow to import
+        with interrupts_deferred():
+            from numba import config, njit  # noqa: PLC0415 - optional, and slow to import
     except Exception:
         return None  # an installation that does not fit this machine may fail in any way
     return None if getattr(config, "DISABLE_JIT", False) else njit

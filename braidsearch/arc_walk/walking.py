@@ -105,7 +105,8 @@ def is_compiled() -> bool:
     numbers = np.array([2, 1, 1, 0, 0, 0], dtype=np.int64)
     plan = np.array([1, 0, 0, 0], dtype=np.int64)
     try:
-        kernels.walk(circle, 2, numbers, plan, np.zeros(0, dtype=np.int32))
+        with compiling.interrupts_deferred():
+            kernels.walk(circle, 2, numbers, plan, np.zeros(0, dtype=np.int32))
     except Exception:  # whatever the compiler raises, the plain loops need none of it
         compiling.switch_off()
         importlib.reload(kernels)

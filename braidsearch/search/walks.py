@@ -17,7 +17,8 @@ PresentationKey = tuple[tuple[int, int], ...]
 _HEAT_TRIES = (100, 2_000)
 _HEAT_SPLITS = (1, 5)
 _SETTLING_TRIES = 400
-_EXCHANGE_SHARES = (0.1, 0.3, 1.0)  # few exchanges keep proofs short, many reach further
+_EXCHANGE_SHARES = (0.05, 0.3, 1.0)  # few exchanges keep proofs short, many reach further
+_GENTLE_WALKS = 40  # walks from each class with few exchanges, before all shares are drawn
 _COOLING_TRIES_A_LETTER = 3_000
 
 
@@ -64,7 +65,8 @@ class Walker:
             return self._offer((self._base,), most_strands)
         self._number += 1
         seed = mixed_seed(self._seed, self._number)
-        step = walk(self._base.end, seed, _heat_plan(mixed_seed(seed, 1)))
+        gentle = self._number <= _GENTLE_WALKS
+        step = walk(self._base.end, seed, _heat_plan(mixed_seed(seed, 1), gentle))
         return self._offer((self._base, step), most_strands)
 
     def _offer(self, walks: tuple[Walk, ...], most_strands: int) -> Stretch | None:
@@ -78,12 +80,13 @@ class Walker:
         return walked_stretch(self._braid, walks)
 
 
-def _heat_plan(seed: int) -> tuple[Phase, ...]:
+def _heat_plan(seed: int, gentle: bool) -> tuple[Phase, ...]:
     """A heat and the cooling after it; all their numbers are drawn from the seed."""
     least, most = _HEAT_TRIES
     fewest, largest = _HEAT_SPLITS
     tries = least + seed % (most - least + 1)
     splits = fewest + seed // 1024 % (largest - fewest + 1)
-    exchanges = _EXCHANGE_SHARES[seed // 4096 % len(_EXCHANGE_SHARES)]
+    shares = _EXCHANGE_SHARES[:1] if gentle else _EXCHANGE_SHARES
+    exchanges = shares[seed // 4096 % len(shares)]
     heat = Phase(tries, splits, merges=0.0, exchanges=exchanges)
     return heat, Phase(_SETTLING_TRIES, exchanges=exchanges)

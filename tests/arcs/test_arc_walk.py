@@ -1,5 +1,6 @@
 """The walk: its moves are moves, its counts are right, and its seed decides everything."""
 
+import signal
 import subprocess
 import sys
 from pathlib import Path
@@ -8,7 +9,7 @@ import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from braidsearch.arc_walk import Phase, cool, cooled, find_short, heat, walk
+from braidsearch.arc_walk import Phase, compiling, cool, cooled, find_short, heat, walk
 from braidsearch.diagrams import (
     ArcMoveKind,
     ArcPresentation,
@@ -190,3 +191,19 @@ def test_too_large_presentations_are_refused() -> None:
     """A word with more columns than 16-bit cells can number is refused in words."""
     with pytest.raises(CapacityError):
         cooled(Braid([1] * 16_000), 0)
+
+
+def test_an_interrupt_waits_for_the_compiler():
+    """A keyboard interrupt during compilation is held back, and raised right after it."""
+    reached: list[bool] = []
+    with pytest.raises(KeyboardInterrupt):
+        interrupt_while_deferred(reached)
+    assert reached
+    with pytest.raises(KeyboardInterrupt):
+        signal.raise_signal(signal.SIGINT)
+
+
+def interrupt_while_deferred(reached):
+    with compiling.interrupts_deferred():
+        signal.raise_signal(signal.SIGINT)
+        reached.append(True)
