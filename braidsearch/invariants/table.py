@@ -57,18 +57,18 @@ INVARIANTS: tuple[Invariant, ...] = (
         "linking-numbers", "linking numbers", linking_numbers, linking_numbers.pair_linking_numbers
     ),
     _from_module(
-        "linking-sums",
-        "sums of linking numbers",
-        linking_sums,
-        linking_sums.component_linking_sums,
-    ),
-    _from_module(
         "determinant", "determinant", determinant, determinant.link_determinant, certifies=False
     ),
     _from_module("alexander", "Alexander polynomial", alexander, alexander.alexander_polynomial),
     _from_module("jones", "Jones polynomial", jones, jones.jones_polynomial),
     _from_module("homfly", "HOMFLY-PT polynomial", homfly, homfly.homfly_polynomial),
     _from_module("signature", "signature", signature, signature.link_signature),
+    _from_module(
+        "linking-sums",
+        "sums of linking numbers",
+        linking_sums,
+        linking_sums.component_linking_sums,
+    ),
 )
 """Every invariant, in the order of the ladder where cost does not matter."""
 
@@ -95,8 +95,9 @@ def ladder(left: Braid, right: Braid) -> list[Invariant]:
     """The invariants that may tell these closures apart and certify it, cheapest first.
 
     What takes less than NEGLIGIBLE_SECONDS costs nothing beside the start of a process; among
-    those the order of the table holds, with the signature, whose sign is a matter of convention
-    in the trade, at the end. Invariants that are not applicable to both braids are left out.
+    those the order of the table holds: what every table of links lists comes first, and the
+    signature, whose sign is a matter of convention in the trade, late. Invariants that are not
+    applicable to both braids are left out.
     """
     steps = [
         invariant

@@ -20,7 +20,7 @@ def random_braid(generator: random.Random, strands: int, letters: int) -> Braid:
     return Braid(generator.choices(signed, k=letters) if signed else [], strands)
 
 
-@settings(max_examples=1500)
+@settings(max_examples=3000)
 @given(st.data())
 def test_equality_agrees_with_artins_action(data):
     """Two words are equal by normal forms exactly when they act alike on the free group."""
