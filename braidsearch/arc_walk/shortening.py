@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable, Iterator
 from dataclasses import dataclass, field
 
+from braidsearch.arc_walk.heats import HeatRange
 from braidsearch.arc_walk.walking import Phase, Walk, mixed_seed, walk
 from braidsearch.diagrams import (
     ArcMove,
@@ -18,9 +19,7 @@ from braidsearch.diagrams.arc_cuts import presentation_key, shortest_row_cut, wo
 from braidsearch.words import Braid
 
 COOLING_TRIES_A_COLUMN = 400
-HEAT_TRIES = (100, 600)
-HEAT_SPLITS = (1, 3)
-SETTLING_TRIES = 250
+_HEATS = HeatRange(tries=(100, 600), splits=(1, 3), settling=250)
 LARGEST_POOL = 64
 
 
@@ -109,23 +108,12 @@ def find_short(  # noqa: PLR0913 - each option has its own default
     number = 0
     while spent < tries and pool.strands > braid.components and not should_stop():
         number += 1
-        plan = _heat_plan(mixed_seed(seed, number, 1), exchanges)
+        plan = _HEATS.plan(mixed_seed(seed, number, 1), exchanges)
         _, chosen = pool.walks[mixed_seed(seed, number, 2) % len(pool.walks)]
         step = walk(chosen[-1].end, mixed_seed(seed, number, 3), plan)
         spent += sum(phase.tries for phase in plan)
         pool.offer((*chosen, step))
     return [_result(braid, walks, spent) for _, walks in pool.walks[:keep]]
-
-
-def _heat_plan(seed: int, exchanges: float) -> tuple[Phase, ...]:
-    least, most = HEAT_TRIES
-    fewest, largest = HEAT_SPLITS
-    tries = least + seed % (most - least + 1)
-    splits = fewest + seed // 1024 % (largest - fewest + 1)
-    return (
-        Phase(tries, splits, merges=0.0, exchanges=exchanges),
-        Phase(SETTLING_TRIES, exchanges=exchanges),
-    )
 
 
 def _result(braid: Braid, walks: tuple[Walk, ...], tries: int) -> ShortPresentation:

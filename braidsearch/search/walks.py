@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
 
-from braidsearch.arc_walk import Phase, Walk, cooled, find_short, mixed_seed, walk
+from braidsearch.arc_walk import HeatRange, Phase, Walk, cooled, find_short, mixed_seed, walk
 from braidsearch.diagrams import ArcMove, ArcPresentation, word_from_arcs
 from braidsearch.diagrams.arc_cuts import presentation_key
 from braidsearch.normal_form.left_normal_form import ShouldStop, never
@@ -14,9 +14,7 @@ from braidsearch.words import Braid
 
 PresentationKey = tuple[tuple[int, int], ...]
 
-_HEAT_TRIES = (100, 2_000)
-_HEAT_SPLITS = (1, 5)
-_SETTLING_TRIES = 400
+_HEATS = HeatRange(tries=(100, 2_000), splits=(1, 5), settling=400)
 _EXCHANGE_SHARES = (0.05, 0.3, 1.0)  # few exchanges keep proofs short, many reach further
 _GENTLE_WALKS = 40  # walks from each class with few exchanges, before all shares are drawn
 _COOLING_TRIES_A_LETTER = 3_000
@@ -80,13 +78,7 @@ class Walker:
         return walked_stretch(self._braid, walks)
 
 
-def _heat_plan(seed: int, gentle: bool) -> tuple[Phase, ...]:
+def _heat_plan(seed: int, gentle: bool) -> tuple[Phase, Phase]:
     """A heat and the cooling after it; all their numbers are drawn from the seed."""
-    least, most = _HEAT_TRIES
-    fewest, largest = _HEAT_SPLITS
-    tries = least + seed % (most - least + 1)
-    splits = fewest + seed // 1024 % (largest - fewest + 1)
     shares = _EXCHANGE_SHARES[:1] if gentle else _EXCHANGE_SHARES
-    exchanges = shares[seed // 4096 % len(shares)]
-    heat = Phase(tries, splits, merges=0.0, exchanges=exchanges)
-    return heat, Phase(_SETTLING_TRIES, exchanges=exchanges)
+    return _HEATS.plan(seed, shares[seed // 4096 % len(shares)])
