@@ -13,20 +13,20 @@ Measured on two shared cores, 60 s a row:
       same           48   64.86 %
       different       0    0.00 %
       undecided      26   35.14 %
-      seconds      median 0.65, nine in ten 2.48, at most 5.31
-      moves        median 47, nine in ten 168, at most 754
-      verification median 0.006, nine in ten 0.030, at most 0.137
+      seconds      median 0.62, nine in ten 2.73, at most 9.62
+      moves        median 45, nine in ten 83, at most 223
+      verification median 0.005, nine in ten 0.010, at most 0.025
     links: 2703
       same         2701   99.93 %
-      different       0    0.00 %
-      undecided       2    0.07 %
-      seconds      median 0.10, nine in ten 0.83, at most 9.63
-      moves        median 5, nine in ten 73, at most 919
-      verification median 0.001, nine in ten 0.008, at most 0.177
+      different       1    0.04 %
+      undecided       1    0.04 %
+      seconds      median 0.07, nine in ten 0.52, at most 5.56
+      moves        median 5, nine in ten 55, at most 223
+      verification median 0.001, nine in ten 0.005, at most 0.027
 
 All 26 knots that stay undecided, and the link L11n369{0,1}, are joined to the reverse: the second
-word is the reverse of the first (the knots are all not invertible). L10n99{0,0,0} was undecided in
-that run; its words are two links, told apart by the sums of linking numbers, added since.
+word is the reverse of the first (the table calls all these knots not invertible). The words of
+L10n99{0,0,0} are two links, told apart by the sums of linking numbers.
 """
 
 import argparse
