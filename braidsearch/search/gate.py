@@ -2,12 +2,19 @@
 
 from __future__ import annotations
 
+from functools import lru_cache
+
 from braidsearch.certificates import Certificate, format_certificate
 from braidsearch.verifier import Report, verify_text
 
 
+@lru_cache(maxsize=16)
 def judge(certificate: Certificate) -> Report:
-    """The verifier's report on the certificate as it would stand in a file."""
+    """The verifier's report on the certificate as it would stand in a file.
+
+    A distinction is judged when it is found, and once more with its verdict: mostly that is the
+    same certificate, whose report is remembered.
+    """
     left, right = certificate.left, certificate.right
     return verify_text(
         format_certificate(certificate),

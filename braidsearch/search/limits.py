@@ -16,7 +16,6 @@ class Ending(Enum):
     """How a search ended; only FOUND says anything about the links."""
 
     FOUND = "found"
-    EXHAUSTED = "exhausted"
     NODE_LIMIT = "node limit"
     TIME_LIMIT = "time limit"
     INTERRUPTED = "interrupted"

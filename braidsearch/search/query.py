@@ -9,6 +9,7 @@ from braidsearch.invariants.table import invariant_named
 from braidsearch.moves import Move
 from braidsearch.normal_form.conjugacy import find_conjugator
 from braidsearch.search.distinguish import Distinguisher
+from braidsearch.search.effort import SUMMIT_CAP
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending
 from braidsearch.search.proof import checked_chain
@@ -27,7 +28,6 @@ FAIR_SECONDS = 1.0
 DEAR_SECONDS = 60.0
 _FIRST_SHARE = 0.3
 _LAST_SHARE = 0.85  # what is left after it looks for a symmetric image
-_DIRECT_CAP = 200
 _LONGEST_GLANCE = 80  # letters up to which a glance at symmetric images takes no notable time
 _MOST_GLANCED = 12  # and strands
 
@@ -113,7 +113,7 @@ class Query:
     def _direct_moves(self, symmetry: str) -> list[Move] | None:
         left, right = self._route(None), self._route(symmetry)
         stop = self.budget.is_out_of_time
-        by = find_conjugator(left.current, right.current, _DIRECT_CAP, stop)
+        by = find_conjugator(left.current, right.current, SUMMIT_CAP, stop)
         if by is None:
             return None
         middle = left.conjugated(by, right.current)

@@ -11,6 +11,7 @@ from braidsearch.errors import CapacityError, OutOfTimeError
 from braidsearch.invariants.table import invariant_named
 from braidsearch.moves import Conjugate, Move
 from braidsearch.normal_form.conjugacy import ClassKey
+from braidsearch.search.effort import SUMMIT_CAP
 from braidsearch.search.explorer import Explorer, Side
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending, Progress, SearchLimits
@@ -20,7 +21,6 @@ from braidsearch.search.simplify import greedy_route, simplified
 from braidsearch.words import Braid
 
 _PATIENCE = 400  # nodes without progress after which fewer letters are given up
-_SUMMIT_CAP = 200
 _DEAREST = 20.0
 
 
@@ -145,7 +145,7 @@ class _Tightener:
             return
         self.looked_at.add(key)
         representative = self.explorer.graph.representative(key)
-        words = iter_words(representative, _SUMMIT_CAP, self.budget.is_out_of_time)
+        words = iter_words(representative, SUMMIT_CAP, self.budget.is_out_of_time)
         by, shortest = min(words, key=lambda found: len(found[1]))
         found = Braid.trusted(shortest, key[0])
         if (found.strands, len(found)) >= (self.best.strands, len(self.best)):
