@@ -15,7 +15,7 @@ generators, 2003) whose state stays below 2^62: the same walk from the same seed
 
 from typing import Any
 
-from braidsearch.arc_walk.compiling import compiled
+from braidsearch.compiling import compiled
 
 Cells = Any  # an array of integers for the compiled loops, a list of them for the plain ones
 

@@ -10,7 +10,8 @@ from typing import Any
 
 import numpy as np
 
-from braidsearch.arc_walk import compiling, kernels
+from braidsearch import compiling
+from braidsearch.arc_walk import kernels
 from braidsearch.diagrams import ArcMove, ArcMoveKind, ArcPresentation
 from braidsearch.errors import CapacityError
 

@@ -9,7 +9,8 @@ import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from braidsearch.arc_walk import Phase, compiling, cool, cooled, find_short, heat, walk
+from braidsearch import compiling
+from braidsearch.arc_walk import Phase, cool, cooled, find_short, heat, walk
 from braidsearch.diagrams import (
     ArcMoveKind,
     ArcPresentation,
