@@ -1,0 +1,17 @@
+"""Colourings of links by conjugacy classes of finite groups: counted with their longitudes."""
+
+from braidsearch.invariants.colourings.colours import Colours
+from braidsearch.invariants.colourings.counting import (
+    count_colourings,
+    estimated_cost,
+    is_applicable,
+    verification_seconds,
+)
+
+__all__ = [
+    "Colours",
+    "count_colourings",
+    "estimated_cost",
+    "is_applicable",
+    "verification_seconds",
+]

@@ -1,0 +1,238 @@
+"""Which arcs are given colours, in which order, so that few colours determine all others.
+
+At a crossing y = o^-1 x o the over arc and one arc below determine the other one. The two arcs
+below do not determine the over arc, but leave one colour for it on average: over a class of N
+elements there are N^2 triples and N^2 pairs (x, y). So any two arcs give the third, and few
+arcs take their colours from nowhere, the seeds: for most diagrams of few crossings two.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass, field
+from enum import IntEnum
+from functools import lru_cache
+
+from braidsearch.invariants.colourings.arcs import ArcDiagram, Crossing, arc_diagram
+from braidsearch.words.braid import Braid
+
+
+class StepKind(IntEnum):
+    """What a step does with the arcs of its crossing.
+
+    FIRST gives the over arc the meridian of a class, SECOND a colour up to the centraliser of
+    the first, SEED any colour. CHOOSE gives it each colour that takes the arcs below into each
+    other. FORWARD finds y, BACKWARD finds x, CHECK compares, COMPLETE has all arcs coloured.
+    """
+
+    FIRST = 0
+    SECOND = 1
+    SEED = 2
+    CHOOSE = 3
+    FORWARD = 4
+    BACKWARD = 5
+    CHECK = 6
+    COMPLETE = 7
+
+
+@dataclass(frozen=True)
+class Step:
+    """A step at the crossing (over, before, after); seeds use ``over``, SECOND the first's arc."""
+
+    kind: StepKind
+    over: int = 0
+    before: int = 0
+    after: int = 0
+
+
+@dataclass(frozen=True)
+class Plan:
+    """The steps that colour all arcs of a diagram and check each crossing."""
+
+    diagram: ArcDiagram
+    steps: tuple[Step, ...]
+
+    @property
+    def seeds(self) -> int:
+        """The number of arcs that take their colours from nowhere."""
+        return sum(step.kind <= StepKind.SEED for step in self.steps)
+
+    def iter_widths(self, size: int, centraliser: int, classes: int = 1) -> Iterator[float]:
+        """How many partial colourings to expect at each step.
+
+        Seeds multiply, choices leave as many as they find, and a check is passed by one in
+        ``size``; trivial colourings pass everywhere.
+        """
+        width = 1.0
+        for step in self.steps:
+            if step.kind == StepKind.FIRST:
+                width *= classes
+            elif step.kind == StepKind.SECOND:
+                width *= 1 + size / centraliser
+            elif step.kind == StepKind.SEED:
+                width *= size
+            elif step.kind == StepKind.CHECK:
+                width = max(width / size, 1.0)
+            yield width
+
+
+_NOMINAL_SIZE, _NOMINAL_CENTRALISER = 200, 10
+_MOST_WORK = 20_000
+
+
+@lru_cache(maxsize=256)
+def colouring_plan(braid: Braid, may_choose: bool = True) -> Plan:
+    """A plan with few seeds for the closure; without ``may_choose`` it takes no CHOOSE step.
+
+    Each crossing is tried as the start, as many as a bound on the work allows; seeds beyond it
+    are chosen one by one, each so that it determines most.
+    """
+    diagram = arc_diagram(braid)
+    starts = range(len(diagram.crossings))
+    most = max(4, _MOST_WORK // (1 + len(starts) ** 2))
+    plans = [
+        _planned(diagram, start, may_choose) for start in starts[:: 1 + len(starts) // (most + 1)]
+    ]
+    return min(plans, key=_nominal_cost, default=_planned(diagram, None, may_choose))
+
+
+def _nominal_cost(plan: Plan) -> float:
+    return sum(plan.iter_widths(_NOMINAL_SIZE, _NOMINAL_CENTRALISER))
+
+
+@dataclass
+class _Progress:
+    """The arcs that are coloured so far, the crossings that are used up, and the steps."""
+
+    diagram: ArcDiagram
+    around: Sequence[Sequence[int]]
+    known: list[bool]
+    used: list[bool]
+    steps: list[Step] = field(default_factory=list)
+
+    def copy(self) -> _Progress:
+        """An independent copy, to try what a step leads to."""
+        return _Progress(self.diagram, self.around, self.known[:], self.used[:], self.steps[:])
+
+    def take(self, step: Step, arc: int) -> None:
+        """Give ``arc`` its colour by a step, and then all that follows from it."""
+        self.steps.append(step)
+        self.known[arc] = True
+        waiting = [arc]
+        while waiting:
+            arc = waiting.pop()
+            for number in self.around[arc]:
+                if not self.used[number]:
+                    self._conclude(number, waiting)
+
+    def _conclude(self, number: int, waiting: list[int]) -> None:
+        crossing = self.diagram.crossings[number]
+        _, before, after = crossing
+        known_over, known_before, known_after = (self.known[arc] for arc in crossing)
+        if not known_over or not (known_before or known_after):
+            return
+        self.used[number] = True
+        if known_before and known_after:
+            self.steps.append(Step(StepKind.CHECK, *crossing))
+            return
+        kind, new = (StepKind.FORWARD, after) if known_before else (StepKind.BACKWARD, before)
+        self.steps.append(Step(kind, *crossing))
+        self.known[new] = True
+        waiting.append(new)
+
+    def merit(self) -> tuple[int, int]:
+        """Checks made and arcs known: what makes one way better than another."""
+        checks = sum(step.kind == StepKind.CHECK for step in self.steps)
+        return checks, sum(self.known)
+
+
+def _planned(diagram: ArcDiagram, start: int | None, may_choose: bool) -> Plan:
+    around: list[list[int]] = [[] for _ in range(diagram.arcs)]
+    for number, crossing in enumerate(diagram.crossings):
+        for arc in dict.fromkeys(crossing):
+            around[arc].append(number)
+    progress = _Progress(diagram, around, [False] * diagram.arcs, [False] * len(diagram.crossings))
+    first = 0 if start is None else diagram.crossings[start][0]
+    progress.take(Step(StepKind.FIRST, first), first)
+    if start is not None:
+        _seed(progress, first, diagram.crossings[start][1])
+    while True:
+        if may_choose:
+            _choose_all(progress)
+        if all(progress.known):
+            break
+        _seed(progress, first, _best_seed(progress, may_choose))
+    return Plan(diagram, (*progress.steps, Step(StepKind.COMPLETE)))
+
+
+def _seed(progress: _Progress, first: int, arc: int) -> None:
+    if progress.known[arc]:
+        return
+    seeded = any(step.kind == StepKind.SECOND for step in progress.steps)
+    kind = StepKind.SEED if seeded else StepKind.SECOND
+    progress.take(Step(kind, arc, first, first), arc)
+
+
+def _choose_all(progress: _Progress) -> None:
+    """Find over arcs from the arcs below them while there are any, the most telling one first."""
+    while True:
+        open_crossings = list(_iter_choices(progress))
+        if not open_crossings:
+            return
+        if len(open_crossings) > 1:
+            crossing = max(open_crossings, key=lambda crossing: _merit_of(progress, crossing))
+        else:
+            crossing = open_crossings[0]
+        _choose(progress, crossing)
+
+
+def _iter_choices(progress: _Progress) -> Iterator[Crossing]:
+    for crossing in progress.diagram.crossings:
+        over, before, after = crossing
+        if progress.known[before] and progress.known[after] and not progress.known[over]:
+            yield crossing
+
+
+def _choose(progress: _Progress, crossing: Crossing) -> None:
+    # The crossing of the choice holds by the choice, so it is used up before what follows.
+    progress.used[progress.diagram.crossings.index(crossing)] = True
+    progress.take(Step(StepKind.CHOOSE, *crossing), crossing[0])
+
+
+def _merit_of(progress: _Progress, crossing: Crossing) -> tuple[int, int]:
+    trial = progress.copy()
+    _choose(trial, crossing)
+    return trial.merit()
+
+
+def _best_seed(progress: _Progress, may_choose: bool) -> int:
+    """The arc that determines most; it meets a known arc at a crossing, or nothing follows."""
+    known = progress.known
+    meeting = dict.fromkeys(
+        arc
+        for crossing in progress.diagram.crossings
+        if any(known[arc] for arc in crossing)
+        for arc in crossing
+        if not known[arc]
+    )
+    if not meeting:
+        return _unmet_arc(progress)
+
+    def merit(arc: int) -> tuple[int, int]:
+        trial = progress.copy()
+        trial.take(Step(StepKind.SEED, arc), arc)
+        if may_choose:
+            for crossing in _iter_choices(trial):
+                if not trial.known[crossing[0]]:
+                    _choose(trial, crossing)
+        return trial.merit()
+
+    return max(meeting, key=merit)
+
+
+def _unmet_arc(progress: _Progress) -> int:
+    """An arc of a part of the diagram that no known arc meets: one that goes over, if any."""
+    for over, _, _ in progress.diagram.crossings:
+        if not progress.known[over]:
+            return over
+    return progress.known.index(False)
