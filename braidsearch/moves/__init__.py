@@ -2,6 +2,7 @@
 
 from braidsearch.moves.chain import MoveChain
 from braidsearch.moves.exchange import exchange
+from braidsearch.moves.flype import flype, flype_word, power
 from braidsearch.moves.markov import (
     Conjugate,
     Destabilize,
@@ -21,5 +22,8 @@ __all__ = [
     "Stabilize",
     "apply_move",
     "exchange",
+    "flype",
+    "flype_word",
+    "power",
     "reversed_move",
 ]

@@ -17,6 +17,7 @@ LAYERS: tuple[frozenset[str], ...] = (
     frozenset({"ledger", "drawing"}),
     frozenset({"search"}),
     frozenset({"certificates", "arc_walk"}),
+    frozenset({"three_braids"}),
     frozenset({"invariants", "moves"}),
     frozenset({"normal_form"}),
     frozenset({"diagrams"}),
