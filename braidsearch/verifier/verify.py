@@ -16,10 +16,12 @@ import os
 import re
 import sys
 from bisect import bisect_left
-from collections.abc import Callable, Iterable, Sequence
+from collections import Counter
+from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 from fractions import Fraction
-from math import comb, factorial
+from itertools import combinations, pairwise
+from math import comb, factorial, gcd, isqrt
 from typing import Any, NamedTuple, NoReturn
 
 MAX_FILE_BYTES = 16_000_000
@@ -29,6 +31,10 @@ MAX_MOVES = 100_000  # in one list of moves
 MAX_DIGITS = 4_000  # in one integer
 MAX_WORK = 500_000_000  # elementary steps for one certificate, about a tenth of a microsecond each
 MAX_STATE_BITS = 2_000_000_000  # held at one time by the state sum of the Jones polynomial
+MAX_DEGREE = 200  # of a permutation
+MAX_GENERATORS = 1_000  # of a group of permutations, and as many meridians
+MAX_GROUP = 500_000  # elements of a group that colours links
+MAX_COLOURS = 4_000  # elements of it that may be colours
 
 
 # ---------------------------------------------------------------------------- what comes out
@@ -227,34 +233,26 @@ def check_different(claim: Claim, work: Work) -> str:
         right = replay(claim.right, item.right_moves, f"{where}: right move", work)
         image = apply_symmetry(right, item.symmetry)
         for side, braid, stated in (("left", left, item.left), ("right", image, item.right)):
-            check_value(f"{where}: {side}", item.invariant, braid, stated, work)
+            check_value(f"{where}: {side}", item, braid, stated, work)
         if item.left == item.right:
             raise RejectedError(f"{where}: the two values are equal")
-        names.append(item.invariant)
+        names.append(item.parameters.get("invariant", item.invariant))
     if not names:
         raise RejectedError("no distinction: nothing is shown to differ")
-    return f"the values of {', '.join(names)} are as stated and differ"
+    theorem = f"; {THREE_BRAID_THEOREM}" if "three-braid" in names else ""
+    names = [item.invariant for item in claim.distinctions]
+    return f"the values of {', '.join(names)} are as stated and differ{theorem}"
 
 
-def check_value(where: str, invariant: str, braid: Braid, stated: Any, work: Work) -> None:
-    """Raise RejectedError unless ``stated`` is the invariant of the closure, in canonical form."""
-    form, compute = INVARIANTS[invariant]
-    if form and stated != canonical(stated, form):
-        raise RejectedError(f"{where}: the value is not in canonical form")
+def check_value(where: str, item: Distinction, braid: Braid, stated: Any, work: Work) -> None:
+    """Raise RejectedError unless ``stated`` is the invariant of the closure, entry by entry."""
     try:
-        value = compute(cyclically_reduced(braid), work)
+        compute = INVARIANTS[item.invariant].compute
+        value = compute(cyclically_reduced(braid), work, **item.parameters)
     except RejectedError as error:
         raise RejectedError(f"{where}: {error}") from None
     if stated != value:
-        raise RejectedError(f"{where}: the stated {invariant} is not the recomputed one")
-
-
-def canonical(value: list[Any], form: int) -> list[Any]:
-    """Sorted; in a polynomial no exponent twice and no coefficient zero."""
-    if form == 1:
-        return sorted(value)
-    terms = {tuple(entry[:-1]): entry for entry in value if entry[-1]}
-    return [terms[exponents] for exponents in sorted(terms)]
+        raise RejectedError(f"{where}: the stated {item.invariant} is not the recomputed one")
 
 
 # ---------------------------------------------------------------------------- the moves
@@ -504,6 +502,17 @@ def read_integer(data: Any) -> int:
     return data
 
 
+def integer_in(least: int, most: int) -> Reader:
+    """A reader of an integer in a range."""
+
+    def read(data: Any) -> int:
+        if type(data) is not int or not least <= data <= most:
+            raise UnreadableError(f"{shown(data)}: expected an integer, {least} to {most}")
+        return data
+
+    return read
+
+
 def read_letter(data: Any) -> int:
     """A generator of some braid group or its inverse; of which group, the strands say."""
     if type(data) is not int or not 1 <= abs(data) < MAX_STRANDS:
@@ -512,11 +521,12 @@ def read_letter(data: Any) -> int:
     return data
 
 
-def read_strands(data: Any) -> int:
-    """A strand count."""
-    if type(data) is not int or not 1 <= data <= MAX_STRANDS:
-        raise UnreadableError(f"{shown(data)}: expected an integer, 1 to {MAX_STRANDS}")
-    return data
+def read_permutation(data: Any) -> list[int]:
+    """The images of 1, ..., d under a permutation of them."""
+    images = list_of(integer_in(1, MAX_DEGREE), MAX_DEGREE, least=1)(data)
+    if sorted(images) != list(range(1, len(images) + 1)):
+        raise UnreadableError(f"not a permutation of 1 to {len(images)}")
+    return images
 
 
 def read_word(data: Any) -> tuple[int, ...]:
@@ -526,7 +536,7 @@ def read_word(data: Any) -> tuple[int, ...]:
 
 def read_braid(data: Any) -> Braid:
     """A strand count and a word inside its group."""
-    braid = Braid(**read_object(data, {"strands": read_strands, "word": read_word}))
+    braid = Braid(**read_object(data, {"strands": integer_in(1, MAX_STRANDS), "word": read_word}))
     try:
         check_inside(braid.word, braid.strands)
     except RejectedError as error:
@@ -540,32 +550,29 @@ def read_move(data: Any) -> Move:
 
 
 def read_distinction(data: Any) -> Distinction:
-    """One distinction, its two values in the form that the invariant has."""
-    form, _ = chosen(data, "invariant", INVARIANTS)
+    """One distinction, its parameters and values in the form that the invariant has."""
+    value, _, parameters = chosen(data, "invariant", INVARIANTS)
+    if data["invariant"] == "sublinks":  # with the parameters of the invariant of its sublinks
+        inner = read_inside(
+            "parameters", lambda given: chosen(given, "invariant", PLAIN), data.get("parameters")
+        )
+        value, parameters = list_of(inner.value, MAX_FILE_BYTES), {**parameters, **inner.parameters}
     readers = {
         "symmetry": one_of(*SYMMETRIES),
         "invariant": one_of(*INVARIANTS),
-        "parameters": lambda given: read_object(given, {}),
+        "parameters": lambda given: read_object(given, parameters),
         "left_moves": list_of(read_move, MAX_MOVES),
         "right_moves": list_of(read_move, MAX_MOVES),
-        "left": value_reader(form),
-        "right": value_reader(form),
+        "left": value,
+        "right": value,
     }
     return Distinction(**read_object(data, readers))
-
-
-def value_reader(form: int) -> Reader:
-    """For an integer (form 0), a list of integers (1), or a list of lists of ``form`` integers."""
-    if form == 0:
-        return read_integer
-    entry = read_integer if form == 1 else list_of(read_integer, form, form)
-    return list_of(entry, MAX_FILE_BYTES)
 
 
 SIGNED: dict[str, Reader] = {
     "move": one_of("stabilize", "destabilize"),
     "sign": one_of(1, -1),
-    "strands": read_strands,
+    "strands": integer_in(1, MAX_STRANDS),
     "word": read_word,
 }
 MOVES: dict[str, dict[str, Reader]] = {
@@ -1181,14 +1188,731 @@ def character(
     return trace % prime
 
 
-INVARIANTS: dict[str, tuple[int, Callable[[Braid, Work], Any]]] = {
-    "components": (0, components),
-    "linking-numbers": (1, linking_numbers),
-    "linking-sums": (1, linking_sums),
-    "alexander": (2, alexander),
-    "jones": (2, jones),
-    "homfly": (3, homfly),
-    "signature": (0, signature),
+# Signatures at roots of unity, and the Alexander module over a prime field.
+
+
+def connected_form(braid: Braid, work: Work) -> list[dict[int, int]]:
+    """The Seifert matrix of a connected surface: a generator that is missing is put in as i, -i."""
+    missing = sorted(set(range(1, braid.strands)).difference(map(abs, braid.word)))
+    word = braid.word + tuple(letter for i in missing for letter in (i, -i))
+    return seifert_form(Braid(braid.strands, word), work)
+
+
+def levine_tristram(braid: Braid, work: Work, order: int, power: int) -> list[int]:
+    """Signature and nullity of H = (1 - w) V + (1 - 1/w) V^T at w = exp(2 pi i power / order).
+
+    The characteristic polynomial comes from the method of Faddeev and Le Verrier, in the ring
+    Z[x] / (x^order - 1), where x stands for w: M_1 = 1, c_k = -trace(K M_k) / k, M_(k+1) =
+    K M_k + c_k, with K = x V - V^T, and then c_k (1/x - 1)^k for H = (1/x - 1) K. All roots are
+    real, so by Descartes' rule as many are positive as there are changes of sign.
+
+    An element of the ring is held as its value at x = 2^width, modulo 2^(width * order) - 1. The
+    absolute values in a row of V - V^T, V + V^T sum to 8 at most, so in H to 16: those in c_k sum
+    to less than 17^size, in k c_k to less than 2^(5 size), and width = 5 size + 4 keeps them
+    apart. So the division by k is one of integers without remainder.
+    """
+    if gcd(order, power) != 1 or power > order:
+        raise RejectedError(f"{power} / {order} gives no primitive root of unity")
+    form = connected_form(braid, work)
+    size = len(form)
+    width = 5 * size + 4
+    x, modulus = 1 << width, (1 << width * order) - 1
+    rows: list[dict[int, int]] = [{} for _ in form]
+    for i, row in enumerate(form):
+        for j, entry in row.items():
+            rows[i][j] = rows[i].get(j, 0) + x * entry
+            rows[j][i] = rows[j].get(i, 0) - entry
+    cost = size * sum(map(len, rows)) * (4 + width * width * order // 50_000)
+    matrix = [[int(i == j) for j in range(size)] for i in range(size)]
+    coefficients = [1]
+    for k in range(1, size + 1):
+        work.spend(cost)
+        matrix = [
+            [sum(entry * matrix[j][i] for j, entry in row.items()) % modulus for i in range(size)]
+            for row in rows
+        ]
+        trace = sum(matrix[i][i] for i in range(size)) % modulus
+        c = -(trace - modulus if 2 * trace > modulus else trace) // k
+        for i in range(size):
+            matrix[i][i] += c
+        coefficients.append(c * pow((1 << width * (order - 1)) - 1, k, modulus) % modulus)
+    signs = real_signs(coefficients, width, order, power, work)
+    nullity = next(k for k, sign in enumerate(reversed(signs)) if sign)
+    places = [sign for sign in signs if sign]
+    positive = sum(one != two for one, two in pairwise(places))
+    return [2 * positive - (size - nullity), nullity]
+
+
+def real_signs(packed: list[int], width: int, order: int, power: int, work: Work) -> list[int]:
+    """The signs of real elements of Z[w], each given as its value at w = 2^width.
+
+    The absolute values of its coefficients sum to less than 2^width, so it and its conjugates, at
+    most order - 1 numbers whose product is an integer, are below that. So it is zero, or not below
+    2^(width * (2 - order)) in absolute value; and the sum below is wrong by 2^(width + 40) units
+    of 2^-bits at most.
+    """
+    bits = width * order + 64
+    cosines = cosine_table(order, power, bits, work)
+    modulus = (1 << width * order) - 1
+    signs = []
+    for given in packed:
+        numbers = unpack(given - modulus if 2 * given > modulus else given, width, work)
+        value = sum(c * cosine for c, cosine in zip(numbers, cosines, strict=False))
+        work.spend(order * (4 + (bits >> 8)))
+        signs.append(0 if abs(value) < 1 << width + 50 else 1 if value > 0 else -1)
+    return signs
+
+
+def cosine_table(order: int, power: int, bits: int, work: Work) -> list[int]:
+    """2^bits cos(2 pi power j / order) for j below order, wrong by less than 2^40.
+
+    Pi by Machin's formula, the first cosine by its series, the others by the recursion of the
+    cosines of multiples.
+    """
+    one = 1 << bits
+    work.spend(bits * (10 + bits // 100))
+    pi = 16 * arctangent(5, one) - 4 * arctangent(239, one)
+    square = (2 * pi * power // order) ** 2 >> bits
+    term, first, k = one, 0, 0
+    while term:
+        first += -term if k % 4 else term
+        k += 2
+        term = (term * square >> bits) // (k * (k - 1))
+    cosines = [one, first]
+    while len(cosines) < order:
+        cosines.append((2 * first * cosines[-1] >> bits) - cosines[-2])
+    return cosines
+
+
+def arctangent(cotangent: int, one: int) -> int:
+    """The arctangent of 1 / cotangent in units of 1 / one, by its series."""
+    power, total, k = one // cotangent, 0, 1
+    while power:
+        total += power // k if k % 4 == 1 else -(power // k)
+        power //= cotangent * cotangent
+        k += 2
+    return total
+
+
+Polynomial = list[int]  # coefficients modulo a prime, lowest power first, the last not zero
+
+
+def alexander_module(braid: Braid, work: Work, prime: int) -> list[Polynomial]:
+    """The invariant factors over F_p[t, 1/t] of the module presented by t V - V^T.
+
+    They are those over F_p[t] without their powers of t. V - t V^T has the same ones: it is the
+    transposed matrix, up to sign. So t and 1/t need not be told apart.
+    """
+    if any(prime % divisor == 0 for divisor in range(2, prime)):
+        raise RejectedError(f"{prime} is not a prime number")
+    form = connected_form(braid, work)
+    rows: list[dict[int, Polynomial]] = [{} for _ in form]
+    for i, row in enumerate(form):
+        for j, entry in row.items():
+            rows[i][j] = add_multiple(rows[i].get(j, []), [0, entry], [1], prime, work)
+            rows[j][i] = add_multiple(rows[j].get(i, []), [-entry], [1], prime, work)
+    diagonal = diagonal_form(rows, prime, work)
+    factors = [normalised(factor, prime) for factor in diagonal]
+    factors = [factor for factor in factors if len(factor) > 1]
+    for i in range(len(factors)):
+        for j in range(i + 1, len(factors)):
+            one, two = factors[i], factors[j]
+            while two:
+                one, two = two, divide(one, two, prime, work)[1]
+            cofactor, _ = divide(factors[i], one, prime, work)
+            factors[j] = normalised(add_multiple([], cofactor, factors[j], prime, work), prime)
+            factors[i] = normalised(one, prime)
+    free = len(form) - len(diagonal)
+    return [factor for factor in factors if len(factor) > 1] + [[]] * free
+
+
+def diagonal_form(rows: list[dict[int, Polynomial]], prime: int, work: Work) -> list[Polynomial]:
+    """The entries, other than zero, of a diagonal matrix that presents the same module over F_p[t].
+
+    The pivot is an entry of least degree. Rows are reduced by its row; when nothing is left under
+    it, its row is reduced by its column. Where a remainder is left, the degree has gone down.
+    """
+    rows, diagonal = [row for row in rows if row], []
+    while rows:
+        work.spend(sum(map(len, rows)))
+        places = ((len(row[j]), len(row), i, j) for i, row in enumerate(rows) for j in row)
+        _, _, i, j = min(places)
+        pivot = rows.pop(i)
+        for row in rows:
+            if j in row:
+                quotient, _ = divide(row[j], pivot[j], prime, work)
+                for column, entry in pivot.items():
+                    difference = add_multiple(
+                        row.pop(column, []), [-c for c in quotient], entry, prime, work
+                    )
+                    if difference:
+                        row[column] = difference
+        if any(j in row for row in rows):
+            rows.append(pivot)
+        else:
+            remainders = {k: divide(entry, pivot[j], prime, work)[1] for k, entry in pivot.items()}
+            rest = {k: remainder for k, remainder in remainders.items() if remainder}
+            if rest:
+                rows.append({j: pivot[j], **rest})
+            else:
+                diagonal.append(pivot[j])
+        rows = [row for row in rows if row]
+    return diagonal
+
+
+def add_multiple(
+    one: Polynomial, factor: Polynomial, other: Polynomial, prime: int, work: Work
+) -> Polynomial:
+    """one + factor * other."""
+    work.spend(10 + len(one) + len(factor) * len(other))
+    total = one + [0] * (len(factor) + len(other) - 1 - len(one))
+    for k, c in enumerate(factor):
+        for power, d in enumerate(other, k):
+            total[power] = (total[power] + c * d) % prime
+    while total and total[-1] == 0:
+        total.pop()
+    return total
+
+
+def divide(
+    one: Polynomial, other: Polynomial, prime: int, work: Work
+) -> tuple[Polynomial, Polynomial]:
+    """Quotient and remainder."""
+    quotient, scale = [0] * max(0, len(one) - len(other) + 1), pow(other[-1], -1, prime)
+    while len(one) >= len(other):
+        power, c = len(one) - len(other), one[-1] * scale % prime
+        quotient[power] = c
+        one = add_multiple(one, [0] * power + [-c], other, prime, work)
+    return quotient, one
+
+
+def normalised(polynomial: Polynomial, prime: int) -> Polynomial:
+    """The multiple by a unit of F_p[t, 1/t] with constant term not 0 and leading coefficient 1."""
+    scale = pow(polynomial[-1], -1, prime)
+    first = next(power for power, c in enumerate(polynomial) if c)
+    return [c * scale % prime for c in polynomial[first:]]
+
+
+# Closed braids on three strands, by the images of their words in the modular group.
+
+THREE_BRAID_THEOREM = "by the classification of closed 3-braids (Birman, Menasco, 1993)"
+MODULAR_IMAGES = {1: (-1, 0), -1: (0, 1), 2: (0, -1), -2: (1, 0)}
+
+
+def three_braid(braid: Braid, work: Work) -> list[list[int]]:
+    """All conjugacy classes of 3-braids that close to this oriented link, sorted.
+
+    By Birman and Menasco (Studying links via closed braids III, 1993) there is one, except: three
+    for the unknot, 1 2, 1 -2, -1 -2; two for the torus links of type (2, k) with k not 1 or -1,
+    1^k 2 and 1^k -2; two at most for 1^u 2^v 1^w 2^e with e = 1 or -1, that and 1^w 2^v 1^u 2^e.
+
+    All members of the last family are found. With D = 1 2 1 and p = u - e, q = w - e the two are
+    conjugate to 1^p 2^v 1^q D^e and 1^q 2^v 1^p D^e. Since D exchanges 1 and 2, what counts is the
+    cyclic order of (p, v, q): when two of them are equal, the partners are conjugate. They also
+    are when one of them is 0, 1 or -1, and by rotation that may be v: 1^p 1^q D^e; or, as
+    2 = 1^-1 D 1^-1, 1^(p-1) D 1^(q-1) D^e; or 1^(p+1) D^-1 1^(q+1) D^e; in each p and q may be
+    exchanged by conjugation, with D perhaps. So let all be different and none in {-1, 0, 1}.
+
+    Then |p| + |v| + |q| <= length / 2 + 3 with the length of the cyclic word. In 1^k =
+    (b^-1 a)^k = (a b)^-k and 2^k = (a b^-1)^k = (b a)^-k there are |k| - 1 letters a that stand
+    between letters b of the same power. Where powers meet, at most the letters a beside them
+    cancel and two letters b become one, not none: a power has |k| >= 2 letters b, so no letter b
+    is touched from both sides, and two that meet are of one sign, for only powers of one sign meet
+    so. All letters a inside the powers stay, and a cyclic word has length / 2 letters a.
+
+    By the image in SL(2, Z), 1 -> (1 1; 0 1) and 2 -> (1 0; -1 1), e trace = p q v - p - q - v; and
+    total = p + q + v + 3 e. So p q v and p + q + v are known, v determines p and q, and divides p q v.
+    """
+    if braid.strands > 3:
+        raise RejectedError(f"a braid on {braid.strands} strands: expected at most 3")
+    word = (*braid.word, *range(braid.strands, 3))
+    own = conjugacy_class(word, work)
+    for family in iter_families(word, len(own) // 2, work):
+        classes = {conjugacy_class(member, work) for member in family}
+        if own in classes:
+            return sorted(map(list, classes))
+    return [list(own)]
+
+
+def iter_families(word: tuple[int, ...], half: int, work: Work) -> Iterator[list[tuple[int, ...]]]:
+    """Lists of braids with one closure, of which one holds ``word``'s class unless it is alone.
+
+    ``half`` is half the length of its cyclic word.
+    """
+    total, trace = sum(1 if letter > 0 else -1 for letter in word), modular_trace(word, work)
+    for k in (total - 1, total + 1):
+        powers = (1, -1) if k in (1, -1) else (k,)
+        yield [word_of((1, power), (2, sign)) for power in powers for sign in (1, -1)]
+    for e in (1, -1):
+        product = e * trace + total - 3 * e  # of p, q and v; v is the least of them
+        for v in range(-half, half):
+            work.spend(10 + (product.bit_length() >> 6))
+            if product == 0 or v in (-1, 0, 1) or product % v:
+                continue
+            both = total - 3 * e - v
+            square = both * both - 4 * (product // v)
+            root = isqrt(max(square, 0))
+            p, q = (both - root) // 2, (both + root) // 2
+            if root * root == square and v < p < q and abs(v) + abs(p) + abs(q) <= half + 3:
+                end = word_of((1, e), (2, e), (1, e))
+                pairs = ((p, q), (q, p))
+                yield [word_of((1, one), (2, v), (1, two)) + end for one, two in pairs]
+
+
+def word_of(*powers: tuple[int, int]) -> tuple[int, ...]:
+    """The word of a product of powers of generators."""
+    return tuple(i if k > 0 else -i for i, k in powers for _ in range(abs(k)))
+
+
+def modular_trace(word: tuple[int, ...], work: Work) -> int:
+    """The trace of the image in SL(2, Z) under 1 -> (1 1; 0 1), 2 -> (1 0; -1 1)."""
+    a, b, c, d = 1, 0, 0, 1
+    for letter in word:
+        work.spend(6 + (a.bit_length() >> 8))
+        sign = 1 if letter > 0 else -1
+        if abs(letter) == 1:
+            b, d = b + sign * a, d + sign * c
+        else:
+            a, c = a - sign * b, c - sign * d
+    return a + d
+
+
+def conjugacy_class(word: tuple[int, ...], work: Work) -> tuple[int, ...]:
+    """The exponent sum and the cyclic word in Z_2 * Z_3: a complete invariant of conjugacy in B_3.
+
+    The cyclic word is that of the image in PSL(2, Z) = <a, b | a^2 = b^3 = 1>, a = 1 2 1, b = 1 2:
+    letters 0 for a, 1 for b and -1 for 1/b, cyclically reduced, the least rotation. The kernel is
+    generated by the central (1 2)^3, whose exponent sum is 6.
+    """
+    letters: list[int] = []
+    for letter in word:
+        for x in MODULAR_IMAGES[letter]:
+            if not letters or (letters[-1] == 0) != (x == 0):
+                letters.append(x)
+            elif joined := merged(letters.pop(), x):
+                letters.append(joined)
+    first = 0
+    while len(letters) - first > 1 and (letters[first] == 0) == (letters[-1] == 0):
+        letters[first] = merged(letters[first], letters.pop())
+        first += letters[first] == 0
+    cyclic = bytes(x + 1 for x in letters[first:])  # bytes are compared and copied at once
+    work.spend(12 * len(word) + (len(cyclic) ** 2 >> 5))
+    least = min((cyclic[k:] + cyclic[:k] for k in range(len(cyclic))), default=b"")
+    return sum(1 if letter > 0 else -1 for letter in word), *(x - 1 for x in least)
+
+
+def merged(one: int, other: int) -> int:
+    """The product of two letters of one kind, 0 for none: a a = 1, b b = 1/b."""
+    return (one + other + 1) % 3 - 1
+
+
+# Colourings: homomorphisms of the link's group to a finite group, which is given by permutations.
+# A permutation is held as 256 bytes, so p.translate(q) is p followed by q.
+
+UNIT = bytes(range(256))
+WEIGHT = -1  # in a table of colourings, the column of how often a row counts; the others are arcs
+BEAM = 20  # sets of arcs that are followed in the choice of seeds
+
+
+def colouring(
+    braid: Braid, work: Work, generators: list[list[int]], meridians: list[list[int]]
+) -> list[list[int]]:
+    """How many colourings have each list of classes of (meridian, longitude), sorted.
+
+    The arcs are coloured by members of the meridians' classes such that other = over^-1 one over
+    at each passing: these are the homomorphisms that send meridians into the classes (Wirtinger).
+    Over-arc and one other arc determine the third, so a few arcs, the seeds, determine all.
+    Trying all colours of the seeds finds every colouring once; but
+
+    - the first seed gets the given meridian x of each class only, and counts as often as the class
+      has members: conjugation by the group permutes the colourings, and the members transitively;
+    - the second seed gets one colour of each orbit under the centraliser of x, and counts as often
+      as the orbit has members: the centraliser permutes the colourings that are left, and keeps x,
+      the only colour until then, for what x alone determines is x.
+
+    Conjugate colourings have the same list of classes, so each list counts all its colourings. The
+    arcs of one component have colours of one class, so a seed beside one is tried in that only.
+    """
+    degree = len(meridians[0])
+    if any(len(images) != degree for images in generators + meridians):
+        raise RejectedError("permutations of different degrees")
+    palette = palette_of(generators, meridians, work)
+    diagram = diagram_of(braid, work)
+    seeds = choose_seeds(diagram, braid.strands, len(palette.elements), work)
+    known = determined({seeds[0]}, diagram.relations, work)
+    steps = steps_after(known | {*seeds[:2]}, seeds[2:], diagram)
+    counts: Counter[tuple[int, ...]] = Counter()
+    remembered: dict[tuple[int, bytes], bytes] = {}
+    for kind, members in enumerate(palette.classes):
+        columns = {arc: [members[0]] for arc in known} | {WEIGHT: [len(members)]}
+        if len(seeds) > 1:
+            is_beside = any(diagram.owner[arc] == diagram.owner[seeds[1]] for arc in known)
+            choices = members if is_beside else range(len(palette.elements))
+            orbits = orbits_of(choices, kind, palette, work)
+            columns = {arc: [members[0]] * len(orbits) for arc in known}
+            columns[seeds[1]] = [orbit[0] for orbit in orbits]
+            columns[WEIGHT] = [len(members) * len(orbit) for orbit in orbits]
+        for found in solutions(columns, steps, palette, work):
+            for row in zip(*found.values(), strict=True):
+                colours = dict(zip(found, row, strict=True))
+                pairs = [peripheral(one, colours, palette, work) for one in diagram.circuits]
+                entries = []
+                for number, longitude in pairs:
+                    if (number, longitude) not in remembered:
+                        work.spend(6 * len(palette.centralisers[number]))
+                        images = (conjugate(longitude, g) for g in palette.centralisers[number])
+                        remembered[number, longitude] = min(images)
+                    least = remembered[number, longitude]
+                    entries.append((number + 1, *(image + 1 for image in least[:degree])))
+                counts[sum(sorted(entries), ())] += colours[WEIGHT]
+    return sorted([*entries, count] for entries, count in counts.items())
+
+
+class Palette(NamedTuple):
+    """The colours, numbered: ``elements`` and, for each, the number of its class in ``kinds``.
+
+    ``table[o][c]`` is the number of o^-1 c o, ``back[o][c]`` that of o c o^-1. ``carriers`` gives
+    for each colour c an h such that h^-1 c h is the first of its class, the given meridian;
+    ``centralisers`` for each class the elements of the group that commute with that.
+    """
+
+    elements: list[bytes]
+    kinds: list[int]
+    classes: list[list[int]]
+    table: list[list[int]]
+    back: list[list[int]]
+    carriers: list[bytes]
+    centralisers: list[list[bytes]]
+
+
+def palette_of(generators: list[list[int]], meridians: list[list[int]], work: Work) -> Palette:
+    """The classes of the meridians in the group; raises RejectedError unless these are right."""
+    steps = [permutation(images) for images in generators]
+    group = [UNIT]
+    seen = {UNIT}
+    for element in group:  # which grows
+        work.spend(8 + 4 * len(steps))
+        fresh = {element.translate(step) for step in steps} - seen
+        seen |= fresh
+        group.extend(sorted(fresh))
+        if len(group) > MAX_GROUP:
+            raise RejectedError(f"too large for this verifier: more than {MAX_GROUP} elements")
+    number: dict[bytes, int] = {}
+    kinds: list[int] = []
+    carriers: list[bytes] = []
+    classes, centralisers = [], []
+    for kind, x in enumerate(map(permutation, meridians)):
+        if x not in seen:
+            raise RejectedError(f"meridian {kind + 1} is not in the group")
+        if x in number:
+            raise RejectedError(f"meridian {kind + 1} is conjugate to one before it")
+        carrier = {x: UNIT}
+        members = [x]
+        for member in members:  # which grows
+            work.spend(8 * len(steps))
+            for step in steps:
+                image = conjugate(member, step)
+                if image not in carrier:
+                    carrier[image] = inverted(step).translate(carrier[member])
+                    members.append(image)
+        number |= {member: len(number) + k for k, member in enumerate(members)}
+        if len(number) > MAX_COLOURS:
+            raise RejectedError(f"too large for this verifier: more than {MAX_COLOURS} colours")
+        kinds += [kind] * len(members)
+        classes.append([number[member] for member in members])
+        carriers += carrier.values()
+        work.spend(4 * len(group))
+        centralisers.append([g for g in group if x.translate(g) == g.translate(x)])
+    work.spend(10 * len(number) ** 2)
+    table = [[number[conjugate(colour, over)] for colour in number] for over in number]
+    back = [sorted(range(len(row)), key=row.__getitem__) for row in table]
+    return Palette(list(number), kinds, classes, table, back, carriers, centralisers)
+
+
+def permutation(images: list[int]) -> bytes:
+    """The permutation of 0, ..., 255 that moves only what is given, from 1 on."""
+    return bytes(image - 1 for image in images) + UNIT[len(images) :]
+
+
+def inverted(element: bytes) -> bytes:
+    """The inverse permutation."""
+    return bytes.maketrans(element, UNIT)
+
+
+def conjugate(element: bytes, by: bytes) -> bytes:
+    """by^-1 element by."""
+    return inverted(by).translate(element).translate(by)
+
+
+def orbits_of(choices: Iterable[int], kind: int, palette: Palette, work: Work) -> list[list[int]]:
+    """The orbits of colours under the centraliser of a class's meridian."""
+    number = {element: index for index, element in enumerate(palette.elements)}
+    orbits = []
+    left = dict.fromkeys(choices)
+    while left:
+        colour = palette.elements[next(iter(left))]
+        work.spend(6 * len(palette.centralisers[kind]))
+        orbit = {number[conjugate(colour, g)] for g in palette.centralisers[kind]}
+        orbits.append(sorted(orbit))
+        for member in orbit:
+            del left[member]
+    return orbits
+
+
+class Diagram(NamedTuple):
+    """The arcs of a closed braid's diagram, each from one passing under to the next.
+
+    ``relations`` holds for each passing the arcs (over, one, other), other = over^-1 one over;
+    ``owner`` the component of each arc; ``circuits`` for each component an arc and, on the way
+    once around from there, the passings under: arc over it, sign, 1 if that is of the component.
+    """
+
+    relations: list[tuple[int, int, int]]
+    owner: dict[int, int]
+    circuits: list[tuple[int, list[tuple[int, int, int]]]]
+
+
+def diagram_of(braid: Braid, work: Work) -> Diagram:
+    """The diagram; arcs that pass the top have numbers below the number of strands."""
+    work.spend(20 * len(braid.word) + braid.strands * (10 + braid.strands // 10))
+    numbers = component_numbers(braid)
+    arcs, tops = list(range(braid.strands)), list(range(braid.strands))
+    owners = list(numbers)
+    passings: list[list[tuple[int, int, int]]] = [[] for _ in tops]
+    crossings = []
+    for letter in braid.word:
+        i = abs(letter) - 1
+        over, under, sign = (i + 1, i, 1) if letter > 0 else (i, i + 1, -1)
+        new, component = len(owners), numbers[tops[under]]
+        one, other = (arcs[under], new) if sign > 0 else (new, arcs[under])
+        crossings.append((arcs[over], one, other))
+        passings[tops[under]].append((arcs[over], sign, int(numbers[tops[over]] == component)))
+        owners.append(component)
+        arcs[under] = new
+        arcs[i], arcs[i + 1], tops[i], tops[i + 1] = arcs[i + 1], arcs[i], tops[i + 1], tops[i]
+    name = list(range(len(owners)))
+
+    def final(arc: int) -> int:
+        while name[arc] != arc:
+            arc = name[arc]
+        return arc
+
+    for top, arc in enumerate(arcs):  # where the closure joins them
+        name[final(arc)] = final(top)
+    circuits = []
+    for component in range(max(numbers) + 1):
+        start = top = numbers.index(component)
+        circuit = list(passings[top])
+        while (top := tops.index(top)) != start:
+            circuit += passings[top]
+        circuits.append((final(start), [(final(arc), sign, own) for arc, sign, own in circuit]))
+    relations = [(final(over), final(one), final(other)) for over, one, other in crossings]
+    return Diagram(relations, {arc: owners[arc] for arc in map(final, name)}, circuits)
+
+
+def determined(arcs: set[int], relations: list[tuple[int, int, int]], work: Work) -> frozenset[int]:
+    """The arcs whose colours follow from those of the given ones."""
+    known, size = set(arcs), -1
+    while size < len(known):
+        size = len(known)
+        work.spend(2 * len(relations))
+        for over, one, other in relations:
+            if over in known and (one in known) != (other in known):
+                known |= {one, other}
+    return frozenset(known)
+
+
+def choose_seeds(diagram: Diagram, strands: int, colours: int, work: Work) -> tuple[int, ...]:
+    """Arcs that determine all, in an order in which little has to be tried.
+
+    Arcs that are known have about ``colours`` to the power of (their number less that of the
+    passings among them) colourings. Sets of known arcs grow by a seed and what follows; of those
+    that cost least, ``BEAM`` are kept. Any choice that determines all gives the same counts.
+    """
+    relations, all_arcs = diagram.relations, frozenset(diagram.owner)
+    stride = len(all_arcs) // 60 + 1
+    useful = [arc for arc in diagram.owner if arc < strands or arc % stride == 0]
+
+    def tried(known: frozenset[int]) -> int:
+        return colours ** max(0, len(known) - sum(known.issuperset(one) for one in relations))
+
+    plans: dict[frozenset[int], tuple[int, tuple[int, ...]]] = {frozenset(): (0, ())}
+    while all_arcs not in plans:
+        grown: dict[frozenset[int], tuple[int, tuple[int, ...]]] = {}
+        for known, (cost, seeds) in plans.items():
+            for arc in useful:
+                if arc not in known:
+                    more = determined({*known, arc}, relations, work)
+                    if more not in grown or grown[more][0] > cost:
+                        grown[more] = (cost + tried(known), (*seeds, arc))
+        ranked = sorted(grown, key=lambda known: (grown[known][0] + tried(known), -len(known)))
+        plans = {known: grown[known] for known in ranked[:BEAM]}
+    return plans[all_arcs][1]
+
+
+class Step(NamedTuple):
+    """Colour ``target`` by over^-1 one over, backward by over one over^-1; or check its colour.
+
+    A seed has no ``over`` (-1), and as ``one`` an arc of its component, if one is known, or -1.
+    """
+
+    target: int
+    over: int
+    one: int
+    backward: bool = False
+
+
+def steps_after(known: frozenset[int], seeds: Sequence[int], diagram: Diagram) -> list[Step]:
+    """All that follows from known colours, checks as soon as possible; then from each more seed."""
+    arcs, waiting = set(known), list(diagram.relations)
+    steps: list[Step] = []
+    for seed in (None, *seeds):
+        if seed is not None:
+            beside = [arc for arc in arcs if diagram.owner[arc] == diagram.owner[seed]]
+            steps.append(Step(seed, -1, min(beside, default=-1)))
+            arcs.add(seed)
+        while ready := [r for r in waiting if r[0] in arcs and (r[1] in arcs or r[2] in arcs)]:
+            over, one, other = relation = max(ready, key=arcs.issuperset)
+            waiting.remove(relation)
+            forward = one in arcs
+            steps.append(Step(other, over, one) if forward else Step(one, over, other, True))
+            arcs |= {one, other}
+    return steps
+
+
+def solutions(
+    columns: dict[int, list[int]], steps: Sequence[Step], palette: Palette, work: Work
+) -> Iterator[dict[int, list[int]]]:
+    """The tables of colourings, an arc a column, that grow from the rows of one by the steps."""
+    for number, (target, over, one, backward) in enumerate(steps):
+        if over < 0:
+            for row in zip(*columns.values(), strict=True):
+                colours = dict(zip(columns, row, strict=True))
+                choices: Sequence[int] = range(len(palette.elements))
+                if one >= 0:
+                    choices = palette.classes[palette.kinds[colours[one]]]
+                table = {arc: [colour] * len(choices) for arc, colour in colours.items()}
+                table[target] = list(choices)
+                work.spend(10 * len(table) + len(choices) // 4)
+                yield from solutions(table, steps[number + 1 :], palette, work)
+            return
+        rows = palette.back if backward else palette.table
+        found = [rows[o][c] for o, c in zip(columns[over], columns[one], strict=True)]
+        work.spend(8 + len(found) // 2)
+        if target not in columns:
+            columns[target] = found
+            continue
+        keep = [
+            k
+            for k, pair in enumerate(zip(found, columns[target], strict=True))
+            if len({*pair}) == 1
+        ]
+        if not keep:
+            return
+        columns = {arc: [column[k] for k in keep] for arc, column in columns.items()}
+    yield columns
+
+
+def peripheral(
+    circuit: tuple[int, list[tuple[int, int, int]]],
+    colours: dict[int, int],
+    palette: Palette,
+    work: Work,
+) -> tuple[int, bytes]:
+    """A component's class and longitude, conjugated such that its meridian is the given one.
+
+    The longitude is the product of the elements over the passings under, to the power of their
+    signs, corrected by the meridian so that it does not link the component.
+    """
+    start, passings = circuit
+    work.spend(10 + 5 * len(passings))
+    longitude, own = UNIT, 0
+    for over, sign, is_own in passings:
+        element = palette.elements[colours[over]]
+        longitude = longitude.translate(element if sign > 0 else inverted(element))
+        own += sign * is_own
+    meridian = palette.elements[colours[start]]
+    for _ in range(abs(own)):
+        longitude = longitude.translate(inverted(meridian) if own > 0 else meridian)
+    colour = colours[start]
+    return palette.kinds[colour], conjugate(longitude, palette.carriers[colour])
+
+
+# Any of these, for the links that some of the components form.
+
+
+def sublinks(
+    braid: Braid, work: Work, components: int, invariant: str, **parameters: Any
+) -> list[Any]:
+    """The values of an invariant for all sublinks of so many components, sorted."""
+    compute, numbers = PLAIN[invariant].compute, component_numbers(braid)
+    work.spend(4 * len(braid.word) + 4 * braid.strands)
+    return sorted(
+        compute(sublink(braid, numbers, kept, work), work, **parameters)
+        for kept in combinations(range(max(numbers) + 1), components)
+    )
+
+
+def sublink(braid: Braid, numbers: list[int], kept: Sequence[int], work: Work) -> Braid:
+    """The braid that the strands of some components form, cyclically reduced."""
+    row = [number in kept for number in numbers]
+    work.spend(len(braid.word) * (6 + braid.strands // 20) + 4 * braid.strands)
+    word = []
+    for letter in braid.word:
+        i = abs(letter) - 1
+        if row[i] and row[i + 1]:
+            place = sum(row[: i + 1])
+            word.append(place if letter > 0 else -place)
+        row[i], row[i + 1] = row[i + 1], row[i]
+    return cyclically_reduced(Braid(sum(row), tuple(word)))
+
+
+class Invariant(NamedTuple):
+    """The readers of its values and parameters, and how it is computed from a braid and these."""
+
+    value: Reader
+    compute: Callable[..., Any]
+    parameters: dict[str, Reader]
+
+
+def lists_of(width: int) -> Reader:
+    """A reader of a list of lists of ``width`` integers."""
+    return list_of(list_of(read_integer, width, width), MAX_FILE_BYTES)
+
+
+INTEGERS = list_of(read_integer, MAX_FILE_BYTES)
+LISTS = list_of(INTEGERS, MAX_FILE_BYTES)
+PLAIN: dict[str, Invariant] = {
+    "components": Invariant(read_integer, components, {}),
+    "linking-numbers": Invariant(INTEGERS, linking_numbers, {}),
+    "linking-sums": Invariant(INTEGERS, linking_sums, {}),
+    "alexander": Invariant(lists_of(2), alexander, {}),
+    "jones": Invariant(lists_of(2), jones, {}),
+    "homfly": Invariant(lists_of(3), homfly, {}),
+    "signature": Invariant(read_integer, signature, {}),
+    "levine-tristram": Invariant(
+        list_of(read_integer, 2, 2),
+        levine_tristram,
+        {"order": integer_in(2, 60), "power": integer_in(1, 59)},
+    ),
+    "alexander-module": Invariant(LISTS, alexander_module, {"prime": integer_in(2, 1000)}),
+    "colouring": Invariant(
+        LISTS,
+        colouring,
+        {
+            "generators": list_of(read_permutation, MAX_GENERATORS),
+            "meridians": list_of(read_permutation, MAX_GENERATORS, least=1),
+        },
+    ),
+    "three-braid": Invariant(LISTS, three_braid, {}),
+}
+INVARIANTS: dict[str, Invariant] = {
+    **PLAIN,
+    "sublinks": Invariant(
+        INTEGERS,
+        sublinks,
+        {"components": integer_in(1, MAX_STRANDS), "invariant": one_of(*PLAIN)},
+    ),
 }
 
 
