@@ -1,0 +1,140 @@
+"""Closed polygons as lists of arrays, checked, and as the arrays that the loops work on."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable, Sequence
+from typing import TYPE_CHECKING, Any
+
+import numpy as np
+from numpy.typing import NDArray
+
+from braidsearch.errors import InputError
+
+if TYPE_CHECKING:
+    from braidsearch.diagrams.polygons.box_tree import Edges
+
+Polygon = NDArray[np.float64]
+
+MAX_VERTICES = 100_000
+
+_LOWEST_BIT = -340
+_EXPECTED = "expected three finite numbers x y z"
+
+
+def check_polygons(polygons: Iterable[Any]) -> list[Polygon]:
+    """The polygons as arrays of n x 3 doubles, a last row that repeats the first left out.
+
+    Whatever numpy makes an array of is taken, integers as long as doubles hold them exactly.
+    Raises InputError, in one line that names polygon and row (from 1), for what is not rows of
+    three finite numbers, for a polygon of fewer than three vertices, and for no polygon at all.
+    """
+    checked = [_check_polygon(polygon, k) for k, polygon in enumerate(polygons, start=1)]
+    if not checked:
+        raise InputError("no polygon: expected rows x y z, a blank line between polygons")
+    count = sum(map(len, checked))
+    if count > MAX_VERTICES:
+        raise InputError(f"{count} vertices: expected at most {MAX_VERTICES}")
+    return checked
+
+
+def _check_polygon(polygon: Any, number: int) -> Polygon:
+    rows = _as_rows(polygon, number)
+    unfit = np.flatnonzero(~np.isfinite(rows).all(axis=1))
+    if len(unfit):
+        row = int(unfit[0])
+        shown = " ".join(map(str, rows[row].tolist()))
+        raise InputError(f"polygon {number}, row {row + 1}: {shown}: {_EXPECTED}")
+    if len(rows) > 1 and (rows[0] == rows[-1]).all():
+        rows = rows[:-1]
+    if len(rows) < 3:
+        points = "1 point" if len(rows) == 1 else f"{len(rows)} points"
+        raise InputError(f"polygon {number}: {points}: expected at least three")
+    rows.flags.writeable = False
+    return rows
+
+
+def _as_rows(polygon: Any, number: int) -> Polygon:
+    try:
+        given = np.asarray(polygon)
+        if given.dtype.kind not in "iufO":
+            raise TypeError
+        rows = np.array(given, dtype=np.float64)
+    except (TypeError, ValueError, OverflowError):
+        raise InputError(f"polygon {number}: {_first_bad_row(polygon)}") from None
+    if rows.ndim != 2 or rows.shape[1] != 3:
+        raise InputError(f"polygon {number}, an array of shape {rows.shape}: expected n rows x y z")
+    if given.dtype.kind in "iuO" and not (given == rows).all():
+        row = int(np.flatnonzero((given != rows).any(axis=1))[0])
+        raise InputError(
+            f"polygon {number}, row {row + 1}: {' '.join(map(str, given[row]))}: "
+            "expected integers that a double holds exactly"
+        )
+    return rows
+
+
+def _first_bad_row(polygon: Any) -> str:
+    if isinstance(polygon, Sequence) and not isinstance(polygon, str):
+        for i, row in enumerate(polygon, start=1):
+            try:
+                fits = np.asarray(row, dtype=np.float64).shape == (3,)
+            except (TypeError, ValueError, OverflowError):
+                fits = False
+            if not fits:
+                return f"row {i}: {str(row)[:40]}: {_EXPECTED}"
+    return "expected an array of n rows x y z"
+
+
+def work_arrays(polygons: Sequence[Polygon]) -> tuple[Edges, int]:
+    """The arrays of all polygons, and the power of two by which coordinates were divided.
+
+    Afterwards the largest is less than 1, and every difference of two is exact to the last bit
+    that ``exact_signs`` asks for. Raises InputError for coordinates so different in size that
+    this cannot be.
+    """
+    from braidsearch.diagrams.polygons.box_tree import Edges, build_tree  # noqa: PLC0415 - compiled
+    from braidsearch.diagrams.polygons.exact_signs import EXTRA_POINTS  # noqa: PLC0415 - compiled
+
+    coordinates = np.concatenate(polygons)
+    power = _power_above(coordinates)
+    count = len(coordinates)
+    points = np.zeros((count + EXTRA_POINTS, 3))
+    points[:count] = np.ldexp(coordinates, -power)
+    points[count + 1 : count + 4] = np.eye(3)
+    follows, precedes = np.arange(1, count + 1), np.arange(-1, count - 1)
+    sizes = np.array([len(polygon) for polygon in polygons])
+    ends = np.cumsum(sizes)
+    follows[ends - 1], precedes[ends - sizes] = ends - sizes, ends - 1
+    leaves = 1 << (count - 1).bit_length()
+    edges = Edges(
+        points.ravel(),
+        follows,
+        precedes,
+        np.repeat(np.arange(len(sizes)), sizes),
+        sizes,
+        np.zeros(6 * leaves),
+        np.zeros(6 * leaves),
+        np.zeros(3),
+        np.zeros(3),
+    )
+    build_tree(edges)
+    return edges, power
+
+
+def _power_above(coordinates: Polygon) -> int:
+    """The least power of two above all sizes; checks how far below it the last bits lie."""
+    significands, powers = np.frexp(coordinates)
+    digits = np.abs(np.ldexp(significands, 53)).astype(np.int64)
+    used = digits > 0
+    if not used.any():
+        return 0
+    power = int(powers[used].max())
+    last = np.frexp((digits & -digits).astype(np.float64))[1] - 1  # trailing zeros
+    lowest = np.where(used, powers - 53 + last, power)
+    place = np.unravel_index(int(lowest.argmin()), lowest.shape)
+    if lowest[place] - power < _LOWEST_BIT:
+        largest = float(np.abs(coordinates).max())
+        raise InputError(
+            f"coordinates {float(coordinates[place])!r} and {largest!r} together: "
+            "expected sizes within a factor of 10^80 of each other"
+        )
+    return power

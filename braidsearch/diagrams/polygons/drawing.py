@@ -1,0 +1,140 @@
+"""From polygons in space to a link diagram."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+from typing import TYPE_CHECKING, Any
+
+import numpy as np
+
+from braidsearch.diagrams.link_diagram import Crossing, LinkDiagram
+from braidsearch.diagrams.polygons.arrays import Polygon, check_polygons, work_arrays
+from braidsearch.errors import CapacityError, InputError
+
+if TYPE_CHECKING:
+    from braidsearch.diagrams.polygons.box_tree import Edges
+    from braidsearch.diagrams.polygons.projection import Projection
+
+_MOST_SEEDS = 20
+
+
+def polygon_diagram(
+    polygons: Iterable[Any], seed: int = 0, *, directions: int = 20, is_simplified: bool = True
+) -> LinkDiagram:
+    """The diagram of closed polygons in space: arrays of n x 3 coordinates, one a component.
+
+    The polygons are simplified by triangle moves unless ``is_simplified`` is False, and projected
+    along ``directions`` seeded directions in general position; the fewest crossings are kept.
+    Every decision is exact for the doubles given. The same seed gives the same diagram.
+
+    Raises InputError for what is no polygon (see ``check_polygons``) and for polygons that meet
+    themselves or each other, and CapacityError for too many crossings.
+    """
+    edges, _ = embedded_edges(polygons)
+    if is_simplified:
+        from braidsearch.diagrams.polygons.reduction import (  # noqa: PLC0415 - compiled
+            remove_all_vertices,
+        )
+
+        remove_all_vertices(edges)
+    return _draw(edges, seed, max(1, directions))
+
+
+def simplify_polygons(polygons: Iterable[Any]) -> list[Polygon]:
+    """The same link with fewer vertices: those removed whose triangle no edge pierces.
+
+    The vertices left are rows of the input, in order. A component that comes to span a triangle
+    free of everything else is an unknot split from the rest, and remains as that triangle. Raises
+    InputError as ``polygon_diagram`` does.
+    """
+    from braidsearch.diagrams.polygons.reduction import (  # noqa: PLC0415 - compiled
+        remove_all_vertices,
+    )
+
+    given = check_polygons(polygons)
+    edges, power = embedded_edges(given)
+    remove_all_vertices(edges)
+    points = np.ldexp(edges.points.reshape(-1, 3), power)
+    return [points[loop] for loop in _loops(edges)]
+
+
+def embedded_edges(polygons: Iterable[Any]) -> tuple[Edges, int]:
+    """The arrays of polygons that were found to meet neither themselves nor each other."""
+    from braidsearch.diagrams.polygons.reduction import first_meeting  # noqa: PLC0415 - compiled
+
+    edges, power = work_arrays(check_polygons(polygons))
+    first, second = first_meeting(edges)
+    if first >= 0:
+        raise InputError(
+            f"the edge from {_row(edges, first)} meets the one from {_row(edges, second)}: "
+            "expected polygons that meet neither themselves nor each other"
+        )
+    return edges, power
+
+
+def _row(edges: Edges, vertex: int) -> str:
+    polygon = int(edges.polygon[vertex])
+    row = vertex - int(np.searchsorted(edges.polygon, polygon)) + 1
+    return f"row {row} of component {polygon + 1}"
+
+
+def _loops(edges: Edges) -> list[list[int]]:
+    """The vertices of each polygon that are left, in order."""
+    loops = []
+    alive = edges.follows >= 0
+    for polygon, size in enumerate(edges.sizes.tolist()):
+        if size > 0:
+            loops.append(np.flatnonzero(alive & (edges.polygon == polygon)).tolist())
+        else:
+            last = -1 - size
+            before = int(edges.precedes[last])
+            loops.append(sorted((last, before, int(edges.precedes[before]))))
+    return loops
+
+
+def _draw(edges: Edges, seed: int, directions: int) -> LinkDiagram:
+    from braidsearch.diagrams.polygons.passages import passages_in_order  # noqa: PLC0415 - compiled
+    from braidsearch.diagrams.polygons.projection import project_polygons  # noqa: PLC0415
+
+    for attempt in range(_MOST_SEEDS):
+        projection = project_polygons(edges, seed + attempt * 1_000_003, directions)
+        passages = passages_in_order(edges, projection)
+        if passages is not None:
+            return _diagram_of(edges, projection, passages[1].tolist())
+    raise CapacityError("no direction tried shows all crossings in different points")
+
+
+def _diagram_of(edges: Edges, projection: Projection, order: list[int]) -> LinkDiagram:
+    """Number the arcs along the polygons and write every crossing counterclockwise."""
+    enters, leaves = _arcs_at_passages(edges, projection, order)
+    crossings = []
+    for i, (sign, top) in enumerate(
+        zip(projection.signs.tolist(), projection.tops.tolist(), strict=True)
+    ):
+        over, under = (2 * i, 2 * i + 1) if top else (2 * i + 1, 2 * i)
+        if sign > 0:
+            arcs = (enters[under], leaves[over], leaves[under], enters[over])
+        else:
+            arcs = (enters[under], enters[over], leaves[under], leaves[over])
+        crossings.append(Crossing(arcs, sign))
+    drawn = {int(edges.polygon[edge]) for edge in projection.pairs.ravel()}
+    return LinkDiagram(tuple(crossings), len(edges.sizes) - len(drawn))
+
+
+def _arcs_at_passages(
+    edges: Edges, projection: Projection, order: list[int]
+) -> tuple[list[int], list[int]]:
+    """For each passage the arc by which it is entered, and the arc by which it is left.
+
+    Vertices are numbered along the polygons, so the passages sorted by edge are those of the
+    first polygon in order, then those of the next. Arc k leaves the k-th of them.
+    """
+    enters, leaves = [0] * len(order), [0] * len(order)
+    polygons = edges.polygon[projection.pairs.ravel()[order]].tolist() if order else []
+    start = 0
+    for k, passage in enumerate(order):
+        leaves[passage] = k
+        is_last = k + 1 == len(order) or polygons[k + 1] != polygons[k]
+        enters[order[start if is_last else k + 1]] = k
+        start = k + 1 if is_last else start
+    return enters, leaves
