@@ -6,7 +6,21 @@ from braidsearch.diagrams.arc_presentation import (
     arcs_from_word,
     word_from_arcs,
 )
+from braidsearch.diagrams.closed_braid_diagram import closed_braid_diagram
+from braidsearch.diagrams.codes import (
+    dowker_thistlethwaite_code,
+    format_dowker_thistlethwaite_code,
+    format_gauss_code,
+    format_planar_diagram_code,
+    gauss_code,
+    parse_dowker_thistlethwaite_code,
+    parse_gauss_code,
+    parse_planar_diagram_code,
+    planar_diagram_code,
+)
 from braidsearch.diagrams.link_diagram import Crossing, LinkDiagram
+from braidsearch.diagrams.reidemeister import simplify_diagram
+from braidsearch.diagrams.vogel import braid_from_diagram
 
 __all__ = [
     "ArcMove",
@@ -17,5 +31,17 @@ __all__ = [
     "apply_arc_move",
     "apply_arc_moves",
     "arcs_from_word",
+    "braid_from_diagram",
+    "closed_braid_diagram",
+    "dowker_thistlethwaite_code",
+    "format_dowker_thistlethwaite_code",
+    "format_gauss_code",
+    "format_planar_diagram_code",
+    "gauss_code",
+    "parse_dowker_thistlethwaite_code",
+    "parse_gauss_code",
+    "parse_planar_diagram_code",
+    "planar_diagram_code",
+    "simplify_diagram",
     "word_from_arcs",
 ]

@@ -46,16 +46,17 @@ class Crossing:
     def mirrored(self) -> Crossing:
         """The crossing with the other strand on top."""
         start = self.over_enters
-        return Crossing(_turned(self.arcs, start), -self.sign)
+        return Crossing(quadruple(self.arcs[start:] + self.arcs[:start]), -self.sign)
 
     def reversed_strands(self, is_under: bool, is_over: bool) -> Crossing:
         """The crossing with its under-strand, its over-strand or both running backwards."""
-        arcs = _turned(self.arcs, 2) if is_under else self.arcs
-        return Crossing(arcs, -self.sign if is_under != is_over else self.sign)
+        arcs = self.arcs[2:] + self.arcs[:2] if is_under else self.arcs
+        return Crossing(quadruple(arcs), -self.sign if is_under != is_over else self.sign)
 
 
-def _turned(arcs: tuple[int, int, int, int], start: int) -> tuple[int, int, int, int]:
-    first, second, third, fourth = arcs[start:] + arcs[:start]
+def quadruple(values: Sequence[int]) -> tuple[int, int, int, int]:
+    """Four values as a tuple of four."""
+    first, second, third, fourth = values
     return first, second, third, fourth
 
 
@@ -202,6 +203,30 @@ class LinkDiagram:
     def is_connected(self) -> bool:
         """Whether the diagram is one piece, a circle being a piece of its own."""
         return len(self.pieces) + self.circles == 1
+
+    def renumbered(self) -> LinkDiagram:
+        """The same diagram with its arcs numbered in order along each component.
+
+        Components keep their order and start at their least arc; one of two arcs starts at the
+        arc that enters the earlier of its crossings.
+        """
+        entered = {
+            enters: number
+            for number, crossing in reversed(list(enumerate(self.crossings)))
+            for enters, _ in crossing.passages
+        }
+        number_of = [0] * self.arc_count
+        count = 0
+        for arcs in self.components:
+            ordered = sorted(arcs, key=entered.__getitem__) if len(arcs) == 2 else arcs
+            for arc in ordered:
+                number_of[arc] = count
+                count += 1
+        crossings = (
+            Crossing(quadruple([number_of[arc] for arc in crossing.arcs]), crossing.sign)
+            for crossing in self.crossings
+        )
+        return LinkDiagram(tuple(crossings), self.circles)
 
     def mirrored(self) -> LinkDiagram:
         """The mirror image: every crossing with the other strand on top, the arcs as they are."""
