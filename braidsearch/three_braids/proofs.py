@@ -2,45 +2,41 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable
-
-from braidsearch.moves import Conjugate, Move, MoveChain, Rewrite, flype, flype_word, power
+from braidsearch.moves import Move, MoveChain, flype, flype_word, power
 from braidsearch.three_braids.classification import check_strands
 from braidsearch.three_braids.conjugacy import find_three_braid_conjugator, three_braid_class
 from braidsearch.three_braids.flype_family import flype_exponents
 from braidsearch.three_braids.torus_links import SIGNS, UNKNOTS, torus_twists, torus_word
 from braidsearch.words import Braid
-from braidsearch.words.reduction import free_reduce_letters
 
 
 def moves_between(left: Braid, right: Braid) -> list[Move] | None:
     """A chain of Markov moves from left to right; None says that the closures differ.
 
-    Both are on at most 3 strands and of any length; the chain has six moves at most, and each is
-    checked by the normal form. None rests on the theorem of Birman and Menasco that
-    ``link_classes`` names. Raises InputError for braids on more strands.
+    Both are on at most 3 strands and of any length; the chain has seven moves at most. It is a
+    draft, as the stretches of a search are: what makes a proof of it replays it on a checked
+    chain. None rests on the theorem of Birman and Menasco that ``link_classes`` names. Raises
+    InputError for braids on more strands.
     """
     check_strands(left)
     check_strands(right)
     for connect in (_by_conjugation, _by_fewer_strands, _by_flype):
-        moves = connect(left, right)
-        if moves is not None:
-            chain = MoveChain(left)
-            chain.extend(_joined(moves))
+        chain = connect(left, right)
+        if chain is not None:
             return chain.moves
     return None
 
 
-def _by_conjugation(left: Braid, right: Braid) -> list[Move] | None:
+def _by_conjugation(left: Braid, right: Braid) -> MoveChain | None:
     chain = MoveChain(left, is_checked=False)
     if left.strands != right.strands:
         return None
     if left.strands == 3:
-        return chain.moves if _conjugate(chain, right.word) else None
+        return chain if _conjugate(chain, right.word) else None
     if left.exponent_sum != right.exponent_sum:
         return None
     chain.rewrite(right.word)
-    return chain.moves
+    return chain
 
 
 def _conjugate(chain: MoveChain, word: tuple[int, ...]) -> bool:
@@ -51,19 +47,25 @@ def _conjugate(chain: MoveChain, word: tuple[int, ...]) -> bool:
     return by is not None
 
 
-def _by_fewer_strands(left: Braid, right: Braid) -> list[Move] | None:
+def _by_fewer_strands(left: Braid, right: Braid) -> MoveChain | None:
     """Through the 2-braid of a torus link (2, k), or through one strand for the unknot."""
     one, other = _twists(left), _twists(right)
     common = [twists for twists in one if twists in other]
     if common:
-        ways = _to_two_strands(left, common[0]), _to_two_strands(right, common[0])
-    elif one and other and one[0] in UNKNOTS and other[0] in UNKNOTS:
-        ways = _to_two_strands(left, one[0]), _to_two_strands(right, other[0])
-        for way in ways:
-            way.destabilize()
-    else:
-        return None
-    return ways[0].moves + ways[1].reversed_moves()
+        return min((_through(left, right, k, k) for k in common), key=len)
+    if one and other and one[0] in UNKNOTS and other[0] in UNKNOTS:
+        return _through(left, right, one[0], other[0])
+    return None
+
+
+def _through(left: Braid, right: Braid, one: int, other: int) -> MoveChain:
+    """From left to the 2-braid 1^one, and back from 1^other; over one strand where they differ."""
+    chain, back = _to_two_strands(left, one), _to_two_strands(right, other)
+    if one != other:
+        chain.destabilize()
+        back.destabilize()
+    chain.extend(back.reversed_moves())
+    return chain
 
 
 def _twists(braid: Braid) -> list[int]:
@@ -85,7 +87,7 @@ def _to_two_strands(braid: Braid, twists: int) -> MoveChain:
     return chain
 
 
-def _by_flype(left: Braid, right: Braid) -> list[Move] | None:
+def _by_flype(left: Braid, right: Braid) -> MoveChain | None:
     if left.strands != 3 or right.strands != 3:
         return None
     named = three_braid_class(left)
@@ -96,21 +98,4 @@ def _by_flype(left: Braid, right: Braid) -> list[Move] | None:
     _conjugate(chain, flype_word(*exponents))
     flype(chain, *exponents)
     _conjugate(chain, right.word)
-    return chain.moves
-
-
-def _joined(moves: Iterable[Move]) -> list[Move]:
-    """The moves with neighbouring conjugations and rewritings made one."""
-    joined: list[Move] = []
-    for move in moves:
-        last = joined[-1] if joined else None
-        if isinstance(move, Conjugate | Rewrite) and isinstance(last, Conjugate | Rewrite):
-            by = tuple(free_reduce_letters(_conjugator(last) + _conjugator(move)))
-            joined[-1] = Conjugate(by, move.word) if by else Rewrite(move.word)
-        else:
-            joined.append(move)
-    return joined
-
-
-def _conjugator(move: Conjugate | Rewrite) -> tuple[int, ...]:
-    return move.by if isinstance(move, Conjugate) else ()
+    return chain
