@@ -86,7 +86,8 @@ class IntervalFront:
 
         With pivot p, column c, both within E of the truth, |c| <= C - E and |p| >= G + E, the
         product of two true c differs from that of ours by at most 2 C E, and dividing by the
-        other p changes the quotient by at most C^2 E / (|p| G).
+        other p changes the quotient by at most C^2 E / (|p| G). Rounding c / p to the precision
+        adds as many units as c has, and rounding the products one more.
         """
         pivot = self._matrix[vertex, vertex]
         if pivot > 0:
@@ -101,12 +102,14 @@ class IntervalFront:
             largest = self._error
         else:
             column = column[touched]
-            self._matrix[np.ix_(touched, touched)] -= np.outer(column, column) // pivot
+            scaled = (column << self.precision) // pivot
+            products = np.outer(column, scaled) >> self.precision
+            self._matrix[np.ix_(touched, touched)] -= products
             largest = max(map(abs, column)) + self._error
         sure = abs(pivot) - self._error
         spread = 2 * largest * self._error // sure
         spread += largest * largest * self._error // (abs(pivot) * sure)
-        self._error += spread + 3
+        self._error += spread + (largest >> self.precision) + 4
 
     def _release(self, vertex: int) -> None:
         self._matrix[vertex] = 0

@@ -148,9 +148,7 @@ def _signature_of_factor(braid: Braid, order: int, power: int, nullity: int) -> 
     dimension twice the nullity.
     """
     rank = len(braid) - 2 * nullity
-    precision = 64
-    while precision < 4 * len(braid):
-        precision *= 2
+    precision = 64 * (1 + len(braid) // 16)  # errors grow by some 3 bits a letter
     while True:
         front = _kashaev_front(braid, order, power, precision)
         if front.positive + front.negative == rank:

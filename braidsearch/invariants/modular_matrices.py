@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import numpy as np
-from numpy.typing import NDArray
 
 from braidsearch.invariants.modular_polynomials import (
     IntArray,
@@ -50,8 +49,8 @@ def largest_minor(matrix: IntArray, low: int, prime: int) -> tuple[int, IntArray
     rest, rank = matrix, 0
     previous = np.zeros(matrix.shape[2], dtype=np.int64)
     previous[low] = 1
-    while (used := rest.any(axis=2)).any():
-        row, column = _shortest_entry(rest, used)
+    while rest.any():
+        row, column = _shortest_entry(rest)
         pivot = rest[row, column]
         rows = np.delete(rest, row, axis=0)
         others, in_column = np.delete(rows, column, axis=1), rows[:, column]
@@ -62,11 +61,11 @@ def largest_minor(matrix: IntArray, low: int, prime: int) -> tuple[int, IntArray
     return rank, trim(previous)
 
 
-def _shortest_entry(entries: IntArray, used: NDArray[np.bool_]) -> tuple[int, int]:
+def _shortest_entry(entries: IntArray) -> tuple[int, int]:
     """The place of an entry that is not zero with the least difference of exponents."""
     is_term = entries != 0
     first, after_last = is_term.argmax(axis=2), is_term[:, :, ::-1].argmax(axis=2)
-    gaps = np.where(used, first + after_last, -1)
+    gaps = np.where(is_term.any(axis=2), first + after_last, -1)
     row, column = divmod(int(gaps.argmax()), gaps.shape[1])
     return row, column
 
@@ -136,7 +135,7 @@ def _best_pivot(entries: IntArray, ring: QuotientRing) -> tuple[int, int]:
 
 
 def _split_off(entries: IntArray, ring: QuotientRing) -> tuple[IntArray, IntArray]:
-    """Bring the first row and column to zero by unimodular steps; the pivot's divisor, and the rest.
+    """Bring first row and column to zero by unimodular steps; the pivot's divisor, and the rest.
 
     Where the pivot does not divide an entry modulo D, a step puts their greatest common divisor
     in its place. That has less in common with D, so this ends.

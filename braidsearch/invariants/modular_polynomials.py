@@ -22,7 +22,8 @@ def multiply_modulo(left: IntArray, right: IntArray, prime: int) -> IntArray:
     """The product of two polynomials."""
     if not len(left) or not len(right):
         return left[:0]
-    return np.convolve(left, right) % prime
+    product: IntArray = np.convolve(left, right) % prime
+    return product
 
 
 def divide_modulo(left: IntArray, right: IntArray, prime: int) -> tuple[IntArray, IntArray]:
@@ -134,7 +135,8 @@ class QuotientRing:
         table = np.tile(shifted, self.degree)[: self.degree * length]
         products = entries @ table.reshape(self.degree, length) % self.prime
         reduced = products[..., self.degree :] @ self._powers
-        return (products[..., : self.degree] + reduced) % self.prime
+        residues: IntArray = (products[..., : self.degree] + reduced) % self.prime
+        return residues
 
     def common_divisor(self, element: IntArray) -> IntArray:
         """The monic greatest common divisor with the modulus; the modulus itself for zero."""
