@@ -77,7 +77,8 @@ def _check_component(number: int, count: int) -> None:
 def _with_component_at(braid: Braid, component: int, position: int) -> Braid:
     """A conjugate in which the component passes the position: its strand is led there and back."""
     _check_component(component, braid.components)
-    start = braid.component_cycles[component][0] + 1
+    cycle = braid.component_cycles[component]
+    start = position if position - 1 in cycle else cycle[0] + 1
     if start <= position:
         back = tuple(range(start, position))
     else:
