@@ -66,8 +66,8 @@ def pretzel_link(*columns: int) -> LinkDiagram:
     positive where both strands run the same way. ``pretzel_link(-2, 3, 7)`` has only positive
     crossings, ``pretzel_link(1, 1, 1)`` is the left-handed trefoil. Columns may be moved
     cyclically, and their order reversed; two columns a, b are the torus link T(2, a + b), up to
-    orientation, and one column is the unknot. The outermost strand runs down the left of the first column; every
-    other component runs down the right of the first column where it is met.
+    orientation, and one column is the unknot. The outermost strand runs down the left of the
+    first column; every other component runs down the right of the first column where it is met.
 
     Raises InputError for no columns.
     """
