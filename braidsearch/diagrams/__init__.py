@@ -8,11 +8,13 @@ from braidsearch.diagrams.arc_presentation import (
 )
 from braidsearch.diagrams.closed_braid_diagram import closed_braid_diagram
 from braidsearch.diagrams.codes import (
+    NOTATIONS,
     dowker_thistlethwaite_code,
     format_dowker_thistlethwaite_code,
     format_gauss_code,
     format_planar_diagram_code,
     gauss_code,
+    parse_code,
     parse_dowker_thistlethwaite_code,
     parse_gauss_code,
     parse_planar_diagram_code,
@@ -23,6 +25,7 @@ from braidsearch.diagrams.reidemeister import simplify_diagram
 from braidsearch.diagrams.vogel import braid_from_diagram
 
 __all__ = [
+    "NOTATIONS",
     "ArcMove",
     "ArcMoveKind",
     "ArcPresentation",
@@ -38,6 +41,7 @@ __all__ = [
     "format_gauss_code",
     "format_planar_diagram_code",
     "gauss_code",
+    "parse_code",
     "parse_dowker_thistlethwaite_code",
     "parse_gauss_code",
     "parse_planar_diagram_code",

@@ -59,6 +59,7 @@ class SeifertCircles:
         self.circle = [
             circle_of_arc[arc] for crossing in diagram.crossings for arc in crossing.arcs
         ]
+        self.strands = diagram.seifert_circle_count
         self.parent = list(range(len(diagram.seifert_circles)))
 
     def make_coherent(self) -> None:
@@ -122,7 +123,7 @@ class SeifertCircles:
         upper = lower + 4
         if len(self.signs) + 2 > MAX_LETTERS:
             raise CapacityError(
-                f"a diagram whose braid on {len(self.parent)} strands has more than "
+                f"a diagram whose braid on {self.strands} strands has more than "
                 f"{MAX_LETTERS} letters: expected at most so many"
             )
         opposite += [-1] * 8

@@ -110,9 +110,7 @@ def bracket_value(diagram: LinkDiagram, variable: int, modulus: int) -> int:
 
 def jones_value(polynomial: Polynomial, variable: int, modulus: int) -> int:
     """The value of a Jones polynomial in half powers of t at t^(1/2) = A^-2, A = ``variable``."""
-    return (
-        sum(c * pow(variable, -2 * exponent, modulus) for exponent, c in polynomial) % modulus
-    )
+    return sum(c * pow(variable, -2 * exponent, modulus) for exponent, c in polynomial) % modulus
 
 
 def _too_wide(title: str, diagram: LinkDiagram, sweep: Sweep) -> str:

@@ -10,7 +10,9 @@ from math import comb
 from braidsearch.diagrams.link_diagram import LinkDiagram
 
 _STARTS = 12
-"""So many crossings are tried as the first one, spread over the diagram."""
+_LARGEST_EFFORT = 20_000
+"""At most so many crossings are tried as the first one, spread over the diagram; fewer where
+all the sweeps together would pass more crossings than this."""
 
 
 @dataclass(frozen=True)
@@ -40,7 +42,8 @@ class Sweep:
 def sweep_diagram(diagram: LinkDiagram) -> Sweep:
     """The cheapest of several sweeps of the whole diagram, by ``state_count``."""
     count = len(diagram.crossings)
-    starts = sorted({count * number // _STARTS for number in range(_STARTS)}) if count else []
+    tries = min(_STARTS, 1 + _LARGEST_EFFORT // max(count, 1))
+    starts = sorted({count * number // tries for number in range(tries)}) if count else []
     sweeps = [_sweep_from(diagram, start) for start in starts]
     return min(sweeps, key=lambda sweep: sweep.state_count, default=Sweep((), ()))
 

@@ -16,7 +16,7 @@ LAYERS: tuple[frozenset[str], ...] = (
     frozenset({"command_line"}),
     frozenset({"ledger", "drawing"}),
     frozenset({"search"}),
-    frozenset({"certificates", "arc_walk"}),
+    frozenset({"certificates", "arc_walk", "weaving"}),
     frozenset({"three_braids"}),
     frozenset({"invariants", "moves"}),
     frozenset({"normal_form"}),

@@ -10,6 +10,7 @@ from braidsearch.diagrams.codes.gauss_code import (
     gauss_code,
     parse_gauss_code,
 )
+from braidsearch.diagrams.codes.notations import NOTATIONS, parse_code
 from braidsearch.diagrams.codes.planar_diagram_code import (
     format_planar_diagram_code,
     parse_planar_diagram_code,
@@ -17,11 +18,13 @@ from braidsearch.diagrams.codes.planar_diagram_code import (
 )
 
 __all__ = [
+    "NOTATIONS",
     "dowker_thistlethwaite_code",
     "format_dowker_thistlethwaite_code",
     "format_gauss_code",
     "format_planar_diagram_code",
     "gauss_code",
+    "parse_code",
     "parse_dowker_thistlethwaite_code",
     "parse_gauss_code",
     "parse_planar_diagram_code",
