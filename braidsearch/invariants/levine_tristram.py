@@ -10,7 +10,7 @@ from braidsearch.invariants.roots_of_unity import fixed_point_cosine, root_modul
 from braidsearch.words.braid import Braid
 
 LARGEST_ORDER = 60
-_LARGEST_WORK = 10**9
+_LARGEST_COST = 3e3
 
 
 def levine_tristram_signature(braid: Braid, order: int, power: int) -> list[int]:
@@ -44,20 +44,19 @@ def levine_tristram_signature(braid: Braid, order: int, power: int) -> list[int]
 
 def estimated_cost(braid: Braid, order: int) -> float:
     """Seconds that ``levine_tristram_signature`` needs, to within a factor of a few."""
-    factors = closure_pieces(braid).factors
-    return 2e-5 + sum(
-        5e-5 * len(factor) + 2e-7 * _work(factor) + 1e-8 * totient(order) for factor in factors
-    )
+    return 2e-5 + sum(_factor_cost(factor, order) for factor in closure_pieces(braid).factors)
 
 
 def is_applicable(braid: Braid, order: int) -> bool:
     """Whether ``levine_tristram_signature`` answers for this braid at roots of this order."""
-    within = sum(map(_work, closure_pieces(braid).factors)) <= _LARGEST_WORK
-    return within and 2 <= order <= LARGEST_ORDER
+    return 2 <= order <= LARGEST_ORDER and estimated_cost(braid, order) <= _LARGEST_COST
 
 
-def _work(braid: Braid) -> int:
-    return len(braid) * braid.strands**2
+def _factor_cost(braid: Braid, order: int) -> float:
+    letters, strands = len(braid), braid.strands
+    elimination = 1e-7 * strands * letters**2 * (1 + letters / 600)
+    rank = 1e-9 * strands * letters**2 * totient(order)
+    return 1.5e-5 * letters + elimination + rank
 
 
 def _check_root(order: int, power: int) -> None:

@@ -14,6 +14,8 @@ from math import gcd
 
 import numpy as np
 import sympy
+from sympy.polys.matrices import DomainMatrix
+from sympy.polys.matrices.normalforms import invariant_factors
 
 from braidsearch.words import Braid
 from tests.invariants.oracles import seifert_matrix, strand_paths
@@ -86,6 +88,17 @@ def module_by_minors(braid: Braid, prime: int) -> list[list[int]]:
             factors.append(factor)
         previous = common
     return factors
+
+
+def module_by_sympy(matrix: Sequence[Sequence[int]], prime: int) -> list[list[int]]:
+    """The invariant factors of t V - V^T for a Seifert matrix V, by sympy's Smith normal form."""
+    ring = sympy.GF(prime)[T]
+    t = ring.from_sympy(T)
+    size = range(len(matrix))
+    entries = [[t * ring(matrix[i][j]) - ring(matrix[j][i]) for j in size] for i in size]
+    found = invariant_factors(DomainMatrix(entries, (len(matrix), len(matrix)), ring))
+    factors = [_without_units(_modular(ring.to_sympy(factor), prime), prime) for factor in found]
+    return [factor for factor in factors if len(factor) != 1]
 
 
 def _modular(expression: sympy.Expr, prime: int) -> sympy.Poly:
