@@ -25,8 +25,9 @@ def check_polygons(polygons: Iterable[Any]) -> list[Polygon]:
     """The polygons as arrays of n x 3 doubles, a last row that repeats the first left out.
 
     Whatever numpy makes an array of is taken, integers as long as doubles hold them exactly.
-    Raises InputError, in one line that names polygon and row (from 1), for what is not rows of
-    three finite numbers, for a polygon of fewer than three vertices, and for no polygon at all.
+    Raises InputError, in one line that names component and row (from 1), for what is not rows of
+    three finite numbers, for fewer than three vertices, for a row twice in succession, and for no
+    polygon at all.
     """
     checked = [_check_polygon(polygon, k) for k, polygon in enumerate(polygons, start=1)]
     if not checked:
@@ -43,12 +44,19 @@ def _check_polygon(polygon: Any, number: int) -> Polygon:
     if len(unfit):
         row = int(unfit[0])
         shown = " ".join(map(str, rows[row].tolist()))
-        raise InputError(f"polygon {number}, row {row + 1}: {shown}: {_EXPECTED}")
+        raise InputError(f"component {number}, row {row + 1}: {shown}: {_EXPECTED}")
     if len(rows) > 1 and (rows[0] == rows[-1]).all():
         rows = rows[:-1]
     if len(rows) < 3:
         points = "1 point" if len(rows) == 1 else f"{len(rows)} points"
-        raise InputError(f"polygon {number}: {points}: expected at least three")
+        raise InputError(f"component {number}: {points}: expected at least three")
+    repeated = np.flatnonzero((rows[1:] == rows[:-1]).all(axis=1))
+    if len(repeated):
+        row = int(repeated[0]) + 2
+        raise InputError(
+            f"component {number}, row {row}: the same point as the row before: "
+            "expected polygons that do not meet themselves"
+        )
     rows.flags.writeable = False
     return rows
 
@@ -60,16 +68,24 @@ def _as_rows(polygon: Any, number: int) -> Polygon:
             raise TypeError
         rows = np.array(given, dtype=np.float64)
     except (TypeError, ValueError, OverflowError):
-        raise InputError(f"polygon {number}: {_first_bad_row(polygon)}") from None
+        raise InputError(f"component {number}: {_first_bad_row(polygon)}") from None
     if rows.ndim != 2 or rows.shape[1] != 3:
-        raise InputError(f"polygon {number}, an array of shape {rows.shape}: expected n rows x y z")
-    if given.dtype.kind in "iuO" and not (given == rows).all():
-        row = int(np.flatnonzero((given != rows).any(axis=1))[0])
-        raise InputError(
-            f"polygon {number}, row {row + 1}: {' '.join(map(str, given[row]))}: "
-            "expected integers that a double holds exactly"
-        )
+        shape = f"an array of shape {rows.shape}"
+        raise InputError(f"component {number}, {shape}: expected n rows x y z")
+    if given.dtype.kind in "iuO":
+        _check_held_exactly(given, rows, number)
     return rows
+
+
+def _check_held_exactly(given: NDArray[Any], rows: Polygon, number: int) -> None:
+    """Whether the doubles are the numbers given, which Python compares without rounding."""
+    pairs = zip(given.ravel().tolist(), rows.ravel().tolist(), strict=True)
+    for place, (number_given, double) in enumerate(pairs):
+        if number_given != double and np.isfinite(double):
+            raise InputError(
+                f"component {number}, row {place // 3 + 1}: {str(number_given)[:40]}: "
+                "expected numbers that a double holds exactly"
+            )
 
 
 def _first_bad_row(polygon: Any) -> str:
