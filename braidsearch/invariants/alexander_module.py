@@ -12,7 +12,7 @@ from braidsearch.words.braid import Braid
 from braidsearch.words.reduction import cyclic_reduce
 
 LARGEST_PRIME = 1000
-_LARGEST_WORK = 10**10
+_LARGEST_COST = 3e3
 
 
 def alexander_module_factors(braid: Braid, prime: int) -> list[list[int]]:
@@ -48,16 +48,15 @@ def alexander_module_factors(braid: Braid, prime: int) -> list[list[int]]:
 
 def estimated_cost(braid: Braid, prime: int) -> float:
     """Seconds that ``alexander_module_factors`` needs, to within a factor of a few."""
-    return 1e-4 * prime**0 + 1e-9 * _work(braid)
+    letters, strands = len(braid), braid.strands
+    arrays = 2e-5 * strands * letters + 1e-7 * strands**3 * letters
+    entries = 2e-9 * strands**2 * letters**2
+    return 1e-4 + (arrays + entries) * (1.0 if prime < 100 else 1.3)
 
 
 def is_applicable(braid: Braid, prime: int) -> bool:
     """Whether ``alexander_module_factors`` answers for this braid modulo this prime."""
-    return _work(braid) <= _LARGEST_WORK and prime <= LARGEST_PRIME
-
-
-def _work(braid: Braid) -> int:
-    return (len(braid) + 10) ** 2 * braid.strands**3
+    return prime <= LARGEST_PRIME and estimated_cost(braid, prime) <= _LARGEST_COST
 
 
 def burau_less_one(braid: Braid, prime: int) -> tuple[IntArray, int]:

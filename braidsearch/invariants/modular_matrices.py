@@ -11,6 +11,7 @@ from braidsearch.invariants.modular_polynomials import (
     greatest_common_divisor,
     monic,
     multiply_modulo,
+    split_repeated,
     trim,
     without_powers_of_t,
 )
@@ -31,10 +32,16 @@ def invariant_factors(matrix: IntArray, low: int, prime: int) -> list[list[int]]
     rank, minor = largest_minor(matrix, low, prime)
     modulus = monic(without_powers_of_t(minor), prime)
     free = len(matrix) - rank
+    single = modulus[:0]
+    if not free:
+        single, modulus = split_repeated(modulus, prime)
     torsion: list[IntArray] = []
     if len(modulus) > 1:
         divisors = _diagonal_divisors(matrix, QuotientRing(modulus, prime))
-        torsion = divisor_chain(divisors, prime)[: len(matrix) - free]
+        torsion = divisor_chain(divisors, prime)[:rank]
+    if len(single) > 1:
+        last = torsion.pop() if torsion else single[-1:]
+        torsion.append(multiply_modulo(last, single, prime))
     factors = [factor.tolist() for factor in torsion if len(factor) > 1]
     return factors + [[] for _ in range(free)]
 

@@ -91,6 +91,21 @@ def without_powers_of_t(polynomial: IntArray) -> IntArray:
     return polynomial[used[0] :] if len(used) else polynomial
 
 
+def split_repeated(polynomial: IntArray, prime: int) -> tuple[IntArray, IntArray]:
+    """The products of the powers of irreducibles that divide it once, and more than once.
+
+    What divides it more than once divides its derivative too, in any characteristic. The
+    polynomial is monic and not zero.
+    """
+    derivative = trim(np.arange(len(polynomial)) * polynomial % prime)[1:]
+    common = greatest_common_divisor(polynomial, derivative, prime)
+    single = polynomial
+    while len(common) > 1:
+        single = divide_modulo(single, common, prime)[0]
+        common = greatest_common_divisor(single, common, prime)
+    return single, divide_modulo(polynomial, single, prime)[0]
+
+
 class QuotientRing:
     """The ring of polynomials modulo a monic one of positive degree, over the field of p elements.
 

@@ -127,9 +127,34 @@ def multiply_all(factors: list[list[int]], prime: int) -> list[int]:
 
 
 def degree_in_common(factor: list[int], other: list[int], prime: int) -> int:
-    """The degree of the greatest common divisor modulo the prime; [] is zero."""
-    first = sympy.Poly(factor[::-1] or [0], T, modulus=prime)
-    return int(sympy.gcd(first, sympy.Poly(other[::-1], T, modulus=prime)).degree())
+    """The degree of the greatest common divisor modulo the prime, by Euclid; [] is zero."""
+    while factor:
+        scale = pow(factor[-1], -1, prime)
+        rest = list(other)
+        while len(rest) >= len(factor):
+            multiple, shift = rest[-1] * scale, len(rest) - len(factor)
+            for place, c in enumerate(factor):
+                rest[shift + place] = (rest[shift + place] - multiple * c) % prime
+            while rest and not rest[-1]:
+                rest.pop()
+        factor, other = rest, factor
+    return len(other) - 1
+
+
+def direct_sum(factors: list[list[int]], prime: int) -> list[list[int]]:
+    """The invariant factors of the sum of cyclic modules, by powers of irreducibles (sympy)."""
+    torsion = [factor for factor in factors if factor]
+    exponents: dict[sympy.Poly, list[int]] = {}
+    for place, factor in enumerate(torsion):
+        polynomial = sympy.Poly(factor[::-1], T, modulus=prime)
+        for irreducible, power in polynomial.factor_list()[1]:
+            exponents.setdefault(irreducible, [0] * len(torsion))[place] = power
+    products = [sympy.Poly(1, T, modulus=prime) for _ in torsion]
+    for irreducible, powers in exponents.items():
+        for place, power in enumerate(sorted(powers)):
+            products[place] *= irreducible**power
+    chain = [_without_units(product, prime) for product in products]
+    return [factor for factor in chain if len(factor) > 1] + [[]] * (len(factors) - len(torsion))
 
 
 def count_linear_colourings(braid: Braid, modulus: list[int], prime: int) -> int:
