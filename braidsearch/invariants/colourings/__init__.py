@@ -7,11 +7,13 @@ from braidsearch.invariants.colourings.counting import (
     is_applicable,
     verification_seconds,
 )
+from braidsearch.invariants.colourings.ladder import group_ladder
 
 __all__ = [
     "Colours",
     "count_colourings",
     "estimated_cost",
+    "group_ladder",
     "is_applicable",
     "verification_seconds",
 ]
