@@ -8,6 +8,14 @@ are the same link when q' is q or its inverse, modulo p for knots and modulo 2 p
 (Schubert, Knoten mit zwei Brücken, 1956). Every q is compared with the first of its class, and the
 first ones of different classes with each other. A wrong outcome ends with status 1; open pairs
 are listed.
+
+Measured on one of two shared cores:
+
+    same by the theorem: {'same': 131}
+      seconds: median 0.17, nine in ten 4.25, at most 43.82
+    different by the theorem: {'different': 1094}
+      seconds: median 0.04, nine in ten 0.23, at most 8.63
+    1225 pairs, 439 s
 """
 
 import argparse
@@ -90,7 +98,8 @@ def main() -> None:
                 print(f"p = {case[1]}, q = {case[2]}, {case[3]}: {case[0]}, found {outcome}")
     for expected in ("same", "different"):
         found = {outcome: n for (wanted, outcome), n in counts.items() if wanted == expected}
-        print(f"{expected} by the theorem: {found}; seconds: {spread(times[expected], '.2f')}")
+        print(f"{expected} by the theorem: {found}")
+        print("  seconds:", spread(times[expected], ".2f"))
     print(f"{len(tasks)} pairs, {time.perf_counter() - start:.0f} s")
     raise SystemExit(1 if wrong else 0)
 

@@ -3,21 +3,17 @@
 from __future__ import annotations
 
 from collections.abc import Iterable, Sequence
-from typing import TYPE_CHECKING, Any
+from typing import Any
 
 import numpy as np
 from numpy.typing import NDArray
 
 from braidsearch.errors import InputError
 
-if TYPE_CHECKING:
-    from braidsearch.diagrams.polygons.box_tree import Edges
-
 Polygon = NDArray[np.float64]
 
 MAX_VERTICES = 100_000
 
-_LOWEST_BIT = -340
 _EXPECTED = "expected three finite numbers x y z"
 
 
@@ -98,59 +94,3 @@ def _first_bad_row(polygon: Any) -> str:
             if not fits:
                 return f"row {i}: {str(row)[:40]}: {_EXPECTED}"
     return "expected an array of n rows x y z"
-
-
-def work_arrays(polygons: Sequence[Polygon]) -> tuple[Edges, int]:
-    """The arrays of all polygons, and the power of two by which coordinates were divided.
-
-    Afterwards the largest is less than 1, and every difference of two is exact to the last bit
-    that ``exact_signs`` asks for. Raises InputError for coordinates so different in size that
-    this cannot be.
-    """
-    from braidsearch.diagrams.polygons.box_tree import Edges, build_tree  # noqa: PLC0415 - compiled
-    from braidsearch.diagrams.polygons.exact_signs import EXTRA_POINTS  # noqa: PLC0415 - compiled
-
-    coordinates = np.concatenate(polygons)
-    power = _power_above(coordinates)
-    count = len(coordinates)
-    points = np.zeros((count + EXTRA_POINTS, 3))
-    points[:count] = np.ldexp(coordinates, -power)
-    points[count + 1 : count + 4] = np.eye(3)
-    follows, precedes = np.arange(1, count + 1), np.arange(-1, count - 1)
-    sizes = np.array([len(polygon) for polygon in polygons])
-    ends = np.cumsum(sizes)
-    follows[ends - 1], precedes[ends - sizes] = ends - sizes, ends - 1
-    leaves = 1 << (count - 1).bit_length()
-    edges = Edges(
-        points.ravel(),
-        follows,
-        precedes,
-        np.repeat(np.arange(len(sizes)), sizes),
-        sizes,
-        np.zeros(6 * leaves),
-        np.zeros(6 * leaves),
-        np.zeros(3),
-        np.zeros(3),
-    )
-    build_tree(edges)
-    return edges, power
-
-
-def _power_above(coordinates: Polygon) -> int:
-    """The least power of two above all sizes; checks how far below it the last bits lie."""
-    significands, powers = np.frexp(coordinates)
-    digits = np.abs(np.ldexp(significands, 53)).astype(np.int64)
-    used = digits > 0
-    if not used.any():
-        return 0
-    power = int(powers[used].max())
-    last = np.frexp((digits & -digits).astype(np.float64))[1] - 1  # trailing zeros
-    lowest = np.where(used, powers - 53 + last, power)
-    place = np.unravel_index(int(lowest.argmin()), lowest.shape)
-    if lowest[place] - power < _LOWEST_BIT:
-        largest = float(np.abs(coordinates).max())
-        raise InputError(
-            f"coordinates {float(coordinates[place])!r} and {largest!r} together: "
-            "expected sizes within a factor of 10^80 of each other"
-        )
-    return power

@@ -1,4 +1,4 @@
-"""Polygons as arrays, with a binary tree of bounding boxes over their edges.
+"""A binary tree of bounding boxes over the edges of polygons.
 
 Edge i runs from vertex i to the vertex that follows it and is leaf ``leaves + i``; node k has the
 children 2 k and 2 k + 1, and its box holds theirs. Neighbours along a curve are neighbours in
@@ -7,30 +7,9 @@ least and largest coordinates, which no rounding touches; the box of a missing e
 """
 
 from math import inf
-from typing import NamedTuple
 
 from braidsearch.compiling import compiled
-from braidsearch.diagrams.polygons.exact_signs import Numbers
-
-
-class Edges(NamedTuple):
-    """The arrays that the loops work on; v vertices, in p polygons.
-
-    ``points``: 3 (v + 5) coordinates, see ``exact_signs``; ``follows`` and ``precedes``: for each
-    vertex its neighbours, -1 once it is removed; ``polygon``: for each vertex the number of its
-    polygon; ``sizes``: for each polygon its vertices; ``low`` and ``high``: the boxes of the
-    tree, 6 numbers for each leaf; ``query_low`` and ``query_high``: the box asked for.
-    """
-
-    points: Numbers
-    follows: Numbers
-    precedes: Numbers
-    polygon: Numbers
-    sizes: Numbers
-    low: Numbers
-    high: Numbers
-    query_low: Numbers
-    query_high: Numbers
+from braidsearch.diagrams.polygons.edges import Edges
 
 
 @compiled

@@ -1,14 +1,9 @@
 """The crossings that polygons show when they are projected along a direction."""
 
 from braidsearch.compiling import compiled
-from braidsearch.diagrams.polygons.box_tree import Edges, ask_for_edge, edge_after, next_edge
-from braidsearch.diagrams.polygons.exact_signs import (
-    AXES,
-    DIRECTION,
-    EXTRA_POINTS,
-    Numbers,
-    determinant_sign,
-)
+from braidsearch.diagrams.polygons.box_tree import ask_for_edge, edge_after, next_edge
+from braidsearch.diagrams.polygons.edges import AXES, DIRECTION, EXTRA_POINTS, Edges, Numbers
+from braidsearch.diagrams.polygons.exact_signs import determinant_sign
 
 NOT_GENERAL = -1
 

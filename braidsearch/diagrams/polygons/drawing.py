@@ -3,17 +3,17 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
-from typing import TYPE_CHECKING, Any
+from typing import Any
 
 import numpy as np
 
 from braidsearch.diagrams.link_diagram import Crossing, LinkDiagram
-from braidsearch.diagrams.polygons.arrays import Polygon, check_polygons, work_arrays
+from braidsearch.diagrams.polygons.arrays import Polygon, check_polygons
+from braidsearch.diagrams.polygons.edges import Edges, work_arrays
+from braidsearch.diagrams.polygons.loops import load_loops
+from braidsearch.diagrams.polygons.passages import passages_in_order
+from braidsearch.diagrams.polygons.projection import Projection, project_polygons
 from braidsearch.errors import CapacityError, InputError
-
-if TYPE_CHECKING:
-    from braidsearch.diagrams.polygons.box_tree import Edges
-    from braidsearch.diagrams.polygons.projection import Projection
 
 _MOST_SEEDS = 20
 
@@ -30,13 +30,9 @@ def polygon_diagram(
     Raises InputError for what is no polygon (see ``check_polygons``) and for polygons that meet
     themselves or each other, and CapacityError for too many crossings.
     """
-    edges, _ = embedded_edges(polygons)
+    _, edges = embedded_edges(polygons)
     if is_simplified:
-        from braidsearch.diagrams.polygons.reduction import (  # noqa: PLC0415 - compiled
-            remove_all_vertices,
-        )
-
-        remove_all_vertices(edges)
+        load_loops().remove_all_vertices(edges)
     return _draw(edges, seed, max(1, directions))
 
 
@@ -47,29 +43,23 @@ def simplify_polygons(polygons: Iterable[Any]) -> list[Polygon]:
     free of everything else is an unknot split from the rest, and remains as that triangle. Raises
     InputError as ``polygon_diagram`` does.
     """
-    from braidsearch.diagrams.polygons.reduction import (  # noqa: PLC0415 - compiled
-        remove_all_vertices,
-    )
-
-    given = check_polygons(polygons)
-    edges, power = embedded_edges(given)
-    remove_all_vertices(edges)
+    power, edges = embedded_edges(polygons)
+    load_loops().remove_all_vertices(edges)
     points = np.ldexp(edges.points.reshape(-1, 3), power)
     return [points[loop] for loop in _loops(edges)]
 
 
-def embedded_edges(polygons: Iterable[Any]) -> tuple[Edges, int]:
-    """The arrays of polygons that were found to meet neither themselves nor each other."""
-    from braidsearch.diagrams.polygons.reduction import first_meeting  # noqa: PLC0415 - compiled
-
-    edges, power = work_arrays(check_polygons(polygons))
-    first, second = first_meeting(edges)
+def embedded_edges(polygons: Iterable[Any]) -> tuple[int, Edges]:
+    """As ``work_arrays``, for polygons that were found to meet neither themselves nor others."""
+    power, edges = work_arrays(check_polygons(polygons))
+    load_loops().build_tree(edges)
+    first, second = load_loops().first_meeting(edges)
     if first >= 0:
         raise InputError(
             f"the edge from {_row(edges, first)} meets the one from {_row(edges, second)}: "
             "expected polygons that meet neither themselves nor each other"
         )
-    return edges, power
+    return power, edges
 
 
 def _row(edges: Edges, vertex: int) -> str:
@@ -93,9 +83,6 @@ def _loops(edges: Edges) -> list[list[int]]:
 
 
 def _draw(edges: Edges, seed: int, directions: int) -> LinkDiagram:
-    from braidsearch.diagrams.polygons.passages import passages_in_order  # noqa: PLC0415 - compiled
-    from braidsearch.diagrams.polygons.projection import project_polygons  # noqa: PLC0415
-
     for attempt in range(_MOST_SEEDS):
         projection = project_polygons(edges, seed + attempt * 1_000_003, directions)
         passages = passages_in_order(edges, projection)

@@ -10,17 +10,10 @@ differences underflows, and the arithmetic below is exact where it says so.
 
 # ruff: noqa: PLR0913, PLR0917 - loose arguments, since compiled loops take no objects of ours
 
-from typing import Any
-
 import numpy as np
 
 from braidsearch.compiling import compiled
-
-Numbers = Any  # arrays for the compiled loops; anything with an index for the plain ones
-
-AXES = 1  # the unit vectors, counted from the origin
-DIRECTION = 4  # the direction of projection, counted from the origin
-EXTRA_POINTS = 5
+from braidsearch.diagrams.polygons.edges import AXES, Numbers
 
 _SPLITTER = 134217729.0  # 2^27 + 1
 _ROUNDING = 2.0**-49

@@ -3,7 +3,8 @@
 # ruff: noqa: PLR0913, PLR0917 - loose arguments, since compiled loops take no objects of ours
 
 from braidsearch.compiling import compiled
-from braidsearch.diagrams.polygons.exact_signs import Numbers, facing_axis, side, turn
+from braidsearch.diagrams.polygons.edges import Numbers
+from braidsearch.diagrams.polygons.exact_signs import facing_axis, side, turn
 
 
 @compiled

@@ -7,7 +7,7 @@ from fractions import Fraction
 import numpy as np
 from numpy.typing import NDArray
 
-from braidsearch.diagrams.polygons.box_tree import Edges
+from braidsearch.diagrams.polygons.edges import Edges
 from braidsearch.diagrams.polygons.projection import Projection
 
 _ROUNDING = 2.0**-49

@@ -8,13 +8,8 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 
-from braidsearch.diagrams.polygons.box_tree import Edges, build_tree
-from braidsearch.diagrams.polygons.crossings import (
-    NOT_GENERAL,
-    find_crossings,
-    find_heights,
-)
-from braidsearch.diagrams.polygons.exact_signs import DIRECTION, EXTRA_POINTS
+from braidsearch.diagrams.polygons.edges import DIRECTION, EXTRA_POINTS, Edges
+from braidsearch.diagrams.polygons.loops import load_loops
 from braidsearch.errors import CapacityError
 
 Integers = NDArray[np.int64]
@@ -69,7 +64,7 @@ def project_polygons(edges: Edges, seed: int, directions: int) -> Projection:
         )
     _set_direction(edges, best_direction)
     signs, tops = np.zeros(len(best), np.int64), np.zeros(len(best), np.int64)
-    find_heights(edges, best.ravel(), signs, tops)
+    load_loops().find_heights(edges, best.ravel(), signs, tops)
     return Projection(best_direction, best, signs, tops)
 
 
@@ -98,8 +93,8 @@ def _crossing_pairs(edges: Edges, direction: tuple[int, int, int], most: int) ->
     room = min(most, 1 << 12)
     while True:
         pairs = np.zeros(2 * room, np.int64)
-        count = find_crossings(edges, plane, pairs)
-        if count == NOT_GENERAL:
+        count = load_loops().find_crossings(edges, plane, pairs)
+        if count < 0:
             return None
         if count <= room:
             return pairs[: 2 * count].reshape(-1, 2)
@@ -127,7 +122,7 @@ def _image_tree(edges: Edges, direction: tuple[int, int, int]) -> Edges:
         query_low=np.zeros(3),
         query_high=np.zeros(3),
     )
-    build_tree(plane)
+    load_loops().build_tree(plane)
     plane.low[:] -= _WIDENING
     plane.high[:] += _WIDENING
     return plane

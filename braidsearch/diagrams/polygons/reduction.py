@@ -2,13 +2,13 @@
 
 from braidsearch.compiling import compiled
 from braidsearch.diagrams.polygons.box_tree import (
-    Edges,
     ask_for_edge,
     edge_after,
     next_edge,
     update_edge,
 )
-from braidsearch.diagrams.polygons.exact_signs import EXTRA_POINTS, facing_axis
+from braidsearch.diagrams.polygons.edges import EXTRA_POINTS, Edges
+from braidsearch.diagrams.polygons.exact_signs import facing_axis
 from braidsearch.diagrams.polygons.meetings import (
     is_between,
     leads_into_corner,

@@ -1,6 +1,6 @@
 """Polygons for the tests, and an independent count of what their projections show.
 
-The crossings here are found by fractions along a coordinate-like direction of the test's own,
+The crossings here are found by fractions along a direction of the test's own,
 edge against edge, without the trees, filters and moves of the package.
 """
 
@@ -96,14 +96,14 @@ def exact_crossings(polygon, direction):
 
 
 def exact_determinant(polygon, direction):
-    """The determinant of the knot: a minor of the colouring matrix, by integers modulo nothing.
+    """The determinant of a knot: a minor of the colouring matrix of one of its projections.
 
     Each crossing says that twice the colour of the over-strand is the sum of those of the two
     under-strands (Fox, 1962); the strands run from one under-passage to the next.
     """
     crossings = exact_crossings(polygon, direction)
     unders = sorted((edge, place) for _, _, edge, place in crossings)
-    if not unders:
+    if len(unders) < 2:
         return 1
     rows = []
     for over, over_place, under, place in crossings:
