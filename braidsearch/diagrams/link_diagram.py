@@ -84,8 +84,9 @@ class LinkDiagram:
         _check_crossings(self.crossings)
         for piece, genus in zip(self.pieces, self.genera, strict=True):
             if genus:
+                plural = "s" * (len(piece) != 1)
                 raise InputError(
-                    f"the piece of crossing {piece[0] + 1}, {len(piece)} crossings in all: "
+                    f"the piece of crossing {piece[0] + 1}, {len(piece)} crossing{plural} in all: "
                     f"expected a planar diagram, found one of genus {genus}"
                 )
 

@@ -71,7 +71,8 @@ class _Reading:
     def cut_through(self, row: Sequence[int]) -> list[int]:
         """One arc of each circle, by its first end, that a ray from inside to outside crosses.
 
-        Neighbours in the row have a face between them, on whose border both of their arcs lie.
+        Neighbours in the row have a face between them, on whose border both of their arcs lie; it
+        is beyond the face between the circles before, or the row does not lead outwards.
         """
         start = self.circles[row[0]][0]
         if self._find_in_face(start, row[1]) < 0:
@@ -79,6 +80,8 @@ class _Reading:
         ends = [start]
         for circle in row[1:]:
             found = self._find_in_face(ends[-1], circle)
+            if found < 0:
+                raise ArithmeticError("the Seifert circles of a piece do not lie in a row")
             ends.append(self.opposite[found])  # seen from the face beyond
         return [end if self._is_exit(end) else self.opposite[end] for end in ends]
 

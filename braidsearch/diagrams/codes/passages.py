@@ -74,8 +74,9 @@ def planar_signs(components: Sequence[Sequence[Passage]], crossing_count: int) -
             graph.add_edge((crossing, 2 + is_over), (following, 0 + is_next_over))
     is_planar, embedding = networkx.check_planarity(graph)
     if not is_planar:
+        plural = "s" * (crossing_count != 1)
         raise InputError(
-            f"a code of {crossing_count} crossings that no planar diagram has: "
+            f"a code of {crossing_count} crossing{plural} that no planar diagram has: "
             "expected the code of a diagram in the plane"
         )
     signs = [_sign_at_hub(list(embedding.neighbors_cw_order(x))) for x in range(crossing_count)]
