@@ -48,10 +48,10 @@ def alexander_module_factors(braid: Braid, prime: int) -> list[list[int]]:
 
 def estimated_cost(braid: Braid, prime: int) -> float:
     """Seconds that ``alexander_module_factors`` needs, to within a factor of a few."""
-    letters, strands = len(braid), braid.strands
+    letters, strands = len(cyclic_reduce(braid)[0]), braid.strands
     arrays = 2e-5 * strands * letters + 1e-7 * strands**3 * letters
     entries = 2e-9 * strands**2 * letters**2
-    return 1e-4 + (arrays + entries) * (1.0 if prime < 100 else 1.3)
+    return 1e-4 + 1e-7 * len(braid) + (arrays + entries) * (1.0 if prime < 100 else 1.3)
 
 
 def is_applicable(braid: Braid, prime: int) -> bool:

@@ -11,6 +11,7 @@ from braidsearch.words.braid import Braid
 
 LARGEST_ORDER = 60
 _LARGEST_COST = 3e3
+_FIRST_BITS = 64
 
 
 def levine_tristram_signature(braid: Braid, order: int, power: int) -> list[int]:
@@ -147,7 +148,7 @@ def _signature_of_factor(braid: Braid, order: int, power: int, nullity: int) -> 
     dimension twice the nullity.
     """
     rank = len(braid) - 2 * nullity
-    precision = 64 * (1 + len(braid) // 16)  # errors grow by some 3 bits a letter
+    precision = _FIRST_BITS * (1 + len(braid) // 16)  # errors grow by some 3 bits a letter
     while True:
         front = _kashaev_front(braid, order, power, precision)
         if front.positive + front.negative == rank:

@@ -189,6 +189,31 @@ def count_linear_colourings(braid: Braid, modulus: list[int], prime: int) -> int
     return count
 
 
+def with_full_twists(braid: Braid, place: int, count: int) -> Braid:
+    """The closed braid whose letter at a place is 2 ``count`` + 1 half twists of its band.
+
+    The letter is a half twisted band between two discs of a spanning surface. Two more discs
+    stacked beyond all others and half twisted bands of the same sign to, between and from them,
+    the first and last passing in front of the discs in between, make three half twists of it.
+    """
+    for _ in range(count):
+        letter, strands = braid.word[place], braid.strands
+        index, sign = abs(letter), 1 if letter > 0 else -1
+        there = _band(index, strands + 1, sign)
+        back = _band(index + 1, strands + 2, sign)
+        chain = [*there, sign * (strands + 1), *back]
+        word = [*braid.word[:place], *chain, *braid.word[place + 1 :]]
+        braid = Braid(word, strands + 2)
+        place += len(there)
+    return braid
+
+
+def _band(low: int, high: int, sign: int) -> list[int]:
+    """The letters of a half twisted band between the discs ``low`` and ``high``."""
+    way = list(range(high - 1, low, -1))
+    return [*way, sign * low, *(-letter for letter in reversed(way))]
+
+
 def linking_of_components(braid: Braid) -> list[list[int]]:
     """The symmetric matrix of linking numbers of the components, zeros on the diagonal.
 

@@ -10,6 +10,7 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from braidsearch.errors import CapacityError, InputError
+from braidsearch.invariants import levine_tristram
 from braidsearch.invariants.alexander import alexander_polynomial
 from braidsearch.invariants.determinant import link_determinant
 from braidsearch.invariants.interval_front import IntervalFront
@@ -236,6 +237,16 @@ def test_fronts_count_no_sign_that_is_not_there(size, seed, precision):
     assert front.negative <= (values < -1e-9).sum()
     if precision == 40:
         assert front.positive + front.negative == (abs(values) > 1e-9).sum()
+
+
+@settings(max_examples=40)
+@given(braid=words, root=roots)
+def test_precision_rises_until_all_signs_are_certain(braid, root):
+    """Elimination that starts with two bits ends with the same value."""
+    expected = levine_tristram_signature(braid, *root)
+    with pytest.MonkeyPatch.context() as patch:
+        patch.setattr(levine_tristram, "_FIRST_BITS", 2)
+        assert levine_tristram_signature(braid, *root) == expected
 
 
 @pytest.mark.parametrize("precision", [1, 40, 64, 333, 2000])
