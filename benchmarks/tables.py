@@ -23,11 +23,12 @@ class Result:
     nodes: int
 
 
-def examine(task: tuple[str, Braid, Braid, float]) -> Result:
+def examine(task: tuple[str, Braid, Braid, float], up_to: Sequence[str] = ()) -> Result:
     """Compare two braids within so many seconds; the certificate is verified once more, timed."""
     name, left, right, seconds = task
     start = time.perf_counter()
-    verdict = compare(left, right, limits=SearchLimits(seconds=seconds, nodes=None))
+    limits = SearchLimits(seconds=seconds, nodes=None)
+    verdict = compare(left, right, up_to=up_to, limits=limits)
     taken = time.perf_counter() - start
     moves, verification = 0, 0.0
     if verdict.certificate is not None:

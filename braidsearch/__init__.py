@@ -26,6 +26,7 @@ if TYPE_CHECKING:
     from braidsearch.errors import BraidsearchError, CapacityError, InputError
     from braidsearch.search.driver import compare
     from braidsearch.search.limits import Progress, SearchLimits
+    from braidsearch.search.symmetries import find_symmetries
     from braidsearch.search.tighten import Tightening, tighten
     from braidsearch.search.verdict import Verdict
     from braidsearch.verifier import Report
@@ -46,6 +47,7 @@ _HOMES: dict[str, str] = {
     "Tightening": "search.tighten",
     "Verdict": "search.verdict",
     "compare": "search.driver",
+    "find_symmetries": "search.symmetries",
     "explain_certificate": "certificates",
     "format_certificate": "certificates",
     "format_word": "words",
@@ -71,6 +73,7 @@ __all__ = [
     "__version__",
     "compare",
     "explain_certificate",
+    "find_symmetries",
     "format_certificate",
     "format_word",
     "parse_certificate",

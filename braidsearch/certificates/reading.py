@@ -5,6 +5,7 @@ from __future__ import annotations
 import json
 import os
 from collections.abc import Iterable
+from dataclasses import replace
 from pathlib import Path
 from typing import Any, NoReturn
 
@@ -12,12 +13,16 @@ from braidsearch.certificates.grammar import (
     CLAIM_FIELDS,
     DISTINCTION_FIELDS,
     FORMAT,
+    INVARIANTS,
     MAX_MOVES,
     MOVE_FIELDS,
     MOVES,
+    PARAMETERS,
     PROOF_FIELDS,
-    VALUE_WIDTHS,
+    SUBLINKS,
+    VALUES,
     VERSION,
+    Shape,
 )
 from braidsearch.certificates.values import Certificate, Distinction
 from braidsearch.errors import InputError
@@ -146,35 +151,77 @@ def _read_distinctions(data: Any) -> list[Distinction]:
 
 def _read_distinction(data: Any, where: str) -> Distinction:
     _check_keys(data, DISTINCTION_FIELDS, where)
-    name = data["invariant"]
-    if not isinstance(name, str) or name not in VALUE_WIDTHS:
-        _refuse(f"{where}.invariant", name, f"one of {', '.join(VALUE_WIDTHS)}")
-    _check_keys(data["parameters"], (), f"{where}.parameters")
+    name = _read_invariant(data["invariant"], INVARIANTS, f"{where}.invariant")
+    parameters = _read_parameters(data["parameters"], name, f"{where}.parameters")
     return Distinction(
         symmetry=_read_symmetry(data["symmetry"], f"{where}.symmetry"),
         invariant=name,
-        parameters=data["parameters"],
+        parameters=parameters,
         left_moves=_read_moves(data["left_moves"], f"{where}.left_moves"),
         right_moves=_read_moves(data["right_moves"], f"{where}.right_moves"),
-        left=_read_value(data["left"], VALUE_WIDTHS[name], f"{where}.left"),
-        right=_read_value(data["right"], VALUE_WIDTHS[name], f"{where}.right"),
+        left=_read_value(data["left"], name, parameters, f"{where}.left"),
+        right=_read_value(data["right"], name, parameters, f"{where}.right"),
     )
 
 
-def _read_value(data: Any, width: int, where: str) -> Any:
-    if width == 0:
-        return _read_integer(data, where)
+def _read_invariant(data: Any, known: Iterable[str], where: str) -> str:
+    names = tuple(known)
+    if not isinstance(data, str) or data not in names:
+        _refuse(where, data, f"one of {', '.join(names)}")
+    return data
+
+
+def _read_parameters(data: Any, invariant: str, where: str) -> dict[str, Any]:
+    """The parameters; those of sublinks hold another invariant's name and parameters too."""
+    shapes = dict(PARAMETERS.get(invariant, {}))
+    values: dict[str, Any] = {}
+    if invariant == SUBLINKS:
+        _check_has(data, ("invariant",), where)
+        values["invariant"] = _read_invariant(data["invariant"], VALUES, f"{where}.invariant")
+        shapes |= PARAMETERS.get(values["invariant"], {})
+    _check_keys(data, (*values, *shapes), where)
+    for name, shape in shapes.items():
+        values[name] = _read_shape(data[name], shape, f"{where}.{name}")
+    return values
+
+
+def _read_value(data: Any, invariant: str, parameters: dict[str, Any], where: str) -> Any:
+    if invariant != SUBLINKS:
+        return _read_shape(data, VALUES[invariant], where)
+    shape = VALUES[parameters["invariant"]]
     items = enumerate(_read_list(data, where))
-    if width == 1:
-        return [_read_integer(item, f"{where}[{i}]") for i, item in items]
-    return [_read_entry(item, width, f"{where}[{i}]") for i, item in items]
+    return [_read_shape(item, shape, f"{where}[{i}]") for i, item in items]
 
 
-def _read_entry(data: Any, width: int, where: str) -> list[int]:
-    entry = [_read_integer(item, f"{where}[{i}]") for i, item in enumerate(_read_list(data, where))]
-    if len(entry) != width:
-        _refuse(where, data, f"{width} integers")
-    return entry
+def _read_shape(data: Any, shape: Shape, where: str) -> Any:
+    if shape.depth == 0:
+        return _read_bounded(data, shape, where)
+    items = _read_list(data, where)
+    least, most = shape.entries or (0, len(items))
+    if shape.depth == 1 and shape.width is not None:
+        least = most = shape.width
+    if not least <= len(items) <= most:
+        expected = str(least) if least == most else f"{least} to {most}"
+        _refuse(where, data, f"{expected} {'integers' if shape.depth == 1 else 'entries'}")
+    inner = replace(shape, depth=shape.depth - 1, entries=None)
+    values = [_read_shape(item, inner, f"{where}[{i}]") for i, item in enumerate(items)]
+    if shape.is_permutation and shape.depth == 1:
+        _check_permutation(values, data, where)
+    return values
+
+
+def _read_bounded(data: Any, shape: Shape, where: str) -> int:
+    number = _read_integer(data, where)
+    least = number if shape.least is None else shape.least
+    most = number if shape.most is None else shape.most
+    if not least <= number <= most:
+        _refuse(where, data, f"an integer from {least} to {most}")
+    return number
+
+
+def _check_permutation(values: list[int], data: Any, where: str) -> None:
+    if not values or sorted(values) != list(range(1, len(values) + 1)):
+        _refuse(where, data, "the images of 1, 2, ... under a permutation")
 
 
 def _read_symmetry(data: Any, where: str) -> str:
@@ -202,13 +249,18 @@ def _check_constant(data: Any, constant: str | int, where: str) -> None:
         _refuse(where, data, json.dumps(constant))
 
 
-def _check_keys(data: Any, expected: Iterable[str], where: str) -> None:
+def _check_has(data: Any, expected: Iterable[str], where: str) -> None:
     if not isinstance(data, dict):
         _refuse(where, data, "a JSON object")
     names = tuple(expected)
     for name in names:
         if name not in data:
             raise InputError(f"{where}: no key {name!r}: expected the keys {', '.join(names)}")
+
+
+def _check_keys(data: Any, expected: Iterable[str], where: str) -> None:
+    names = tuple(expected)
+    _check_has(data, names, where)
     for key in data:
         if key not in names:
             known = f"the keys {', '.join(names)}" if names else "no key"

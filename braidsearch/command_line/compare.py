@@ -24,7 +24,8 @@ if TYPE_CHECKING:
     from braidsearch.search.limits import SearchLimits
     from braidsearch.search.verdict import Verdict
 
-STATUS = {"same": 0, "different": 1, "undecided": 3}
+UNDECIDED = 3
+STATUS = {"same": 0, "different": 1, "undecided": UNDECIDED}
 
 _DESCRIPTION = """Say whether the closures of two braids are the same oriented link.
 
@@ -118,7 +119,7 @@ def _answer_verdict(verdict: Verdict, left: Braid, right: Braid, given: Namespac
     elif given.output not in (None, "-") and certificate is not None:
         write_certificate(certificate, given.output)
     if given.json:
-        return json_answer(status, _verdict_to_json(verdict), missing)
+        return json_answer(status, verdict_to_json(verdict), missing)
     report = report_verdict(verdict, left, right, given.output)
     if given.output != "-":
         return Answer(status, report)
@@ -126,7 +127,8 @@ def _answer_verdict(verdict: Verdict, left: Braid, right: Braid, given: Namespac
     return Answer(status, text, report)  # the certificate takes standard output
 
 
-def _verdict_to_json(verdict: Verdict) -> dict[str, object]:
+def verdict_to_json(verdict: Verdict) -> dict[str, object]:
+    """The verdict as --json prints it."""
     certificate, explored = verdict.certificate, dict(verdict.explored)
     if verdict.image is not None:  # a symmetric image that was not asked for
         explored["image"] = certificate_to_json(verdict.image)

@@ -23,6 +23,7 @@ COMMANDS: dict[str, str] = {
     "compare": "say whether two closed braids are the same link, with a certificate",
     "verify": "replay a certificate",
     "tighten": "fewest strands, then fewest letters, for the same link",
+    "symmetry": "which mirror images and reverses of a link are the same link again",
     "normalise": "reduced word, left normal form and conjugacy summit of a braid",
     "invariants": "invariants of the closure of a braid",
 }
@@ -45,8 +46,8 @@ examples:
   braidsearch invariants "1 -2 1 -2"
 
 braidsearch COMMAND --help tells more of a command; braidsearch --version prints the version.
-exit status: compare 0 same, 1 different, 3 undecided; verify 0 valid, 1 rejected; all: 2 for a
-mistake in the input."""
+exit status: compare 0 same, 1 different, 3 undecided; symmetry 0 decided, 3 undecided; verify
+0 valid, 1 rejected; all: 2 for a mistake in the input."""
 
 
 def run() -> NoReturn:

@@ -3,6 +3,7 @@
 from braidsearch.invariants.alexander import alexander_polynomial
 from braidsearch.invariants.components import component_count
 from braidsearch.invariants.determinant import link_determinant
+from braidsearch.invariants.finer import TITLES, finer_ladder
 from braidsearch.invariants.homfly import homfly_polynomial
 from braidsearch.invariants.jones import jones_polynomial
 from braidsearch.invariants.laurent import format_polynomial, mirror_image, sympy_expression
@@ -20,12 +21,14 @@ from braidsearch.invariants.table import (
 
 __all__ = [
     "INVARIANTS",
+    "TITLES",
     "Invariant",
     "Value",
     "alexander_polynomial",
     "component_count",
     "component_linking_sums",
     "compute_invariants",
+    "finer_ladder",
     "format_polynomial",
     "homfly_polynomial",
     "invariant_named",

@@ -3,6 +3,7 @@
 from collections.abc import Callable
 from dataclasses import dataclass
 from types import ModuleType
+from typing import Any
 
 from braidsearch.errors import InputError
 from braidsearch.invariants import (
@@ -17,8 +18,12 @@ from braidsearch.invariants import (
 )
 from braidsearch.words.braid import Braid
 
-Value = int | list[int] | list[list[int]]
-"""What an invariant takes as its value, as it stands in a certificate."""
+Value = Any
+"""What an invariant takes as its value, as it stands in a certificate: an integer, or a list of
+integers, of lists of integers, or (over sublinks) of values."""
+
+Parameters = tuple[tuple[str, Any], ...]
+"""Names of parameters with their values, frozen: integers, names, and tuples of them."""
 
 
 @dataclass(frozen=True)
@@ -28,7 +33,8 @@ class Invariant:
     ``name`` is its name in certificates and ``title`` its name in sentences. ``compute`` gives
     its value, exact, for every braid for which ``is_applicable``, and raises CapacityError for
     the others. ``estimated_cost`` is the time that it takes, in seconds, roughly. ``certifies``
-    says whether a certificate may rest on it.
+    says whether a certificate may rest on it. ``parameters`` select it among those of its name.
+    ``verification_cost`` estimates the seconds that the verifier takes, where that is known here.
     """
 
     name: str
@@ -37,6 +43,13 @@ class Invariant:
     estimated_cost: Callable[[Braid], float]
     is_applicable: Callable[[Braid], bool]
     certifies: bool = True
+    parameters: Parameters = ()
+    verification_cost: Callable[[Braid], float] | None = None
+
+    @property
+    def key(self) -> tuple[str, Parameters]:
+        """What tells this invariant from all others."""
+        return self.name, self.parameters
 
 
 def _from_module(

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable, Iterable
 from dataclasses import dataclass, field
+from typing import TypeAlias
 
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.errors import CapacityError
-from braidsearch.invariants.table import NEGLIGIBLE_SECONDS, Invariant, ladder
+from braidsearch.invariants.table import NEGLIGIBLE_SECONDS, Invariant, Value, ladder
 from braidsearch.moves import Move
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget
@@ -15,21 +17,50 @@ from braidsearch.search.route import Route
 from braidsearch.search.verification_cost import verification_seconds
 from braidsearch.words import Braid, apply_symmetry
 
+Ladder: TypeAlias = Callable[[Braid, Braid], Iterable[Invariant]]
+"""Which invariants to try on two braids."""
+
+_MOST_VALUES = 20_000
+
+
+class Values:
+    """The values computed so far in one query: several symmetries ask for those of one braid."""
+
+    def __init__(self) -> None:
+        self._known: dict[object, Value] = {}
+
+    def value(self, invariant: Invariant, braid: Braid) -> Value:
+        """The value for the closure of the braid. Raises CapacityError where it is out of reach."""
+        key = (invariant.key, braid)
+        if key not in self._known:
+            if len(self._known) >= _MOST_VALUES:
+                self._known.clear()
+            self._known[key] = invariant.compute(braid)
+        return self._known[key]
+
 
 @dataclass
 class Distinguisher:
     """Compares a left link with one symmetric image of a right one.
 
-    ``agreed`` names the invariants found equal, in the order in which they were computed.
+    ``agreed`` holds the invariants found equal, in the order in which they were computed, and
+    ``found_by`` the one that differs, once it is found.
     """
 
     left: Braid
     right: Braid
     symmetry: str
-    agreed: list[str] = field(default_factory=list)
+    values: Values = field(default_factory=Values)
+    agreed: dict[object, Invariant] = field(default_factory=dict)
+    found_by: Invariant | None = None
 
     def find(
-        self, left_route: Route, right_route: Route, dearest: float, budget: Budget
+        self,
+        left_route: Route,
+        right_route: Route,
+        dearest: float,
+        budget: Budget,
+        invariants: Ladder = ladder,
     ) -> Distinction | None:
         """The first invariant of estimated cost up to ``dearest`` seconds that differs.
 
@@ -38,49 +69,61 @@ class Distinguisher:
         """
         left = left_route.current
         image = apply_symmetry(right_route.current, self.symmetry)
-        bound = min(dearest, budget.seconds_left)
-        for cost, invariant in _ladder_with_verification(left, image):
-            if invariant.name in self.agreed or cost > bound:
+        for cost, invariant in _with_verification(invariants(left, image), left, image):
+            if invariant.key in self.agreed or cost > min(dearest, budget.seconds_left):
                 continue
             found = self._compare(invariant, left_route, right_route, image)
             if found is not None:
                 return found
         return None
 
+    def agreed_names(self) -> list[str]:
+        """The names of the invariants found equal; how many of each that takes parameters."""
+        counts: dict[str, int] = {}
+        for invariant in self.agreed.values():
+            counts[invariant.name] = counts.get(invariant.name, 0) + 1
+        return [name if count == 1 else f"{name} ({count})" for name, count in counts.items()]
+
     def _compare(
         self, invariant: Invariant, left_route: Route, right_route: Route, image: Braid
     ) -> Distinction | None:
         try:
-            value, other = invariant.compute(left_route.current), invariant.compute(image)
+            value = self.values.value(invariant, left_route.current)
+            other = self.values.value(invariant, image)
         except CapacityError:
             return None
         if value == other:
-            self.agreed.append(invariant.name)
+            self.agreed[invariant.key] = invariant
             return None
         found = Distinction(
             symmetry=self.symmetry,
             invariant=invariant.name,
-            parameters={},
+            parameters=invariant.parameters,
             left_moves=_proven_moves(left_route),
             right_moves=_proven_moves(right_route),
             left=value,
             right=other,
         )
         claim = Certificate.different(self.left, self.right, [found])
-        return found if judge(claim).valid else None
+        if not judge(claim).valid:
+            return None
+        self.found_by = invariant
+        return found
 
 
-def _ladder_with_verification(left: Braid, right: Braid) -> list[tuple[float, Invariant]]:
+def _with_verification(
+    invariants: Iterable[Invariant], left: Braid, right: Braid
+) -> list[tuple[float, Invariant]]:
     """The invariants with what they cost, in seconds, the verifier's share included."""
     costs = [
         (
             sum(
-                invariant.estimated_cost(braid) + verification_seconds(invariant.name, braid)
+                invariant.estimated_cost(braid) + verification_seconds(invariant, braid)
                 for braid in (left, right)
             ),
             invariant,
         )
-        for invariant in ladder(left, right)
+        for invariant in invariants
     ]
     return sorted(costs, key=lambda pair: max(pair[0], NEGLIGIBLE_SECONDS))
 

@@ -4,8 +4,8 @@ from __future__ import annotations
 
 from collections.abc import Callable, Sequence
 
-from braidsearch.errors import CapacityError, InputError, OutOfTimeError
-from braidsearch.search.limits import Budget, Ending, Progress, SearchLimits
+from braidsearch.errors import InputError
+from braidsearch.search.limits import Budget, Progress, SearchLimits
 from braidsearch.search.query import Query
 from braidsearch.search.verdict import Verdict
 from braidsearch.words import SYMMETRIES, Braid
@@ -31,12 +31,4 @@ def compare(
         if symmetry not in SYMMETRIES:
             raise InputError(f"up to {symmetry!r}: expected {', '.join(SYMMETRIES[1:])}")
     asked = tuple(dict.fromkeys(("identity", *up_to)))
-    query = Query(left, right, asked, Budget(limits or SearchLimits(), progress))
-    try:
-        return query.answer()
-    except KeyboardInterrupt:
-        return query.undecided(Ending.INTERRUPTED)
-    except OutOfTimeError:
-        return query.undecided(Ending.TIME_LIMIT)
-    except CapacityError:
-        return query.undecided(Ending.TOO_LARGE)
+    return Query(left, right, asked, Budget(limits or SearchLimits(), progress)).settled()

@@ -2,13 +2,21 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from typing import TYPE_CHECKING, Any
 
 from braidsearch.certificates import Certificate, Distinction
-from braidsearch.invariants.table import invariant_named
+from braidsearch.errors import CapacityError, OutOfTimeError
+from braidsearch.invariants.finer import finer_ladder
+from braidsearch.invariants.table import ladder
 from braidsearch.moves import Move
 from braidsearch.normal_form.conjugacy import find_conjugator
-from braidsearch.search.distinguish import Distinguisher
+from braidsearch.search.closed_three_braids import (
+    classified_moves,
+    is_classified,
+    three_braid_ladder,
+)
+from braidsearch.search.distinguish import Distinguisher, Ladder, Values
 from braidsearch.search.effort import SUMMIT_CAP
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending
@@ -26,24 +34,53 @@ CHEAP_SECONDS = 0.05
 CHEAP_SECONDS_A_LETTER = 1e-4  # long words take as long to simplify
 FAIR_SECONDS = 1.0
 DEAR_SECONDS = 60.0
-_FIRST_SHARE = 0.3
+_ROUNDS = ((0.005, 0.1), (0.03, 1.0), (0.1, 5.0), (0.3, 20.0))
+"""The share of the limits up to which each round searches, and its dearest invariants' seconds."""
 _LAST_SHARE = 0.85  # what is left after it looks for a symmetric image
 _LONGEST_GLANCE = 80  # letters up to which a glance at symmetric images takes no notable time
 _MOST_GLANCED = 12  # and strands
 
 
 class Query:
-    """The two braids, the symmetries asked for, what has been found so far and what was tried."""
+    """The two braids, the symmetries asked for, what has been found so far and what was tried.
 
-    def __init__(self, left: Braid, right: Braid, asked: tuple[str, ...], budget: Budget) -> None:
+    ``others`` are the symmetries, not asked for, that are worth a look when the answer is not
+    "same" (None: all).
+    """
+
+    def __init__(
+        self,
+        left: Braid,
+        right: Braid,
+        asked: tuple[str, ...],
+        budget: Budget,
+        others: Sequence[str] | None = None,
+    ) -> None:
         self.left, self.right, self.asked, self.budget = left, right, asked, budget
-        self.distinguishers = {name: Distinguisher(left, right, name) for name in SYMMETRIES}
+        self.others = [
+            name for name in (SYMMETRIES if others is None else others) if name not in asked
+        ]
+        values = Values()
+        self.distinguishers = {
+            name: Distinguisher(left, right, name, values) for name in SYMMETRIES
+        }
         self.distinctions: dict[str, Distinction] = {}
         self.meetings: dict[str, Meeting] = {}
         self.greedy: dict[str | None, Route] = {}
         self.routes: dict[str | None, Route] = {}
         self.tried: list[str] = []
         self.ending = Ending.NOT_SEARCHED
+
+    def settled(self) -> Verdict:
+        """The answer, undecided where a limit, an interrupt or a bound on size breaks it off."""
+        try:
+            return self.answer()
+        except KeyboardInterrupt:
+            return self.undecided(Ending.INTERRUPTED)
+        except OutOfTimeError:
+            return self.undecided(Ending.TIME_LIMIT)
+        except CapacityError:
+            return self.undecided(Ending.TOO_LARGE)
 
     def answer(self) -> Verdict:
         """The stages in order of cost; the first that settles the question ends it."""
@@ -58,10 +95,9 @@ class Query:
         if self._distinguish(*handy, FAIR_SECONDS):
             return self._different()
         return (
-            self._search_directly()
-            or self._search(0.0, _FIRST_SHARE)
-            or (self._different() if self._distinguish(*handy, DEAR_SECONDS) else None)
-            or self._search(_FIRST_SHARE, _LAST_SHARE)
+            self._classify()
+            or self._search_directly()
+            or self._alternate()
             or self.undecided(self.ending, self._search_image())
         )
 
@@ -83,13 +119,44 @@ class Query:
             self.routes[symmetry] = simplified(self._greedy(symmetry), self.budget)
         return self.routes[symmetry]
 
-    def _distinguish(self, left: Route, right: Route, dearest: float) -> bool:
+    def _distinguish(
+        self, left: Route, right: Route, dearest: float, invariants: Ladder = ladder
+    ) -> bool:
         for symmetry in self.open_symmetries():
             self.budget.tell(left.current.strands, "computing invariants")
-            found = self.distinguishers[symmetry].find(left, right, dearest, self.budget)
+            distinguisher = self.distinguishers[symmetry]
+            found = distinguisher.find(left, right, dearest, self.budget, invariants)
             if found is not None:
                 self.distinctions[symmetry] = found
         return not self.open_symmetries()
+
+    def _classify(self) -> Verdict | None:
+        """The answer by the classification of closed 3-braids, where both are such."""
+        left = self._route(None)
+        if not is_classified(left.current):
+            return None
+        for symmetry in self.open_symmetries():
+            moves = classified_moves(left, self._route(symmetry))
+            if moves is not None:
+                return self._same(moves, symmetry)
+        right = self._route("identity")
+        if self._distinguish(left, right, DEAR_SECONDS, three_braid_ladder):
+            return self._different()
+        return None
+
+    def _alternate(self) -> Verdict | None:
+        """Searches and invariants in turn, each round with more of both than the one before."""
+        handy = self._route(None), self._route("identity")
+        share = 0.0
+        for until, dearest in _ROUNDS:
+            met = self._search(share, until)
+            if met is not None:
+                return met
+            for invariants in (ladder, finer_ladder):
+                if self._distinguish(*handy, dearest, invariants):
+                    return self._different()
+            share = until
+        return self._search(share, _LAST_SHARE)
 
     def _compare_rotations(self) -> Verdict | None:
         """Whether the reduced words are rotations of each other, which is seen at once."""
@@ -146,15 +213,14 @@ class Query:
 
     def _search_image(self) -> Certificate | None:
         """Sameness with a symmetric image that was not asked for, when the question stays open."""
-        others = [name for name in SYMMETRIES if name not in self.asked]
-        for place, symmetry in enumerate(others, 1):
+        for place, symmetry in enumerate(self.others, 1):
             if self.budget.ending() is not None:
                 return None
             if self._is_excluded(symmetry):
                 continue
             moves = self._direct_moves(symmetry)
             if moves is None:
-                share = _LAST_SHARE + (1 - _LAST_SHARE) * place / len(others)
+                share = _LAST_SHARE + (1 - _LAST_SHARE) * place / len(self.others)
                 meeting = self._meeting(symmetry)
                 if meeting.run(share) is not Ending.FOUND:
                     continue
@@ -167,17 +233,19 @@ class Query:
         letters, strands = len(self.left) + len(self.right), self.left.strands
         if letters > _LONGEST_GLANCE or max(strands, self.right.strands) > _MOST_GLANCED:
             return None
-        for symmetry in SYMMETRIES:
-            if symmetry not in self.asked:
-                moves = self._direct_moves(symmetry)
-                if moves is not None:
-                    return self._image_certificate(moves, symmetry)
+        for symmetry in self.others:
+            moves = self._direct_moves(symmetry)
+            if moves is not None:
+                return self._image_certificate(moves, symmetry)
         return None
 
     def _is_excluded(self, symmetry: str) -> bool:
         handy = self._route(None), self._route("identity")
-        found = self.distinguishers[symmetry].find(*handy, FAIR_SECONDS, self.budget)
-        return found is not None
+        distinguisher = self.distinguishers[symmetry]
+        return any(
+            distinguisher.find(*handy, FAIR_SECONDS, self.budget, invariants) is not None
+            for invariants in (ladder, finer_ladder)
+        )
 
     def _image_certificate(self, moves: list[Move], symmetry: str) -> Certificate | None:
         certificate = self._certificate(moves, symmetry)
@@ -201,8 +269,9 @@ class Query:
     def _different(self) -> Verdict:
         found = [self.distinctions[name] for name in self.asked]
         certificate = Certificate.different(self.left, self.right, found)
-        titles = (invariant_named(distinction.invariant).title for distinction in found)
-        reason = f"told apart by the {' and the '.join(dict.fromkeys(titles))}"
+        steps = (self.distinguishers[name].found_by for name in self.asked)
+        titles = dict.fromkeys(step.title for step in steps if step is not None)
+        reason = f"told apart by the {' and the '.join(titles)}"
         return self._judged(certificate, reason, None, self._glance_at_images())
 
     def _judged(
@@ -231,7 +300,7 @@ class Query:
     def explored(self, ending: Ending) -> dict[str, Any]:
         """What has been done so far: nodes, seconds, the ending and what was tried, in words."""
         equal = [
-            f"equal invariants, {name}: {', '.join(distinguisher.agreed)}"
+            f"equal invariants, {name}: {', '.join(distinguisher.agreed_names())}"
             for name, distinguisher in self.distinguishers.items()
             if distinguisher.agreed and name in self.asked
         ]
@@ -253,7 +322,7 @@ class Query:
             found.append("allow more strands")
         if image is not None:
             found.append(f"ask up to {image.symmetry} for the certificate of that")
-        elif len(self.asked) < len(SYMMETRIES):
+        elif self.others:
             found.append("ask for other symmetries too")
         return tuple(found)
 

@@ -59,7 +59,7 @@ def strands_lower_bound(braid: Braid, seconds: float = _DEAREST) -> int | None:
         value = homfly.compute(braid)
     except CapacityError:
         return None
-    exponents = [term[0] for term in value]  # type: ignore[index, union-attr]
+    exponents: list[int] = [term[0] for term in value]
     return (max(exponents) - min(exponents)) // 2 + 1
 
 

@@ -1,9 +1,11 @@
 """Strategies for certificates of any well-formed content, true or not."""
 
+from dataclasses import replace
+
 from hypothesis import strategies as st
 
 from braidsearch.certificates import Certificate, Distinction
-from braidsearch.certificates.grammar import VALUE_WIDTHS
+from braidsearch.certificates.grammar import INVARIANTS, PARAMETERS, SUBLINKS, VALUES, Shape
 from braidsearch.moves import Conjugate, Destabilize, Rewrite, Stabilize
 from braidsearch.words import SYMMETRIES
 from tests.strategies import braids
@@ -22,14 +24,37 @@ move_lists = st.lists(moves, max_size=5)
 integers = st.integers(-9, 9) | st.integers(-(2**400), 2**400)
 
 
-def values_of(invariant: str) -> st.SearchStrategy[object]:
-    """Values of the shape that the invariant has."""
-    width = VALUE_WIDTHS[invariant]
-    if width == 0:
-        return integers
-    if width == 1:
-        return st.lists(integers, max_size=4)
-    return st.lists(st.lists(integers, min_size=width, max_size=width), max_size=4)
+def values_of_shape(shape: Shape) -> st.SearchStrategy[object]:
+    """Values of the shape."""
+    if shape.is_permutation:
+        orders = st.integers(1, 5).map(lambda degree: range(1, degree + 1))
+        least, most = shape.entries or (0, 3)
+        return st.lists(orders.flatmap(st.permutations), min_size=least, max_size=min(most, 3))
+    if shape.depth == 0:
+        bounded = shape.least is not None
+        return st.integers(shape.least, shape.most) if bounded else integers
+    inner = values_of_shape(replace(shape, depth=shape.depth - 1))
+    if shape.depth == 1 and shape.width is not None:
+        return st.lists(inner, min_size=shape.width, max_size=shape.width)
+    return st.lists(inner, max_size=4)
+
+
+@st.composite
+def parameters_and_values(
+    draw: st.DrawFn, invariant: str
+) -> tuple[dict[str, object], list[object]]:
+    """Parameters for the invariant, and two values of the shape that it has with them."""
+    shapes = dict(PARAMETERS.get(invariant, {}))
+    parameters: dict[str, object] = {}
+    if invariant == SUBLINKS:
+        inner = draw(st.sampled_from(sorted(VALUES)))
+        parameters["invariant"] = inner
+        shapes |= PARAMETERS.get(inner, {})
+        values = st.lists(values_of_shape(VALUES[inner]), max_size=3)
+    else:
+        values = values_of_shape(VALUES[invariant])
+    parameters |= {name: draw(values_of_shape(shape)) for name, shape in shapes.items()}
+    return parameters, [draw(values), draw(values)]
 
 
 symmetries = st.sampled_from(SYMMETRIES)
@@ -38,15 +63,16 @@ symmetries = st.sampled_from(SYMMETRIES)
 @st.composite
 def distinctions(draw: st.DrawFn, symmetry: str) -> Distinction:
     """A distinction for the symmetry, by any invariant."""
-    invariant = draw(st.sampled_from(sorted(VALUE_WIDTHS)))
+    invariant = draw(st.sampled_from(sorted(INVARIANTS)))
+    parameters, (left, right) = draw(parameters_and_values(invariant))
     return Distinction(
         symmetry=symmetry,
         invariant=invariant,
-        parameters={},
+        parameters=parameters,
         left_moves=draw(move_lists),
         right_moves=draw(move_lists),
-        left=draw(values_of(invariant)),
-        right=draw(values_of(invariant)),
+        left=left,
+        right=right,
     )
 
 

@@ -114,12 +114,34 @@ def test_homfly_display_is_the_polynomial(terms: dict[tuple[int, int], int]) -> 
         ("components", 2, "2"),
         ("linking-numbers", (), "none"),
         ("linking-numbers", (-1, 0, 2), "-1, 0, 2"),
-        ("colouring", [[0, 1], 5], "(0, 1), 5"),
+        ("three-braid", [[2, -1, 0]], "(2, -1, 0)"),
+        ("alexander-module", [[1, 0, 1], []], "1 + t^2; 0"),
+        ("alexander-module", [], "trivial"),
+        ("levine-tristram", [-2, 0], "-2, 0"),
     ],
 )
 def test_values_as_people_write_them(invariant: str, value: object, shown: str) -> None:
     """A sample of each kind of value."""
     assert show_value(invariant, value) == shown
+
+
+def test_colourings_as_people_write_them() -> None:
+    """Longitudes stand in cycles, one for each component; classes are named where there are two."""
+    given = {"meridians": [[2, 1, 3]]}
+    knot = [[1, 1, 2, 3, 3], [1, 2, 1, 3, 6]]
+    assert (
+        show_value("colouring", knot, given) == "9 colourings; by longitude 3 with 1, 6 with (1 2)"
+    )
+    link = [[1, 1, 2, 3, 2, 2, 3, 1, 3]]
+    shown = show_value("colouring", link, given)
+    assert shown == "3 colourings; by longitude 3 with 1: 1 and 2: (1 2 3)"
+    assert show_value("colouring", [], given) == "0 colourings"
+
+
+def test_values_of_sublinks_stand_beside_each_other() -> None:
+    """Each as the invariant of the sublinks is written."""
+    given = {"components": 1, "invariant": "alexander"}
+    assert show_value("sublinks", [[[0, 1]], [[0, 2], [1, -1]]], given) == "1; 2 - t"
 
 
 def read_polynomial(text: str) -> object:

@@ -19,9 +19,10 @@ from braidsearch.certificates import (
     read_certificate,
     write_certificate,
 )
-from braidsearch.certificates.grammar import VALUE_WIDTHS
+from braidsearch.certificates.grammar import INVARIANTS as NAMES_OF_THE_FORMAT
 from braidsearch.errors import InputError
 from braidsearch.invariants import INVARIANTS
+from braidsearch.invariants.finer import iter_finer
 from braidsearch.moves import Conjugate, Stabilize
 from braidsearch.verifier import verify_text
 from braidsearch.verifier.verify import INVARIANTS as VERIFIED_INVARIANTS
@@ -115,8 +116,10 @@ def test_parameters_are_written_in_one_order() -> None:
 
 def test_the_invariants_of_the_format_are_those_of_the_table() -> None:
     """What the search may rest a certificate on, a reader knows, and the verifier too."""
-    certifying = {invariant.name for invariant in INVARIANTS if invariant.certifies}
-    assert set(VALUE_WIDTHS) == certifying == set(VERIFIED_INVARIANTS)
+    plain = {invariant.name for invariant in INVARIANTS if invariant.certifies}
+    with_parameters = {invariant.name for invariant in iter_finer(components=2)}
+    known = plain | with_parameters | {"three-braid"}  # on 3 strands, by a classification
+    assert set(NAMES_OF_THE_FORMAT) == known == set(VERIFIED_INVARIANTS)
 
 
 @pytest.mark.parametrize("text", [SAME_TEXT, DIFFERENT_TEXT])

@@ -1,0 +1,140 @@
+"""The invariants that take parameters: they see what the polynomials of the table miss."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Iterator
+from functools import partial
+from itertools import chain
+from math import comb
+from typing import TYPE_CHECKING
+
+from braidsearch.invariants import alexander_module, levine_tristram, sublinks
+from braidsearch.invariants.table import INVARIANTS, NEGLIGIBLE_SECONDS, Invariant, Value
+from braidsearch.words.braid import Braid
+
+if TYPE_CHECKING:
+    from braidsearch.invariants.colourings import Colours
+
+TITLES: dict[str, str] = {
+    **{invariant.name: invariant.title for invariant in INVARIANTS},
+    "levine-tristram": "Levine-Tristram signature and nullity",
+    "alexander-module": "Alexander module",
+    "colouring": "colourings",
+    "sublinks": "sublinks",
+    "three-braid": "classification of closed 3-braids (Birman, Menasco, 1993)",
+}
+"""The name in sentences of each invariant that a certificate may rest on, and of some others."""
+
+ROOTS_OF_UNITY: tuple[tuple[int, int], ...] = (
+    *((3, 1), (4, 1), (5, 1), (5, 2), (6, 1)),
+    *((8, 1), (8, 3), (10, 1), (10, 3), (12, 1), (12, 5)),
+)
+"""Order and power of the roots at which Levine-Tristram signatures are asked for.
+
+A complex-conjugate root has the same signature, so of each pair one is here.
+"""
+
+PRIMES: tuple[int, ...] = (2, 3, 5, 7, 11, 13)
+"""The primes modulo which Alexander modules are compared."""
+
+_MOST_SUBLINKS = 120
+
+
+def finer_ladder(left: Braid, right: Braid) -> list[Invariant]:
+    """The invariants with parameters that may tell these closures apart, cheapest first."""
+    steps = [
+        (invariant.estimated_cost(left) + invariant.estimated_cost(right), place, invariant)
+        for place, invariant in enumerate(iter_finer(min(len(left.component_cycles), 64)))
+        if invariant.is_applicable(left) and invariant.is_applicable(right)
+    ]
+    steps.sort(key=lambda step: (max(step[0], NEGLIGIBLE_SECONDS), step[1]))
+    return [invariant for _, _, invariant in steps]
+
+
+def iter_finer(components: int) -> Iterator[Invariant]:
+    """All of them, for links of so many components; where cost does not matter, in this order."""
+    own = [*map(_levine_tristram, ROOTS_OF_UNITY), *map(_alexander_module, PRIMES)]
+    colourings = list(map(_colouring, _group_ladder()))
+    for count in range(1, components):
+        if comb(components, count) <= _MOST_SUBLINKS:
+            certifying = (step for step in INVARIANTS if step.certifies)
+            yield from (
+                of_sublinks(step, count) for step in certifying if step.name != "components"
+            )
+    yield from own
+    yield from colourings
+    for count in range(1, components):
+        if comb(components, count) <= _MOST_SUBLINKS:
+            yield from (of_sublinks(step, count) for step in chain(own, colourings))
+
+
+def of_sublinks(invariant: Invariant, components: int) -> Invariant:
+    """The values of an invariant for all sublinks of so many components."""
+
+    def total(cost: Callable[[Braid], float]) -> Callable[[Braid], float]:
+        return lambda braid: sum(map(cost, sublinks.iter_sublinks(braid, components)))
+
+    def is_applicable(braid: Braid) -> bool:
+        return all(map(invariant.is_applicable, sublinks.iter_sublinks(braid, components)))
+
+    checked = invariant.verification_cost
+    inner = (("invariant", invariant.name), *invariant.parameters)
+    noun = "component" if components == 1 else "components"
+    return Invariant(
+        name="sublinks",
+        title=f"{invariant.title} of all sublinks of {components} {noun}",
+        compute=partial(_compute_of_sublinks, components=components, compute=invariant.compute),
+        estimated_cost=total(invariant.estimated_cost),
+        is_applicable=is_applicable,
+        parameters=(("components", components), *inner),
+        verification_cost=None if checked is None else total(checked),
+    )
+
+
+def _compute_of_sublinks(
+    braid: Braid, components: int, compute: Callable[[Braid], Value]
+) -> list[Value]:
+    return sublinks.sublink_values(braid, components, compute)
+
+
+def _levine_tristram(root: tuple[int, int]) -> Invariant:
+    order, power = root
+    return Invariant(
+        name="levine-tristram",
+        title=f"{TITLES['levine-tristram']} at exp(2 pi i {power}/{order})",
+        compute=partial(levine_tristram.levine_tristram_signature, order=order, power=power),
+        estimated_cost=partial(levine_tristram.estimated_cost, order=order),
+        is_applicable=partial(levine_tristram.is_applicable, order=order),
+        parameters=(("order", order), ("power", power)),
+    )
+
+
+def _alexander_module(prime: int) -> Invariant:
+    return Invariant(
+        name="alexander-module",
+        title=f"{TITLES['alexander-module']} modulo {prime}",
+        compute=partial(alexander_module.alexander_module_factors, prime=prime),
+        estimated_cost=partial(alexander_module.estimated_cost, prime=prime),
+        is_applicable=partial(alexander_module.is_applicable, prime=prime),
+        parameters=(("prime", prime),),
+    )
+
+
+def _group_ladder() -> list[Colours]:
+    from braidsearch.invariants.colourings import group_ladder  # noqa: PLC0415 - tables of groups
+
+    return list(group_ladder())
+
+
+def _colouring(colours: Colours) -> Invariant:
+    from braidsearch.invariants import colourings  # noqa: PLC0415 - tables of groups
+
+    return Invariant(
+        name="colouring",
+        title=f"{TITLES['colouring']} in {colours.name}",
+        compute=partial(colourings.count_colourings, colours=colours),
+        estimated_cost=partial(colourings.estimated_cost, colours=colours),
+        is_applicable=partial(colourings.is_applicable, colours=colours),
+        parameters=(("generators", colours.generators), ("meridians", colours.meridians)),
+        verification_cost=partial(colourings.verification_seconds, colours=colours),
+    )
