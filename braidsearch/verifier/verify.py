@@ -20,8 +20,9 @@ from collections import Counter
 from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 from fractions import Fraction
-from itertools import combinations, pairwise
+from itertools import combinations, compress, pairwise
 from math import comb, factorial, gcd, isqrt
+from operator import eq
 from typing import Any, NamedTuple, NoReturn
 
 MAX_FILE_BYTES = 16_000_000
@@ -34,7 +35,7 @@ MAX_STATE_BITS = 2_000_000_000  # held at one time by the state sum of the Jones
 MAX_DEGREE = 200  # of a permutation
 MAX_GENERATORS = 1_000  # of a group of permutations, and as many meridians
 MAX_GROUP = 500_000  # elements of a group that colours links
-MAX_COLOURS = 4_000  # elements of it that may be colours
+MAX_COLOURS = 3_000  # elements of it that may be colours
 
 
 # ---------------------------------------------------------------------------- what comes out
@@ -523,7 +524,7 @@ def read_letter(data: Any) -> int:
 
 def read_permutation(data: Any) -> list[int]:
     """The images of 1, ..., d under a permutation of them."""
-    images = list_of(integer_in(1, MAX_DEGREE), MAX_DEGREE, least=1)(data)
+    images: list[int] = list_of(integer_in(1, MAX_DEGREE), MAX_DEGREE, least=1)(data)
     if sorted(images) != list(range(1, len(images) + 1)):
         raise UnreadableError(f"not a permutation of 1 to {len(images)}")
     return images
@@ -1421,7 +1422,7 @@ def three_braid(braid: Braid, work: Work) -> list[list[int]]:
     so. All letters a inside the powers stay, and a cyclic word has length / 2 letters a.
 
     By the image in SL(2, Z), 1 -> (1 1; 0 1) and 2 -> (1 0; -1 1), e trace = p q v - p - q - v; and
-    total = p + q + v + 3 e. So p q v and p + q + v are known, v determines p and q, and divides p q v.
+    total = p + q + v + 3 e. So e, p + q + v and p q v are known, and v, a divisor, gives p and q.
     """
     if braid.strands > 3:
         raise RejectedError(f"a braid on {braid.strands} strands: expected at most 3")
@@ -1540,31 +1541,28 @@ def colouring(
     diagram = diagram_of(braid, work)
     seeds = choose_seeds(diagram, braid.strands, len(palette.elements), work)
     known = determined({seeds[0]}, diagram.relations, work)
-    steps = steps_after(known | {*seeds[:2]}, seeds[2:], diagram)
+    steps = steps_after(known, seeds[1:], diagram)
     counts: Counter[tuple[int, ...]] = Counter()
     remembered: dict[tuple[int, bytes], bytes] = {}
     for kind, members in enumerate(palette.classes):
-        columns = {arc: [members[0]] for arc in known} | {WEIGHT: [len(members)]}
-        if len(seeds) > 1:
-            is_beside = any(diagram.owner[arc] == diagram.owner[seeds[1]] for arc in known)
-            choices = members if is_beside else range(len(palette.elements))
+        fixed = dict.fromkeys(known, members[0])
+        columns = {WEIGHT: [len(members)]}
+        for second in steps[:1]:
+            choices = members if second.one >= 0 else range(len(palette.elements))
             orbits = orbits_of(choices, kind, palette, work)
-            columns = {arc: [members[0]] * len(orbits) for arc in known}
-            columns[seeds[1]] = [orbit[0] for orbit in orbits]
+            columns = {second.target: [orbit[0] for orbit in orbits]}
             columns[WEIGHT] = [len(members) * len(orbit) for orbit in orbits]
-        for found in solutions(columns, steps, palette, work):
-            for row in zip(*found.values(), strict=True):
-                colours = dict(zip(found, row, strict=True))
-                pairs = [peripheral(one, colours, palette, work) for one in diagram.circuits]
-                entries = []
-                for number, longitude in pairs:
-                    if (number, longitude) not in remembered:
-                        work.spend(6 * len(palette.centralisers[number]))
-                        images = (conjugate(longitude, g) for g in palette.centralisers[number])
-                        remembered[number, longitude] = min(images)
-                    least = remembered[number, longitude]
-                    entries.append((number + 1, *(image + 1 for image in least[:degree])))
-                counts[sum(sorted(entries), ())] += colours[WEIGHT]
+        for colours in solutions(fixed, columns, steps[1:], palette, work):
+            entries = []
+            for circuit in diagram.circuits:
+                pair = peripheral(circuit, colours, palette, work)
+                if pair not in remembered:
+                    centraliser = palette.centralisers[pair[0]]
+                    work.spend(6 * len(centraliser))
+                    remembered[pair] = min(conjugate(pair[1], g) for g in centraliser)
+                least = remembered[pair][:degree]
+                entries.append((pair[0] + 1, *(image + 1 for image in least)))
+            counts[sum(sorted(entries), ())] += colours[WEIGHT]
     return sorted([*entries, count] for entries, count in counts.items())
 
 
@@ -1594,7 +1592,7 @@ def palette_of(generators: list[list[int]], meridians: list[list[int]], work: Wo
         work.spend(8 + 4 * len(steps))
         fresh = {element.translate(step) for step in steps} - seen
         seen |= fresh
-        group.extend(sorted(fresh))
+        group.extend(fresh)
         if len(group) > MAX_GROUP:
             raise RejectedError(f"too large for this verifier: more than {MAX_GROUP} elements")
     number: dict[bytes, int] = {}
@@ -1715,7 +1713,7 @@ def determined(arcs: set[int], relations: list[tuple[int, int, int]], work: Work
     known, size = set(arcs), -1
     while size < len(known):
         size = len(known)
-        work.spend(2 * len(relations))
+        work.spend(10 + len(known) + 2 * len(relations))
         for over, one, other in relations:
             if over in known and (one in known) != (other in known):
                 known |= {one, other}
@@ -1734,7 +1732,9 @@ def choose_seeds(diagram: Diagram, strands: int, colours: int, work: Work) -> tu
     useful = [arc for arc in diagram.owner if arc < strands or arc % stride == 0]
 
     def tried(known: frozenset[int]) -> int:
-        return colours ** max(0, len(known) - sum(known.issuperset(one) for one in relations))
+        work.spend(20 + 2 * len(relations))
+        freedom = len(known) - sum(known.issuperset(one) for one in relations)
+        return int(colours ** max(0, freedom))
 
     plans: dict[frozenset[int], tuple[int, tuple[int, ...]]] = {frozenset(): (0, ())}
     while all_arcs not in plans:
@@ -1763,16 +1763,22 @@ class Step(NamedTuple):
 
 
 def steps_after(known: frozenset[int], seeds: Sequence[int], diagram: Diagram) -> list[Step]:
-    """All that follows from known colours, checks as soon as possible; then from each more seed."""
-    arcs, waiting = set(known), list(diagram.relations)
+    """Each seed and all that follows from it and what is known, checks as soon as possible."""
+    arcs = set(known)
+    waiting = [relation for relation in diagram.relations if not known.issuperset(relation)]
     steps: list[Step] = []
-    for seed in (None, *seeds):
-        if seed is not None:
-            beside = [arc for arc in arcs if diagram.owner[arc] == diagram.owner[seed]]
-            steps.append(Step(seed, -1, min(beside, default=-1)))
-            arcs.add(seed)
+
+    def promise(relation: tuple[int, int, int]) -> tuple[bool, bool]:
+        then = arcs.union(relation)
+        checks = (then.issuperset(other) for other in waiting if other is not relation)
+        return arcs.issuperset(relation), any(checks)
+
+    for seed in seeds:
+        beside = [arc for arc in arcs if diagram.owner[arc] == diagram.owner[seed]]
+        steps.append(Step(seed, -1, min(beside, default=-1)))
+        arcs.add(seed)
         while ready := [r for r in waiting if r[0] in arcs and (r[1] in arcs or r[2] in arcs)]:
-            over, one, other = relation = max(ready, key=arcs.issuperset)
+            over, one, other = relation = max(ready, key=promise)
             waiting.remove(relation)
             forward = one in arcs
             steps.append(Step(other, over, one) if forward else Step(one, over, other, True))
@@ -1781,36 +1787,52 @@ def steps_after(known: frozenset[int], seeds: Sequence[int], diagram: Diagram) -
 
 
 def solutions(
-    columns: dict[int, list[int]], steps: Sequence[Step], palette: Palette, work: Work
-) -> Iterator[dict[int, list[int]]]:
-    """The tables of colourings, an arc a column, that grow from the rows of one by the steps."""
+    fixed: dict[int, int],
+    columns: dict[int, list[int]],
+    steps: Sequence[Step],
+    palette: Palette,
+    work: Work,
+) -> Iterator[dict[int, int]]:
+    """The colourings that the steps make of the rows of a table, an arc a column.
+
+    Arcs in ``fixed`` have one colour in all rows; each seed starts a table for each row.
+    """
     for number, (target, over, one, backward) in enumerate(steps):
         if over < 0:
-            for row in zip(*columns.values(), strict=True):
-                colours = dict(zip(columns, row, strict=True))
+            for colours in rows_of(fixed, columns):
                 choices: Sequence[int] = range(len(palette.elements))
                 if one >= 0:
                     choices = palette.classes[palette.kinds[colours[one]]]
-                table = {arc: [colour] * len(choices) for arc, colour in colours.items()}
-                table[target] = list(choices)
-                work.spend(10 * len(table) + len(choices) // 4)
-                yield from solutions(table, steps[number + 1 :], palette, work)
+                work.spend(20 + len(choices) // 4)
+                table = {target: list(choices)}
+                yield from solutions(colours, table, steps[number + 1 :], palette, work)
             return
         rows = palette.back if backward else palette.table
-        found = [rows[o][c] for o, c in zip(columns[over], columns[one], strict=True)]
-        work.spend(8 + len(found) // 2)
-        if target not in columns:
+        if over in fixed:
+            row = rows[fixed[over]]
+            found = [row[c] for c in columns[one]]
+        elif one in fixed:
+            colour = fixed[one]
+            found = [rows[o][colour] for o in columns[over]]
+        else:
+            found = [rows[o][c] for o, c in zip(columns[over], columns[one], strict=True)]
+            work.spend(len(found) // 2)
+        work.spend(20 + len(found) // 4)
+        if target not in columns and target not in fixed:
             columns[target] = found
             continue
-        keep = [
-            k
-            for k, pair in enumerate(zip(found, columns[target], strict=True))
-            if len({*pair}) == 1
-        ]
-        if not keep:
+        wanted = columns[target] if target in columns else [fixed[target]] * len(found)
+        keep = list(map(eq, found, wanted))
+        if True not in keep:
             return
-        columns = {arc: [column[k] for k in keep] for arc, column in columns.items()}
-    yield columns
+        columns = {arc: list(compress(column, keep)) for arc, column in columns.items()}
+    yield from rows_of(fixed, columns)
+
+
+def rows_of(fixed: dict[int, int], columns: dict[int, list[int]]) -> Iterator[dict[int, int]]:
+    """The rows of a table as colourings."""
+    for row in zip(*columns.values(), strict=True):
+        yield fixed | dict(zip(columns, row, strict=True))
 
 
 def peripheral(
