@@ -12,7 +12,6 @@ from typing import Any
 import numpy as np
 from numpy.typing import NDArray
 
-from braidsearch import compiling
 from braidsearch.errors import CapacityError
 from braidsearch.invariants.colourings.class_tables import (
     ClassTables,
@@ -141,6 +140,7 @@ def _kernels() -> ModuleType:
 
     Where the compiler is present but fails, they are loaded again as plain functions.
     """
+    compiling = importlib.import_module("braidsearch.compiling")
     kernels = importlib.import_module("braidsearch.invariants.colourings.kernels")
     if not compiling.is_compiled():
         return kernels

@@ -126,18 +126,18 @@ class _Progress:
                     self._conclude(number, waiting)
 
     def _conclude(self, number: int, waiting: list[int]) -> None:
-        crossing = self.diagram.crossings[number]
-        _, before, after = crossing
-        known_over, known_before, known_after = (self.known[arc] for arc in crossing)
-        if not known_over or not (known_before or known_after):
+        """Use a crossing up, if two of its arcs are known and one of them goes over."""
+        crossing, known = self.diagram.crossings[number], self.known
+        over, before, after = crossing
+        if not known[over] or not (known[before] or known[after]):
             return
         self.used[number] = True
-        if known_before and known_after:
+        if known[before] and known[after]:
             self.steps.append(Step(StepKind.CHECK, *crossing))
             return
-        kind, new = (StepKind.FORWARD, after) if known_before else (StepKind.BACKWARD, before)
+        kind, new = (StepKind.FORWARD, after) if known[before] else (StepKind.BACKWARD, before)
         self.steps.append(Step(kind, *crossing))
-        self.known[new] = True
+        known[new] = True
         waiting.append(new)
 
     def merit(self) -> tuple[int, int]:
