@@ -1,8 +1,9 @@
 """The groups that links are coloured with, cheapest first.
 
 Chosen are small groups of several kinds, and of each group the classes of at most 1,000 elements
-whose members generate it: any other class colours a link with a proper subgroup alone, which is
-better asked by itself. Of classes that an automorphism of the group takes into each other one is
+(of Suzuki's, 2,000, since all its elements of odd order are conjugate to their inverses) whose
+members generate it: any other class colours a link with a proper subgroup alone, which is better
+asked by itself. Of classes that an automorphism of the group takes into each other one is
 kept, since their colourings correspond; of a class and that of its inverses one, since colourings
 by the one are the colourings of the reversed link by the other. Nothing here knows any link.
 
@@ -37,7 +38,7 @@ def group_ladder() -> Sequence[Colours]:
     """
     found = [
         colours
-        for family in (_symmetric, _alternating, _affine, _projective, _linear, _mathieu)
+        for family in _FAMILIES
         for name, group, meridians in family()
         for colours in _named(name, group, meridians)
     ]
@@ -275,3 +276,12 @@ def _mathieu() -> Family:
         (8, 990, (a, a, b)),
     ]
     yield "M11", group, ((order, size, images(product(*word), 11)) for order, size, word in words)
+
+
+def _suzuki() -> Family:
+    """Sz(8): (x, y) -> (x, y + 1) is an involution, (x, y) -> (x + 1, y + x) has order 4."""
+    group = groups.suzuki_group(8)
+    yield "Sz(8)", group, iter([(2, 455, group[1]), (4, 1820, group[0])])
+
+
+_FAMILIES = (_symmetric, _alternating, _affine, _projective, _linear, _mathieu, _suzuki)

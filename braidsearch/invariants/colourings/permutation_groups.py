@@ -116,6 +116,40 @@ def _map_of(prime: int, function: Callable[[int], int]) -> Images:
     return tuple(function(t) % prime + 1 for t in range(prime))
 
 
+def suzuki_group(order: int = 8) -> tuple[Images, ...]:
+    """Sz(q), q = 2^(2m+1), on the points of Tits's ovoid: infinity and (x, y, z).
+
+    Here z = x y + x^2 T(x) + T(y), and T is the automorphism with T(T(x)) = x^2. The generators
+    are (x, y) -> (x + 1, y + x), (x, y) -> (x, y + 1), (x, y) -> (w x, w T(w) y) and
+    (x, y, z) -> (y/z, x/z), which trades infinity for the origin (J. Tits, Ovoides et groupes de
+    Suzuki, 1962).
+    """
+    field = finite_field(order)
+    add, multiply = field.add, field.multiply
+    w = field.primitive_element
+
+    def root(x: int) -> int:
+        return field.frobenius(x, (field.degree + 1) // 2)
+
+    def turned(x: int, y: int) -> Vector:
+        z = add(add(multiply(x, y), multiply(field.power(x, 2), root(x))), root(y))
+        if not z:
+            return ()
+        return multiply(y, field.power(z, -1)), multiply(x, field.power(z, -1))
+
+    points: list[Vector] = [(), *product(range(order), repeat=2)]
+    places = {point: place + 1 for place, point in enumerate(points)}
+    maps: list[Callable[[int, int], Vector]] = [
+        lambda x, y: (add(x, 1), add(y, x)),
+        lambda x, y: (x, add(y, 1)),
+        lambda x, y: (multiply(w, x), multiply(multiply(w, root(w)), y)),
+        turned,
+    ]
+    images = [[places[image(*point)] for point in points[1:]] for image in maps]
+    infinity = [1, 1, 1, places[0, 0]]
+    return tuple((first, *rest) for first, rest in zip(infinity, images, strict=True))
+
+
 def times_matrix(field: FiniteField, vector: Vector, matrix: Matrix) -> Vector:
     """The row vector times the matrix."""
     result = []
