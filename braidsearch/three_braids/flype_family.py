@@ -2,7 +2,8 @@
 
 The claim. Let F be the class of 1^u 2^v 1^w 2^e, e = +-1, and F' that of its flype
 1^w 2^v 1^u 2^e. Then F' is F read backwards, and the classes F that differ from F' are exactly
-those that ``flype_exponents`` recognises.
+those that ``flype_exponents`` recognises. So the flype partner depends on F alone, in whatever
+way F is written as such a word.
 
 Reading backwards. 2^e 1^w 2^v 1^u is the first word read backwards and a rotation of the second.
 Read backwards, the exponent sum stays and the cyclic word in a and b is read backwards
@@ -36,9 +37,9 @@ which is not negative.
 The first two lines say the same: all runs + P, - y, + Q, - 1 with y >= 2. Such a word is symmetric
 exactly when P = Q. The next two say: + P, - x, + 1, - y with P >= 2, symmetric exactly when x = y.
 The last two: three single signs of one kind apart by three runs of the other, symmetric exactly
-when two of the runs are equal. The exponents are read off from the runs: the recognition tries
-the finitely many rotations, needs no bound and misses nothing, as the lengths of the runs are the
-exponents up to constants.
+when two of the runs are equal. The exponents are the lengths of the runs up to constants, so they
+are read off: the recognition tries the rotations of at most six runs and misses nothing. No search
+over exponents is needed, and a word with N letters b has |u| + |v| + |w| <= N + 5.
 
 As a by-product F != F' exactly when u != w, |v| >= 2 and neither u nor w is one of 0, e, 2e, v+e
 (Ko, Lee, Flypes of closed 3-braids in the standard contact space, 1999). The torus links (2, k)

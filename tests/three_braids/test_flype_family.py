@@ -38,10 +38,10 @@ def is_proper(exponents: Exponents) -> bool:
     return u != w and abs(v) >= 2 and {u, w}.isdisjoint({0, e, 2 * e, v + e})
 
 
-def table_of_words(u: int, v: int, w: int) -> tuple[int, list[tuple[int, int]]] | None:
+def line_of_table(u: int, v: int, w: int) -> tuple[int, list[tuple[int, int]]] | None:
     """The line of the table beside the recognition, for e = 1: full twists and runs of signs."""
     if u > 2 and w < 0:
-        line = table_of_words(w, v, u)
+        line = line_of_table(w, v, u)
         return line and (line[0], line[1][::-1])
     if u < 0 and w < 0:
         if v > 0:
@@ -69,7 +69,7 @@ def test_the_table_of_the_proof_holds():
     """Every line of the table, for exponents up to 9, both signs by the mirror image."""
     lines = 0
     for u, v, w, sign in exponents_up_to(LARGEST):
-        line = table_of_words(sign * u, sign * v, sign * w) if abs(v) >= 2 else None
+        line = line_of_table(sign * u, sign * v, sign * w) if abs(v) >= 2 else None
         if line is not None:
             full_twists, runs = line
             signs = tuple(sign * kind for kind, length in runs for _ in range(length))

@@ -1,13 +1,13 @@
 """Moves between closed 3-braids: replayed, put into a certificate, verified, and damaged."""
 
 import random
-from itertools import product
+from itertools import pairwise, product
 
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from braidsearch.certificates import Certificate, format_certificate
+from braidsearch.certificates import Certificate, Distinction, format_certificate
 from braidsearch.errors import InputError
 from braidsearch.moves import Destabilize, Move, MoveChain, Stabilize, flype_word, power
 from braidsearch.three_braids import link_classes, moves_between
@@ -42,6 +42,13 @@ def assert_proven(left: Braid, right: Braid) -> list[Move]:
     if moves and chain.braids[-2] != right:
         assert report(left, right, moves[:-1]).status == "rejected"
     return moves
+
+
+def report_of_difference(left: Braid, right: Braid) -> Report:
+    """The verifier's report on the two lists of classes, which it computes for itself."""
+    lists = link_classes(left), link_classes(right)
+    distinction = Distinction("identity", "three-braid", {}, (), (), *lists)
+    return verify_text(format_certificate(Certificate.different(left, right, [distinction])))
 
 
 def conjugate(word: tuple[int, ...], generator: random.Random, letters: int = 12) -> Braid:
@@ -104,6 +111,28 @@ def test_there_are_moves_exactly_when_the_lists_agree(left, right):
         assert_proven(left, right)
     else:
         assert moves_between(left, right) is None
+        assert report_of_difference(left, right).valid
+
+
+def test_lists_are_those_of_the_verifier():
+    """Members of the flype family, torus links and random words, each against the next one.
+
+    The verifier has its own code, and accepts only values that it finds itself.
+    """
+    generator = random.Random(24)
+    words = [flype_word(*e) for e in product(*[(-5, -3, -2, 1, 3, 4, 6)] * 3, (1, -1))]
+    words += [(*power(1, twists), letter) for twists in range(-9, 10) for letter in (2, -2)]
+    words += [tuple(generator.choices((1, -1, 2, -2), k=count % 40)) for count in range(800)]
+    generator.shuffle(words)
+    different = 0
+    for one, other in pairwise(words):
+        left, right = Braid(one, 3), conjugate(other, generator)
+        if link_classes(left) != link_classes(right):
+            assert report_of_difference(left, right).valid
+            different += 1
+        else:
+            assert report_of_difference(left, right).status == "rejected"
+    assert different > 1_000
 
 
 def test_all_pairs_of_short_words_are_decided():
