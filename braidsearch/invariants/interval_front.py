@@ -28,6 +28,11 @@ class IntervalFront:
         self._free = list(reversed(range(8)))
         self._waiting: list[int] = []
 
+    @property
+    def waiting(self) -> int:
+        """How many completed variables have not been eliminated."""
+        return len(self._waiting)
+
     def add_vertex(self) -> int:
         """A new variable, named by an integer that is free for use again once eliminated."""
         if not self._free:

@@ -148,17 +148,25 @@ def _signature_of_factor(braid: Braid, order: int, power: int, nullity: int) -> 
     dimension twice the nullity.
     """
     rank = len(braid) - 2 * nullity
-    precision = _FIRST_BITS * (1 + len(braid) // 16)  # errors grow by some 3 bits a letter
+    precision = _FIRST_BITS * (1 + len(braid) // 14)  # errors grow by some 4 bits a letter
     while True:
-        front = _kashaev_front(braid, order, power, precision)
+        front = _kashaev_front(braid, (order, power), precision, nullity)
         if front.positive + front.negative == rank:
             return (front.positive - front.negative - braid.exponent_sum) // 2
-        precision *= 2
+        precision += (precision + 1) // 2
 
 
-def _kashaev_front(braid: Braid, order: int, power: int, precision: int) -> IntervalFront:
-    """The front after all letters; column i lies between strand positions i and i + 1."""
+def _kashaev_front(
+    braid: Braid, root: tuple[int, int], precision: int, nullity: int
+) -> IntervalFront:
+    """The front after all letters, or after so many that precision is known to be too low.
+
+    Column i lies between strand positions i and i + 1. Were all pivots found that there are, the
+    form would vanish on the completed variables, and whatever of them is orthogonal to the less
+    than 2 n others too would lie in the radical: so at most 2 n + 2 nullity are waiting.
+    """
     front = IntervalFront(precision)
+    order, power = root
     around = [-1, -1, *(front.add_vertex() for _ in range(2, braid.strands + 1))]
     weights = (
         1 << precision,
@@ -176,6 +184,8 @@ def _kashaev_front(braid: Braid, order: int, power: int, precision: int) -> Inte
         current[column] = south
         if north != around[column]:
             front.complete(north)
+        if front.waiting > 2 * (braid.strands + nullity):
+            return front
     for vertex in around[2:]:
         front.complete(vertex)
     return front
