@@ -82,8 +82,8 @@ class ThreeBraidClass:
 class Conjugation:
     """A braid conjugated to the word that names its class.
 
-    The image of the braid is prefix * cycle * prefix^-1, where the cycle is the word of the class
-    repeated: ``period`` letters of it ``root``.
+    The image of the braid is prefix * letters * prefix^-1 for the letters of the class, which are
+    a power of ``root`` and of no shorter word.
     """
 
     conjugacy_class: ThreeBraidClass
