@@ -155,6 +155,8 @@ class Query:
             for invariants in (ladder, finer_ladder):
                 if self._distinguish(*handy, dearest, invariants):
                     return self._different()
+            if self.budget.ending() is not None:  # asked for little, so no dearer invariants
+                return None
             share = until
         return self._search(share, _LAST_SHARE)
 
