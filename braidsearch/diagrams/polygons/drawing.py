@@ -16,6 +16,9 @@ from braidsearch.diagrams.polygons.projection import Projection, project_polygon
 from braidsearch.errors import CapacityError, InputError
 
 _MOST_SEEDS = 20
+_MOVES, _LEAST_ROUNDS, _MOST_ROUNDS = 10_000, 5, 200
+_MOST_EXAMINED = 20_000_000
+_TRIANGLE = np.array([[0.0, 0.0, 0.0], [0.5, 0.0, 0.0], [0.0, 0.5, 0.0]])
 
 
 def polygon_diagram(
@@ -23,30 +26,47 @@ def polygon_diagram(
 ) -> LinkDiagram:
     """The diagram of closed polygons in space: arrays of n x 3 coordinates, one a component.
 
-    The polygons are simplified by triangle moves unless ``is_simplified`` is False, and projected
-    along ``directions`` seeded directions in general position; the fewest crossings are kept.
-    Every decision is exact for the doubles given. The same seed gives the same diagram.
+    The polygons are simplified (see ``simplify_polygons``) unless ``is_simplified`` is False, and
+    projected along ``directions`` seeded directions in general position; the fewest crossings
+    are kept. Every decision is exact for the doubles given. The same seed gives the same diagram.
 
     Raises InputError for what is no polygon (see ``check_polygons``) and for polygons that meet
     themselves or each other, and CapacityError for too many crossings.
     """
     _, edges = embedded_edges(polygons)
     if is_simplified:
-        load_loops().remove_all_vertices(edges)
+        _simplify(edges, seed, may_move=True)
     return _draw(edges, seed, max(1, directions))
 
 
-def simplify_polygons(polygons: Iterable[Any]) -> list[Polygon]:
-    """The same link with fewer vertices: those removed whose triangle no edge pierces.
+def simplify_polygons(
+    polygons: Iterable[Any], seed: int = 0, *, may_move: bool = True
+) -> list[Polygon]:
+    """The same link with fewer vertices, a component an array, in the order given.
 
-    The vertices left are rows of the input, in order. A component that comes to span a triangle
-    free of everything else is an unknot split from the rest, and remains as that triangle. Raises
-    InputError as ``polygon_diagram`` does.
+    First every vertex is removed whose triangle with its neighbours no edge pierces (Koniaris,
+    Muthukumar, Knottedness in ring polymers, 1991; the move is Reidemeister's, 1932). Then, unless
+    ``may_move`` is False, vertices are moved at random where that shortens the polygon and the
+    triangles swept are not pierced, and more can be removed; otherwise the vertices left are rows
+    of the input, in order. A component that comes to span a triangle free of everything else is
+    an unknot split from the rest: the others no longer see it, and it comes back as a triangle
+    beside them.
+
+    Raises InputError as ``polygon_diagram`` does.
     """
     power, edges = embedded_edges(polygons)
-    load_loops().remove_all_vertices(edges)
-    points = np.ldexp(edges.points.reshape(-1, 3), power)
-    return [points[loop] for loop in _loops(edges)]
+    _simplify(edges, seed, may_move)
+    return [np.ldexp(polygon, power) for polygon in _polygons_left(edges)]
+
+
+def _simplify(edges: Edges, seed: int, may_move: bool) -> None:
+    loops = load_loops()
+    loops.remove_all_vertices(edges)
+    left = int((edges.follows >= 0).sum())
+    if may_move and left:
+        patience = min(max(_MOVES // left, _LEAST_ROUNDS), _MOST_ROUNDS)
+        state = np.array([1 + seed % (2**31 - 2), 0])
+        loops.shorten(edges, state, patience, _MOST_EXAMINED)
 
 
 def embedded_edges(polygons: Iterable[Any]) -> tuple[int, Edges]:
@@ -68,18 +88,21 @@ def _row(edges: Edges, vertex: int) -> str:
     return f"row {row} of component {polygon + 1}"
 
 
-def _loops(edges: Edges) -> list[list[int]]:
-    """The vertices of each polygon that are left, in order."""
-    loops = []
-    alive = edges.follows >= 0
+def _polygons_left(edges: Edges) -> list[Polygon]:
+    """The vertices of each polygon that are left; all but split unknots have sizes below 1."""
+    points = edges.points.reshape(-1, 3)
+    polygons = []
     for polygon, size in enumerate(edges.sizes.tolist()):
         if size > 0:
-            loops.append(np.flatnonzero(alive & (edges.polygon == polygon)).tolist())
+            alive = (edges.follows >= 0) & (edges.polygon == polygon)
+            polygons.append(points[np.flatnonzero(alive)])
+        elif len(edges.sizes) > 1:
+            polygons.append(_TRIANGLE + np.array([2.0 + polygon, 0.0, 0.0]))
         else:
             last = -1 - size
             before = int(edges.precedes[last])
-            loops.append(sorted((last, before, int(edges.precedes[before]))))
-    return loops
+            polygons.append(points[sorted((last, before, int(edges.precedes[before])))])
+    return polygons
 
 
 def _draw(edges: Edges, seed: int, directions: int) -> LinkDiagram:

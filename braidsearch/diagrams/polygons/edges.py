@@ -14,7 +14,8 @@ Numbers = Any  # arrays for the compiled loops; anything with an index for the p
 
 AXES = 1  # the unit vectors, counted from the origin
 DIRECTION = 4  # the direction of projection, counted from the origin
-EXTRA_POINTS = 5
+SPARE = 5  # a point that a vertex may move to, counted from the origin
+EXTRA_POINTS = 6
 
 _LOWEST_BIT = -340
 
@@ -22,7 +23,7 @@ _LOWEST_BIT = -340
 class Edges(NamedTuple):
     """The arrays that the loops work on; v vertices, in p polygons.
 
-    ``points``: 3 (v + 5) coordinates, see ``exact_signs``; ``follows`` and ``precedes``: for each
+    ``points``: 3 (v + 6) coordinates, see ``exact_signs``; ``follows`` and ``precedes``: for each
     vertex its neighbours, -1 once it is removed; ``polygon``: for each vertex the number of its
     polygon; ``sizes``: for each polygon its vertices; ``low`` and ``high``: the boxes of the
     tree, 6 numbers for each leaf; ``query_low`` and ``query_high``: the box asked for.

@@ -1,8 +1,8 @@
 """Exact signs of determinants of differences of points: every geometric question asks these.
 
 ``points`` holds x y z of one point after the other. A row of a determinant is the difference of
-two points, named by their numbers. Behind the vertices stand five more points: the origin, the
-three unit vectors and the direction of projection, so that a direction is a difference as well.
+two points, named by their numbers. Behind the vertices stand more points: the origin, the three
+unit vectors, the direction of projection and a spare point; so a direction is a difference too.
 
 Each coordinate is a double of size at most 1 and a multiple of 2^-340; then no product of three
 differences underflows, and the arithmetic below is exact where it says so.

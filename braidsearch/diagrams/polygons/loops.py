@@ -12,7 +12,7 @@ import numpy as np
 from braidsearch import compiling
 from braidsearch.diagrams.polygons.edges import Edges, Numbers, work_arrays
 
-_MODULES = ("exact_signs", "box_tree", "meetings", "reduction", "crossings")
+_MODULES = ("exact_signs", "box_tree", "meetings", "reduction", "shortening", "crossings")
 
 
 class Loops(NamedTuple):
@@ -21,6 +21,7 @@ class Loops(NamedTuple):
     build_tree: Callable[[Edges], None]
     first_meeting: Callable[[Edges], tuple[int, int]]
     remove_all_vertices: Callable[[Edges], None]
+    shorten: Callable[[Edges, Numbers, int, int], None]
     find_crossings: Callable[[Edges, Edges, Numbers], int]
     find_heights: Callable[[Edges, Numbers, Numbers, Numbers], None]
 
@@ -29,7 +30,9 @@ class Loops(NamedTuple):
 def load_loops() -> Loops:
     """The loops, compiled; the first call compiles them, or loads what was compiled before.
 
-    Where the compiler is present but fails, they are loaded again as plain functions.
+    Where the compiler is present but fails, they are loaded again as plain functions. What was
+    compiled is kept with the file in which it stands and knows only of changes there: whoever
+    edits one of these modules removes what is kept for the others.
     """
     folder = __name__.rpartition(".")[0]
     modules = [importlib.import_module(f"{folder}.{name}") for name in _MODULES]
@@ -49,12 +52,14 @@ def _gathered() -> Loops:
         box_tree,
         crossings,
         reduction,
+        shortening,
     )
 
     return Loops(
         box_tree.build_tree,
         reduction.first_meeting,
         reduction.remove_all_vertices,
+        shortening.shorten,
         crossings.find_crossings,
         crossings.find_heights,
     )
@@ -68,4 +73,5 @@ def _run_once(loops: Loops) -> None:
     loops.find_crossings(edges, edges, np.zeros(2, np.int64))
     none = np.zeros(0, np.int64)
     loops.find_heights(edges, none, none, none)
+    loops.shorten(edges, np.ones(2, np.int64), 1, 1)
     loops.remove_all_vertices(edges)

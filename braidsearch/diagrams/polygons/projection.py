@@ -53,6 +53,7 @@ def project_polygons(edges: Edges, seed: int, directions: int) -> Projection:
             continue
         tried += 1
         if best is None and len(pairs) > MAX_CROSSINGS:
+            failures += _MOST_FAILURES // 3
             continue
         if best is None or len(pairs) < len(best):
             best, best_direction = pairs, direction

@@ -16,10 +16,10 @@ import numpy as np
 from braidsearch.diagrams.polygons import polygon_diagram
 from braidsearch.diagrams.polygons.loops import load_loops
 generator = np.random.default_rng(3)
-first, second = generator.uniform(size=(2, 20, 3))
+first, second = generator.uniform(size=(2, 12, 3))
 for polygons in ([first], [first, second], [np.round(20 * first), 20 * second]):
     for is_simplified in (True, False):
-        print(polygon_diagram(polygons, directions=3, is_simplified=is_simplified))
+        print(polygon_diagram(polygons, directions=2, is_simplified=is_simplified))
 print(hasattr(load_loops().find_crossings, "signatures"), file=sys.stderr)
 """
 

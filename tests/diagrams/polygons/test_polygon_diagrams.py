@@ -256,23 +256,47 @@ def test_coincidences_in_the_coordinate_directions(is_simplified):
 
 
 def test_simplified_polygons():
-    """A subset of the rows, in order; no more edges than a stick number allows; the same knot."""
+    """A subset of the rows, in order; about the fewest edges that will do; the same knot."""
     polygon = torus_polygon(2, 3, 2000)
-    (simplified,) = simplify_polygons([polygon])
-    rows = [int(np.flatnonzero((polygon == row).all(axis=1))[0]) for row in simplified]
-    assert rows == sorted(rows)
-    assert 6 <= len(simplified) <= 12  # no trefoil has fewer than six edges (Randell, 1994)
-    assert jones_polynomial(closed_braid([simplified])) == jones_polynomial(torus_link(2, 3))
+    (rows,) = simplify_polygons([polygon], may_move=False)
+    places = [int(np.flatnonzero((polygon == row).all(axis=1))[0]) for row in rows]
+    assert places == sorted(places)
+    for simplified in (rows, *simplify_polygons([polygon])):
+        assert 6 <= len(simplified) <= 12  # no trefoil has fewer than six edges (Randell, 1994)
+        assert jones_polynomial(closed_braid([simplified])) == jones_polynomial(torus_link(2, 3))
     assert [len(ring) for ring in simplify_polygons([SQUARE, shifted(SQUARE, 0, 0, 9)])] == [3, 3]
 
 
-@pytest.mark.parametrize("seed", range(3))
+def length(polygon):
+    return float(np.linalg.norm(polygon - np.roll(polygon, 1, axis=0), axis=1).sum())
+
+
+@pytest.mark.parametrize("seed", range(4))
 def test_simplification_keeps_the_determinant(seed):
-    """Long walks: with triangle moves and without, in different projections."""
+    """Long walks: simplified by removing, by moving too, and not at all."""
     walk = random_walk(seed, 250)
-    simplified = simplify_polygons([walk])
-    assert len(simplified[0]) < 100
-    assert determinant([walk], seed=1) == determinant(simplified, seed=2, is_simplified=False)
+    removed = simplify_polygons([walk], may_move=False)
+    moved = simplify_polygons([walk], seed)
+    assert len(moved[0]) <= len(removed[0]) < 100
+    assert length(moved[0]) <= length(removed[0]) < length(walk)
+    expected = determinant([walk], seed=1, is_simplified=False)
+    assert determinant(removed, seed=2, is_simplified=False) == expected
+    assert determinant(moved, seed=3, is_simplified=False) == expected
+
+
+@settings(max_examples=40)
+@given(
+    seeds=st.lists(st.integers(0, 10**6), min_size=2, max_size=2, unique=True),
+    scale=st.sampled_from([1, 1000]),
+)
+def test_simplification_keeps_links(seeds, scale):
+    """Two entangled rings: linking number and Alexander polynomial do not notice the moves."""
+    rings = [scale * random_polygon(seed, 9) for seed in seeds]  # many come apart
+    given_diagram = polygon_diagram(rings, is_simplified=False)
+    simplified = polygon_diagram(simplify_polygons(rings, seeds[0]), is_simplified=False)
+    assert linking_numbers(simplified) == linking_numbers(given_diagram)
+    expected = alexander_polynomial(braid_from_diagram(given_diagram))
+    assert alexander_polynomial(braid_from_diagram(simplified)) == expected
 
 
 def test_the_same_seed_gives_the_same_diagram():
