@@ -12,6 +12,7 @@ from braidsearch.words.braid import Braid
 LARGEST_ORDER = 60
 _LARGEST_COST = 3e3
 _FIRST_BITS = 64
+_MOST_GROWTH = 500
 
 
 def levine_tristram_signature(braid: Braid, order: int, power: int) -> list[int]:
@@ -149,11 +150,16 @@ def _signature_of_factor(braid: Braid, order: int, power: int, nullity: int) -> 
     """
     rank = len(braid) - 2 * nullity
     precision = _FIRST_BITS * (1 + len(braid) // 14)  # errors grow by some 4 bits a letter
-    while True:
+    most = _MOST_GROWTH * precision
+    while precision <= most:
         front = _kashaev_front(braid, (order, power), precision, nullity)
         if front.positive + front.negative == rank:
             return (front.positive - front.negative - braid.exponent_sum) // 2
         precision += (precision + 1) // 2
+    raise CapacityError(
+        f"the signs of pivots for {len(braid)} letters on {braid.strands} strands: "
+        f"expected to be certain with {most} bits"
+    )
 
 
 def _kashaev_front(
