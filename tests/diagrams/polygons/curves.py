@@ -85,11 +85,13 @@ def exact_crossings(polygon, direction):
             continue
         u, w = (b[0] - a[0], b[1] - a[1]), (d[0] - c[0], d[1] - c[1])
         lower = u[0] * w[1] - u[1] * w[0]
-        assert lower != 0, "parallel images: another direction is wanted"
+        if lower == 0:
+            assert u[0] * (c[1] - a[1]) != u[1] * (c[0] - a[0]), "edges in one line"
+            continue
         s = ((c[0] - a[0]) * w[1] - (c[1] - a[1]) * w[0]) / lower
         t = ((c[0] - a[0]) * u[1] - (c[1] - a[1]) * u[0]) / lower
-        assert not {s, t} & {0, 1}, "a vertex on an edge: another direction is wanted"
-        if 0 < s < 1 and 0 < t < 1:
+        if 0 <= s <= 1 and 0 <= t <= 1:
+            assert not {s, t} & {0, 1}, "a vertex on an edge: another direction is wanted"
             above = a[2] + s * (b[2] - a[2]) > c[2] + t * (d[2] - c[2])
             found.append((i, s, j, t) if above else (j, t, i, s))
     return found

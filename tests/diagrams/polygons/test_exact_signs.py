@@ -9,6 +9,7 @@ from hypothesis import strategies as st
 
 from braidsearch.diagrams.polygons.exact_signs import determinant_sign, exact_sign
 from braidsearch.diagrams.polygons.meetings import segment_meets_triangle, segments_meet
+from tests.diagrams.polygons.meeting_oracle import is_meeting_by_fractions
 
 EXTRA = [0.0, 0.0, 0.0, 1.0, 0.0, 0.0, 0.0, 1.0, 0.0, 0.0, 0.0, 1.0, 0.0, 0.0, 0.0]
 
@@ -152,37 +153,7 @@ def test_segments_meet(points):
     if ends[0] == ends[1] or ends[2] == ends[3]:
         return
     array = np.array(points + EXTRA)
-    assert segments_meet(array, 4, 0, 1, 2, 3) == _meeting_by_fractions(*ends)
-
-
-def _meeting_by_fractions(a, b, c, d):
-    """Minimise |a + s (b - a) - c - t (d - c)|^2 over the square: is the least value 0?"""
-    u, w, g = (_minus(b, a), _minus(d, c), _minus(a, c))
-    candidates = [(s, _clamped(_dot(_plus(g, u, s), w), _dot(w, w))) for s in (0, 1)]
-    candidates += [(_clamped(-_dot(_plus(g, w, -t), u), _dot(u, u)), t) for t in (0, 1)]
-    lower = _dot(u, u) * _dot(w, w) - _dot(u, w) ** 2
-    if lower:
-        s = (_dot(u, w) * _dot(g, w) - _dot(w, w) * _dot(g, u)) / lower
-        if 0 <= s <= 1:
-            candidates.append((s, _clamped(_dot(_plus(g, u, s), w), _dot(w, w))))
-    gaps = [_plus(_plus(g, u, s), w, -t) for s, t in candidates]
-    return any(_dot(gap, gap) == 0 for gap in gaps)
-
-
-def _clamped(upper, lower):
-    return min(max(upper / lower, Fraction(0)), Fraction(1)) if lower else Fraction(0)
-
-
-def _minus(u, v):
-    return tuple(x - y for x, y in zip(u, v, strict=True))
-
-
-def _plus(u, v, factor):
-    return tuple(x + factor * y for x, y in zip(u, v, strict=True))
-
-
-def _dot(u, v):
-    return sum(x * y for x, y in zip(u, v, strict=True))
+    assert segments_meet(array, 4, 0, 1, 2, 3) == is_meeting_by_fractions(*ends)
 
 
 @pytest.mark.parametrize("scale", [1.0, 2.0**-300])

@@ -26,6 +26,7 @@ from tests.diagrams.polygons.curves import (
     random_walk,
     torus_polygon,
 )
+from tests.diagrams.polygons.meeting_oracle import is_polygon_meeting_itself
 
 TORUS_KNOTS = [(p, q) for p in range(2, 8) for q in range(2, 8) if gcd(p, q) == 1]
 
@@ -212,6 +213,22 @@ def test_polygons_that_meet_are_refused(polygons, is_simplified):
     """Whatever meets is named by rows, in one line."""
     with pytest.raises(InputError, match=r"^the edge from row \d+ of component \d+ meets the one"):
         polygon_diagram(polygons, is_simplified=is_simplified)
+
+
+corners = st.lists(st.tuples(*[st.integers(0, 4)] * 3), min_size=4, max_size=9, unique=True)
+
+
+@settings(max_examples=150)
+@given(rows=corners)
+def test_polygons_with_small_integers(rows):
+    """Refused exactly when two edges meet; else the determinant is that of another projection."""
+    if is_polygon_meeting_itself(rows):
+        with pytest.raises(InputError, match="meets the one"):
+            polygon_diagram([rows])
+        return
+    expected = exact_determinant(np.array(rows, dtype=float), (0.1234, -0.2345))
+    assert determinant([rows]) == expected
+    assert determinant([rows], is_simplified=False) == expected
 
 
 def test_nearly_meeting_is_not_meeting():
