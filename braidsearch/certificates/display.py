@@ -44,11 +44,20 @@ def _show_whole(invariant: str, value: Any, parameters: Mapping[str, Any]) -> st
     if invariant == "alexander-module":
         factors = [[[power, c] for power, c in enumerate(item) if c] for item in value]
         return "; ".join(_show_polynomial(terms, (("t", 1),)) for terms in factors) or "trivial"
+    if invariant == "three-braid":
+        return "; ".join(_show_class(*entry) for entry in value if entry) or "none"
     if invariant in VARIABLES:
         return _show_polynomial(value, VARIABLES[invariant])
     if isinstance(value, (list, tuple)):
         return ", ".join(_show_entry(entry) for entry in value) or "none"
     return str(value)
+
+
+def _show_class(exponent_sum: int, *letters: int) -> str:
+    """A conjugacy class of 3-braids: exponent sum, and cyclic word in PSL(2, Z) = <a, b>."""
+    names = {0: "a", 1: "b", -1: "b^-1"}
+    word = " ".join(names.get(letter, str(letter)) for letter in letters) or "1"
+    return f"exponent sum {exponent_sum}, cyclic word {word}"
 
 
 def _degree(parameters: Mapping[str, Any]) -> int:

@@ -18,14 +18,17 @@ _LONGEST_HANDLES = 1_500  # letters up to which handles are worth reducing
 _LARGEST_SPELLING = 5_000  # letters times strands up to which a normal form is worth its time
 
 
-def checked_chain(start: Braid, moves: Iterable[Move], end: Braid) -> MoveChain:
+def checked_chain(
+    start: Braid, moves: Iterable[Move], end: Braid, is_short: bool = False
+) -> MoveChain:
     """The moves replayed with every step checked, shortened; the chain ends literally at ``end``.
 
-    Raises InputError for a false step: a mistake of the search, never of the user.
+    ``is_short`` says that no detour need be looked for. Raises InputError for a false step: a
+    mistake of the search, never of the user.
     """
     chain = MoveChain(start)
     chain.extend(merged_moves(start, [*moves, Rewrite(end.word)]))
-    if len(chain) <= _LONGEST_SHORTENED:
+    if not is_short and len(chain) <= _LONGEST_SHORTENED:
         chain = without_detours(chain)
     return chain
 

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from typing import TYPE_CHECKING, Any
 
 from braidsearch.certificates import Certificate, Distinction
@@ -91,11 +91,14 @@ class Query:
         rotated = self._compare_rotations()
         if rotated is not None:
             return rotated
+        classified = self._classify(self._greedy)
+        if classified is not None:
+            return classified
         handy = self._route(None), self._route("identity")
         if self._distinguish(*handy, FAIR_SECONDS):
             return self._different()
         return (
-            self._classify()
+            self._classify(self._route)
             or self._search_directly()
             or self._alternate()
             or self.undecided(self.ending, self._search_image())
@@ -130,17 +133,21 @@ class Query:
                 self.distinctions[symmetry] = found
         return not self.open_symmetries()
 
-    def _classify(self) -> Verdict | None:
-        """The answer by the classification of closed 3-braids, where both are such."""
-        left = self._route(None)
-        if not is_classified(left.current):
+    def _classify(self, route: Callable[[str | None], Route]) -> Verdict | None:
+        """The answer by the classification of closed 3-braids, where both are such.
+
+        ``route`` gives the way to the left braid (None) and to an image of the right one.
+        """
+        handy = route(None), route("identity")
+        if not all(is_classified(one.current) for one in handy):
             return None
+        if self._distinguish(*handy, FAIR_SECONDS):
+            return self._different()
         for symmetry in self.open_symmetries():
-            moves = classified_moves(left, self._route(symmetry))
+            moves = classified_moves(route(None), route(symmetry))
             if moves is not None:
-                return self._same(moves, symmetry)
-        right = self._route("identity")
-        if self._distinguish(left, right, DEAR_SECONDS, three_braid_ladder):
+                return self._same(moves, symmetry, is_short=True)
+        if self._distinguish(*handy, DEAR_SECONDS, three_braid_ladder):
             return self._different()
         return None
 
@@ -236,7 +243,9 @@ class Query:
         if letters > _LONGEST_GLANCE or max(strands, self.right.strands) > _MOST_GLANCED:
             return None
         for symmetry in self.others:
-            moves = self._direct_moves(symmetry)
+            moves = classified_moves(self._greedy(None), self._greedy(symmetry))
+            if moves is None and not is_classified(self._greedy(None).current):
+                moves = self._direct_moves(symmetry)
             if moves is not None:
                 return self._image_certificate(moves, symmetry)
         return None
@@ -253,13 +262,13 @@ class Query:
         certificate = self._certificate(moves, symmetry)
         return certificate if judge(certificate).valid else None
 
-    def _certificate(self, moves: list[Move], symmetry: str) -> Certificate:
+    def _certificate(self, moves: list[Move], symmetry: str, is_short: bool = False) -> Certificate:
         image = apply_symmetry(self.right, symmetry)
-        chain = checked_chain(self.left, moves, image)
+        chain = checked_chain(self.left, moves, image, is_short)
         return Certificate.same(self.left, self.right, symmetry, chain.moves)
 
-    def _same(self, moves: list[Move], symmetry: str) -> Verdict:
-        certificate = self._certificate(moves, symmetry)
+    def _same(self, moves: list[Move], symmetry: str, is_short: bool = False) -> Verdict:
+        certificate = self._certificate(moves, symmetry, is_short)
         count = len(certificate.moves)
         target = "RIGHT" if symmetry == "identity" else f"the {symmetry} of RIGHT"
         reason = {

@@ -114,7 +114,12 @@ def test_homfly_display_is_the_polynomial(terms: dict[tuple[int, int], int]) -> 
         ("components", 2, "2"),
         ("linking-numbers", (), "none"),
         ("linking-numbers", (-1, 0, 2), "-1, 0, 2"),
-        ("three-braid", [[2, -1, 0]], "(2, -1, 0)"),
+        ("three-braid", [[2, -1, 0]], "exponent sum 2, cyclic word b^-1 a"),
+        (
+            "three-braid",
+            [[0], [1, 0]],
+            "exponent sum 0, cyclic word 1; exponent sum 1, cyclic word a",
+        ),
         ("alexander-module", [[1, 0, 1], []], "1 + t^2; 0"),
         ("alexander-module", [], "trivial"),
         ("levine-tristram", [-2, 0], "-2, 0"),
