@@ -20,11 +20,16 @@ _EXPECTED = "expected three finite numbers x y z"
 def check_polygons(polygons: Iterable[Any]) -> list[Polygon]:
     """The polygons as arrays of n x 3 doubles, a last row that repeats the first left out.
 
-    Whatever numpy makes an array of is taken, integers as long as doubles hold them exactly.
+    Whatever numpy makes an array of is taken, integers as long as doubles hold them exactly; one
+    array of n x 3 alone is one polygon.
     Raises InputError, in one line that names component and row (from 1), for what is not rows of
     three finite numbers, for fewer than three vertices, for a row twice in succession, and for no
     polygon at all.
     """
+    if isinstance(polygons, np.ndarray) and polygons.ndim == 2:
+        polygons = [polygons]
+    if not isinstance(polygons, Iterable):
+        raise InputError(f"{type(polygons).__name__}: expected a list of arrays of n rows x y z")
     checked = [_check_polygon(polygon, k) for k, polygon in enumerate(polygons, start=1)]
     if not checked:
         raise InputError("no polygon: expected rows x y z, a blank line between polygons")

@@ -124,6 +124,8 @@ def test_files_that_cannot_be_read(tmp_path):
         ([np.array([[2**60 + 1, 0, 0], [1, 0, 0], [0, 1, 0]])], "component 1, row 1: .* exactly"),
         ([np.eye(3, dtype=complex)], "component 1: expected an array of n rows x y z"),
         ([5], "component 1"),
+        (5, "int: expected a list of arrays"),
+        (np.zeros(3), "component 1, an array of shape"),
         ([np.zeros((0, 3))], "component 1: 0 points"),
         ([np.random.default_rng(1).normal(size=(MAX_VERTICES + 1, 3))], "at most 100000"),
     ],
@@ -133,6 +135,12 @@ def test_what_is_refused_as_arrays(polygons, message):
     with pytest.raises(InputError, match=message) as caught:
         polygon_diagram(polygons)
     assert "\n" not in str(caught.value)
+
+
+def test_one_array_is_one_polygon():
+    """An array of n x 3 needs no list around it."""
+    assert [polygon.tolist() for polygon in check_polygons(np.eye(3))] == [np.eye(3).tolist()]
+    assert polygon_diagram(np.eye(3)).circles == 1
 
 
 def test_sizes_too_far_apart():
