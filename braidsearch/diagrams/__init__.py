@@ -21,7 +21,7 @@ from braidsearch.diagrams.codes import (
     planar_diagram_code,
 )
 from braidsearch.diagrams.link_diagram import Crossing, LinkDiagram
-from braidsearch.diagrams.reidemeister import simplify_diagram
+from braidsearch.diagrams.simplification import simplify_diagram
 from braidsearch.diagrams.vogel import braid_from_diagram
 
 __all__ = [

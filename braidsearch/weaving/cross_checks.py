@@ -7,7 +7,7 @@ from collections.abc import Iterator
 
 from braidsearch.diagrams.closed_braid_diagram import closed_braid_diagram
 from braidsearch.diagrams.link_diagram import LinkDiagram
-from braidsearch.diagrams.reidemeister import simplify_diagram
+from braidsearch.diagrams.simplification import simplify_diagram
 from braidsearch.errors import BraidsearchError
 from braidsearch.invariants import jones
 from braidsearch.invariants.diagram_alexander import (

@@ -1,4 +1,6 @@
-"""Reidemeister moves that lower the number of crossings, and nugatory crossings."""
+"""Simplification: loops, clasps, nugatory crossings, and strands laid along shorter ways."""
+
+import random
 
 import pytest
 from hypothesis import given, settings
@@ -59,6 +61,40 @@ def test_a_nugatory_crossing_between_two_knots() -> None:
     square = [[4, 1], [8, 2], [10, -2], [12, 1], [14, -2], [16, 1]]
     assert diagram_jones_polynomial(closed_braid_diagram(Braid([1, 1, 1]))) == trefoil
     assert diagram_jones_polynomial(simple) == square
+
+
+@settings(max_examples=40)
+@given(link_diagrams(max_strands=6, max_letters=50))
+def test_the_link_stays_where_long_strands_are_laid_anew(diagram: LinkDiagram) -> None:
+    """On diagrams too large for brute force: the state sum over a sweep, and linking numbers."""
+    simple = simplify_diagram(diagram)
+    assert diagram_jones_polynomial(simple) == diagram_jones_polynomial(diagram)
+    assert diagram_linking_numbers(simple) == diagram_linking_numbers(diagram)
+
+
+def test_a_component_above_all_others_comes_off() -> None:
+    """A ring laid over a trefoil, four crossings more, ends as a circle beside the trefoil.
+
+    The first strand runs over the two others to the right and, behind two crossings, back.
+    """
+    simple = simplify_diagram(closed_braid_diagram(Braid([-1, -2, 1, 1, 2, 1, 2])))
+    assert (len(simple.crossings), simple.circles) == (3, 1)
+    assert simple.writhe == 3
+
+
+@pytest.mark.parametrize("seed", range(20))
+def test_descending_diagrams_come_apart(seed: int) -> None:
+    """Where a knot passes every crossing over first it is the unknot, whatever its shadow."""
+    generator = random.Random(seed)
+    shadow = closed_braid_diagram(Braid([generator.randint(1, 5) for _ in range(61)], 6))
+    while len(shadow.components) > 1:
+        shadow = closed_braid_diagram(Braid([generator.randint(1, 5) for _ in range(61)], 6))
+    place = {arc: number for number, arc in enumerate(shadow.components[0])}
+    descending = []
+    for crossing in shadow.crossings:
+        (under, _), (over, _) = crossing.passages
+        descending.append(crossing if place[over] < place[under] else crossing.mirrored())
+    assert simplify_diagram(LinkDiagram(tuple(descending))) == LinkDiagram((), 1)
 
 
 @pytest.mark.parametrize("row", list(iter_knots(8)), ids=lambda row: row.name)

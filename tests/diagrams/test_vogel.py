@@ -139,9 +139,9 @@ def test_thousands_of_crossings() -> None:
 
 def test_more_strands_or_letters_than_a_braid_may_have() -> None:
     """Both ends are told apart, in one line."""
-    many_letters = random_turned_diagram(seed=8, strands=100, letters=5000)
+    many_letters = random_turned_diagram(seed=8, strands=100, letters=5600)
     with pytest.raises(CapacityError, match=r"\d+ strands has more than 100000 letters: expected"):
         braid_from_diagram(many_letters)
-    wide = random_turned_diagram(seed=9, strands=300, letters=12000)
+    wide = random_turned_diagram(seed=9, strands=300, letters=14000)
     with pytest.raises(CapacityError, match="Seifert circles: expected at most 1000"):
         braid_from_diagram(wide)
