@@ -13,8 +13,9 @@ from braidsearch.certificates import (
     write_certificate,
 )
 from braidsearch.command_line.answer import Answer, json_answer
-from braidsearch.command_line.arguments import CommandParser, read_word_argument
+from braidsearch.command_line.arguments import CommandParser
 from braidsearch.command_line.compare_report import report_verdict
+from braidsearch.command_line.link_input import read_link_argument
 from braidsearch.command_line.progress import progress_line
 from braidsearch.command_line.search_limits import add_limits, read_limits
 from braidsearch.errors import BraidsearchError, InputError
@@ -56,8 +57,8 @@ def answer(arguments: Sequence[str]) -> Answer:
 
 def _parser() -> CommandParser:
     parser = CommandParser("compare", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("left", "a braid word")
-    parser.add_word("right", "a braid word")
+    parser.add_word("left", "a braid word or a drawing")
+    parser.add_word("right", "a braid word or a drawing")
     parser.add_argument(
         "--up-to",
         action="append",
@@ -73,7 +74,7 @@ def _parser() -> CommandParser:
 def _read_braids(given: Namespace) -> tuple[Braid, Braid]:
     if given.left == given.right == "-":
         raise InputError("RIGHT: -: expected a word, since LEFT reads standard input already")
-    return read_word_argument("LEFT", given.left), read_word_argument("RIGHT", given.right)
+    return read_link_argument("LEFT", given.left), read_link_argument("RIGHT", given.right)
 
 
 def _read_symmetries(values: Sequence[str]) -> tuple[str, ...]:

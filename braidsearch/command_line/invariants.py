@@ -8,7 +8,8 @@ from typing import Any
 
 from braidsearch.certificates.display import show_value
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
-from braidsearch.command_line.arguments import CommandParser, read_seconds, read_word_argument
+from braidsearch.command_line.arguments import CommandParser, read_seconds
+from braidsearch.command_line.link_input import read_link_argument
 from braidsearch.words import Braid
 
 _SECONDS = 60.0
@@ -26,13 +27,13 @@ _EXAMPLES = """  braidsearch invariants "1 1 1"
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for a word that cannot be read."""
     parser = CommandParser("invariants", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("word", "a braid word")
+    parser.add_word("word", "a braid word or a drawing")
     parser.add_json()
     parser.add_number(
         "--seconds", read_seconds, "seconds or none", "leave out what would take longer each (60)"
     )
     given = parser.read(arguments)
-    braid = read_word_argument("WORD", given.word)
+    braid = read_link_argument("WORD", given.word)
     seconds = getattr(given, "seconds", _SECONDS)
     values, left_out = _compute(braid, math.inf if seconds is None else seconds)
     hint = f"braidsearch invariants: left out: {', '.join(left_out)}" if left_out else ""

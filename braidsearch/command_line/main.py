@@ -22,6 +22,7 @@ from braidsearch.errors import BraidsearchError, InputError
 COMMANDS: dict[str, str] = {
     "compare": "say whether two closed braids are the same link, with a certificate",
     "verify": "replay a certificate",
+    "weave": "a closed braid for a drawing or a curve in space",
     "tighten": "fewest strands, then fewest letters, for the same link",
     "symmetry": "which mirror images and reverses of a link are the same link again",
     "normalise": "reduced word, left normal form and conjugacy summit of a braid",
@@ -38,7 +39,8 @@ commands:
 
 A braid is a word of signed integers in quotes, +i for sigma_i (a positive crossing) and -i for
 its inverse, with the strand count in front where it is more than the word needs:
-"1 -2 1 -2", "4: 1 -2 1 -2", "s1 s2^-1". A lone - reads the word from standard input.
+"1 -2 1 -2", "4: 1 -2 1 -2", "s1 s2^-1". A lone - reads the word from standard input. Drawings are
+read wherever a braid is: "pd: [[1,5,2,4],...]", "gauss: ...", "dt: 4 6 2", "polygon: FILE".
 
 examples:
   braidsearch compare "1 1 1" "1 2 1 2" -o proof.json

@@ -7,7 +7,8 @@ from typing import TYPE_CHECKING, Any
 
 from braidsearch.certificates.explanation import count_of, shown_word
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
-from braidsearch.command_line.arguments import CommandParser, read_word_argument
+from braidsearch.command_line.arguments import CommandParser
+from braidsearch.command_line.link_input import read_link_argument
 from braidsearch.words import Braid, cyclic_reduce, format_word, free_reduce
 
 if TYPE_CHECKING:
@@ -31,10 +32,10 @@ def answer(arguments: Sequence[str]) -> Answer:
     from braidsearch.normal_form.conjugacy import conjugacy_class  # noqa: PLC0415 - the same
 
     parser = CommandParser("normalise", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("word", "a braid word")
+    parser.add_word("word", "a braid word or a drawing")
     parser.add_json()
     given = parser.read(arguments)
-    braid = read_word_argument("WORD", given.word)
+    braid = read_link_argument("WORD", given.word)
     form, summit = left_normal_form(braid), conjugacy_class(braid)
     if given.json:
         return json_answer(SUCCESS, _to_json(braid, form, summit))

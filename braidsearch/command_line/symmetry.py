@@ -9,8 +9,9 @@ from typing import TYPE_CHECKING
 
 from braidsearch.certificates import check_destination, explain_certificate, write_certificate
 from braidsearch.command_line.answer import Answer, json_answer
-from braidsearch.command_line.arguments import CommandParser, read_word_argument
+from braidsearch.command_line.arguments import CommandParser
 from braidsearch.command_line.compare import UNDECIDED, verdict_to_json
+from braidsearch.command_line.link_input import read_link_argument
 from braidsearch.command_line.progress import progress_line
 from braidsearch.command_line.search_limits import add_limits, read_limits
 from braidsearch.words import SYMMETRIES
@@ -44,7 +45,7 @@ _ANSWERS = {
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read or written."""
     given = _parser().read(arguments)
-    braid, limits = read_word_argument("WORD", given.word), read_limits(given)
+    braid, limits = read_link_argument("WORD", given.word), read_limits(given)
     paths = {} if given.output is None else _paths(given.output)
     for path in paths.values():
         check_destination(path)
@@ -70,7 +71,7 @@ def answer(arguments: Sequence[str]) -> Answer:
 
 def _parser() -> CommandParser:
     parser = CommandParser("symmetry", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("word", "a braid word")
+    parser.add_word("word", "a braid word or a drawing")
     parser.add_text(
         "-o", "--output", metavar="FILE", explanation="certificate files, named after it"
     )

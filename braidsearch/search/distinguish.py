@@ -72,6 +72,7 @@ class Distinguisher:
         for cost, invariant in _with_verification(invariants(left, image), left, image):
             if invariant.key in self.agreed or cost > min(dearest, budget.seconds_left):
                 continue
+            budget.tell(left.strands, "computing invariants")
             found = self._compare(invariant, left_route, right_route, image)
             if found is not None:
                 return found

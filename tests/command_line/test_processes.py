@@ -12,10 +12,24 @@ import pytest
 
 from tests.command_line.running import Outcome, command, environment, run_process
 
-MUTANTS = ("-1 -1 2 -1 2 -1 3 -2 -2 3 3", "-1 -1 -1 -1 2 2 1 -3 2 2 -3 2 -3")
-"""Equal in every polynomial and not the same: a search between them runs until it is stopped."""
+MUTANTS = ((-1, -1, 2, -1, 2, -1, 3, -2, -2, 3, 3), (-1, -1, -1, -1, 2, 2, 1, -3, 2, 2, -3, 2, -3))
 
-ENDLESS = ("compare", *MUTANTS, "--seconds", "30", "--nodes", "none")
+
+def connected_sum(*words: tuple[int, ...]) -> str:
+    """The word of the connected sum of closed 4-braids, each on the last strand of the one before."""
+    letters = [
+        letter + 3 * place if letter > 0 else letter - 3 * place
+        for place, word in enumerate(words)
+        for letter in word
+    ]
+    return " ".join(map(str, letters))
+
+
+SUMS = (connected_sum(*MUTANTS[:1] * 3), connected_sum(*MUTANTS[:1] * 2, MUTANTS[1]))
+"""Sums of mutants on ten strands: different, equal in every polynomial, and too large for groups
+in which they differ, so that a search between them runs until it is stopped."""
+
+ENDLESS = ("compare", *SUMS, "--seconds", "30", "--nodes", "none")
 DECIDED = ("compare", "1 1 1", "-1 -1 -1")
 
 WITHIN_SECONDS = 0.3
@@ -64,7 +78,7 @@ def test_interrupt_is_undecided_with_what_was_tried() -> None:
 
 def test_progress_is_shown_on_a_terminal_and_erased() -> None:
     """After a second a line is written over itself; at the end only blanks are left of it."""
-    status, output, shown = run_on_terminal("compare", *MUTANTS, "--seconds", "2", "--json")
+    status, output, shown = run_on_terminal("compare", *SUMS, "--seconds", "2", "--json")
     lines = shown.split("\r")
     assert status == 3
     assert output.startswith("{")
@@ -77,7 +91,7 @@ def test_progress_is_shown_on_a_terminal_and_erased() -> None:
 def test_short_searches_and_files_see_no_progress() -> None:
     """Nothing is written within the first second, nor ever where standard error is no terminal."""
     assert run_on_terminal(*DECIDED)[2] == ""
-    assert run_process("compare", *MUTANTS, "--seconds", "2").errors == ""
+    assert run_process("compare", *SUMS, "--seconds", "2").errors == ""
 
 
 @pytest.mark.parametrize("options", [(), ("--json",)])

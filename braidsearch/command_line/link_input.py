@@ -1,0 +1,126 @@
+"""Reading a link from an argument: a braid word, the code of a diagram, or polygons in space."""
+
+from __future__ import annotations
+
+import re
+from dataclasses import dataclass
+from pathlib import Path
+from typing import TYPE_CHECKING
+
+from braidsearch.certificates.explanation import count_of
+from braidsearch.command_line.answer import print_error
+from braidsearch.command_line.arguments import read_standard_input, read_word_argument
+from braidsearch.errors import InputError
+from braidsearch.words import Braid, format_word
+
+if TYPE_CHECKING:
+    from braidsearch.diagrams import LinkDiagram
+    from braidsearch.weaving import Woven
+
+PREFIXES: dict[str, str] = {
+    "pd": "planar-diagram",
+    "gauss": "gauss",
+    "dt": "dowker-thistlethwaite",
+    "polygon": "polygon",
+}
+"""What stands in front of a drawing, and the notation that follows it."""
+
+TITLES: dict[str, str] = {
+    "planar-diagram": "planar diagram code",
+    "gauss": "Gauss code",
+    "dowker-thistlethwaite": "Dowker-Thistlethwaite code",
+    "polygon": "polygons in space",
+    "braid": "closed braid",
+}
+
+INPUTS = """A link is a braid word, or a drawing with its notation in front:
+"pd: [[1,5,2,4],...]" (planar diagram code), "gauss: O1+ U2+ ...", "dt: 4 6 2", "polygon: FILE"
+(rows x y z, a blank line between components). A code may stand in a file, "pd: @FILE"; a lone -
+reads standard input, as in "pd: -"."""
+
+_PREFIX = re.compile(rf"\s*({'|'.join(PREFIXES)})\s*:(.*)", re.DOTALL | re.IGNORECASE)
+_LONGEST_INPUT = 100_000_000
+
+
+@dataclass(frozen=True)
+class Drawing:
+    """A link as it was drawn: its notation, its diagram, and what the notation leaves open."""
+
+    notation: str
+    diagram: LinkDiagram
+    notes: tuple[str, ...]
+
+    @property
+    def title(self) -> str:
+        """The notation in words, with the size of the diagram."""
+        return f"{TITLES[self.notation]}, {count_of(len(self.diagram.crossings), 'crossing')}"
+
+
+def read_link_argument(name: str, text: str) -> Braid:
+    """The braid that an argument holds; a drawing is woven first, which standard error says.
+
+    Raises InputError, which names the argument, the offending text and what was expected.
+    """
+    drawing = read_drawing(name, text)
+    if drawing is None:
+        return read_word_argument(name, text)
+    woven = weave_drawing(drawing)
+    print_error(f"{name}: woven from {drawing.title}: {format_word(woven.braid)}")
+    for note in woven.notes:
+        print_error(f"{name}: note: {note}")
+    return woven.braid
+
+
+def read_drawing(name: str, text: str, seed: int = 0) -> Drawing | None:
+    """The drawing that an argument holds, None where no notation of one stands in front.
+
+    Raises InputError as ``read_link_argument`` does.
+    """
+    match = _PREFIX.match(text)
+    if match is None:
+        return None
+    notation = PREFIXES[match[1].lower()]
+    try:
+        if notation == "polygon":
+            return Drawing(notation, _read_polygons(match[2].strip(), seed), ())
+        from braidsearch.diagrams.codes import parse_code  # noqa: PLC0415 - words come faster
+
+        return Drawing(notation, *parse_code(notation, _text_of(match[2].strip())))
+    except InputError as error:
+        raise InputError(f"{name}: {error}") from None
+
+
+def weave_drawing(drawing: Drawing) -> Woven:
+    """The closed braid of a drawing, with what was checked."""
+    from braidsearch.weaving import weave  # noqa: PLC0415 - words come faster
+
+    return weave(drawing.diagram, drawing.notes)
+
+
+def _read_polygons(source: str, seed: int) -> LinkDiagram:
+    from braidsearch.diagrams.polygons import (  # noqa: PLC0415 - words come faster
+        parse_polygons,
+        polygon_diagram,
+        read_polygons,
+    )
+
+    if not source:
+        raise InputError("polygon: expected the name of a file with rows x y z, or -")
+    if source == "-":
+        return polygon_diagram(parse_polygons(read_standard_input(_LONGEST_INPUT)), seed)
+    return polygon_diagram(read_polygons(Path(source)), seed)
+
+
+def _text_of(source: str) -> str:
+    """The text itself, that of the file named behind @, or standard input for a lone -."""
+    if source == "-":
+        return read_standard_input(_LONGEST_INPUT)
+    if not source.startswith("@"):
+        return source
+    path = source[1:].strip()
+    try:
+        return Path(path).read_text(encoding="utf-8-sig")
+    except OSError as error:
+        raise InputError(f"{path!r}: {error.strerror}: expected a file") from None
+    except (UnicodeDecodeError, ValueError):
+        raise InputError(f"{path!r}: expected a file of text in UTF-8") from None

@@ -1,0 +1,125 @@
+"""braidsearch weave LINK: a closed braid for a drawing or a curve in space."""
+
+from __future__ import annotations
+
+from argparse import Namespace
+from collections.abc import Sequence
+from dataclasses import replace
+from typing import TYPE_CHECKING
+
+from braidsearch.certificates.explanation import count_of
+from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
+from braidsearch.command_line.arguments import CommandParser, read_word_argument
+from braidsearch.command_line.link_input import (
+    INPUTS,
+    PREFIXES,
+    Drawing,
+    read_drawing,
+    weave_drawing,
+)
+from braidsearch.errors import InputError
+from braidsearch.words import format_word
+
+if TYPE_CHECKING:
+    from braidsearch.diagrams import LinkDiagram
+    from braidsearch.weaving import Woven
+
+_DESCRIPTION = f"""Print a closed braid for a link that is given as a drawing or as a curve in
+space, by Vogel's moves on the diagram, with what was checked: invariants computed on the drawing
+itself against those of the braid.
+
+{INPUTS}
+
+The components are numbered in the order of the input; --reverse turns some of them around, which no
+braid word can say. --code writes the diagram of the closed braid in another notation."""
+
+_EXAMPLES = """  braidsearch weave "pd: [[1,5,2,4],[3,1,4,6],[5,3,6,2]]"
+  braidsearch weave "gauss: O1+ U2+ O3+ U1+ O2+ U3+" --code dt
+  braidsearch weave "polygon: ring.xyz" --json
+  braidsearch weave "1 1" --reverse 2"""
+
+_CODES = tuple(prefix for prefix in PREFIXES if prefix != "polygon")
+
+
+def answer(arguments: Sequence[str]) -> Answer:
+    """Carry out the command. Raises InputError for what is no drawing of a link."""
+    given = _parser().read(arguments)
+    if given.code is not None and given.code not in _CODES:
+        raise InputError(f"--code: {given.code!r}: expected one of {', '.join(_CODES)}")
+    drawing = _reversed(_read(given.link, getattr(given, "seed", 0)), given.reverse or [])
+    woven = weave_drawing(drawing)
+    code = None if given.code is None else _written(woven, given.code)
+    if given.json:
+        return json_answer(SUCCESS, _to_json(woven, given.code, code))
+    return Answer(SUCCESS, _report(drawing, woven, given, code))
+
+
+def _parser() -> CommandParser:
+    parser = CommandParser("weave", _DESCRIPTION, _EXAMPLES)
+    parser.add_word("link", "a drawing, or a braid word")
+    parser.add_argument(
+        "--reverse", action="append", metavar="NUMBERS", help="components to turn around: 2 or 1,3"
+    )
+    parser.add_text("--code", metavar="NAME", explanation="write it as pd, gauss or dt too")
+    parser.add_number("--seed", int, "an integer", "for the projections of polygons that are tried")
+    parser.add_json()
+    return parser
+
+
+def _read(text: str, seed: int) -> Drawing:
+    """The drawing; a braid word is the drawing of its closure."""
+    drawing = read_drawing("LINK", text, seed)
+    if drawing is not None:
+        return drawing
+    from braidsearch.diagrams import closed_braid_diagram  # noqa: PLC0415 - help comes faster
+
+    braid = read_word_argument("LINK", text)
+    return Drawing("braid", closed_braid_diagram(braid), ())
+
+
+def _reversed(drawing: Drawing, values: Sequence[str]) -> Drawing:
+    """The drawing with the components named in the values turned around."""
+    numbers = [_read_number(part, drawing.diagram) for value in values for part in value.split(",")]
+    if not numbers:
+        return drawing
+    return replace(drawing, diagram=drawing.diagram.reversed_components(n - 1 for n in numbers))
+
+
+def _read_number(text: str, diagram: LinkDiagram) -> int:
+    count = diagram.component_count
+    if not text.strip().isdecimal() or not 1 <= int(text) <= count:
+        expected = f"the number of a component, 1 to {count}"
+        raise InputError(f"--reverse: {text.strip()!r}: expected {expected}")
+    return int(text)
+
+
+def _written(woven: Woven, prefix: str) -> str:
+    from braidsearch import diagrams  # noqa: PLC0415 - help comes faster
+
+    write = {
+        "pd": diagrams.format_planar_diagram_code,
+        "gauss": diagrams.format_gauss_code,
+        "dt": diagrams.format_dowker_thistlethwaite_code,
+    }[prefix]
+    return write(diagrams.closed_braid_diagram(woven.braid))
+
+
+def _to_json(woven: Woven, name: str | None, code: str | None) -> dict[str, object]:
+    braid = {"strands": woven.braid.strands, "word": list(woven.braid.word)}
+    found: dict[str, object] = {"braid": braid, "checks": list(woven.checks)}
+    found["notes"] = list(woven.notes)
+    return found if name is None else found | {"code": {name: code}}
+
+
+def _report(drawing: Drawing, woven: Woven, given: Namespace, code: str | None) -> str:
+    braid = woven.braid
+    lines = [
+        f"woven: {format_word(braid)}",
+        f"from: {drawing.title}",
+        f"to: {count_of(braid.strands, 'strand')}, {count_of(len(braid), 'letter')}",
+    ]
+    lines += [f"checked: {check}" for check in woven.checks]
+    lines += [f"note: {note}" for note in woven.notes]
+    if code is not None:
+        lines.append(f"{given.code}: {code}")
+    return "\n".join(lines)
