@@ -1,15 +1,18 @@
-"""The inner loop that counts colourings: backtracking along a plan of steps."""
+"""The inner loop that counts colourings: backtracking along a plan of steps.
+
+``tables`` are ClassArrays, ``plan`` PlanArrays and ``walk`` WalkArrays, named tuples of arrays.
+"""
 
 from typing import Any, NamedTuple
 
 import numpy as np
 
 from braidsearch.compiling import compiled
+from braidsearch.invariants.colourings.plans import PlanArrays
 
 Array = Any
 
-# The kinds of steps: three that take a colour from nowhere, one that finds the over arc's colours
-# from those below, three that are determined, and the end.
+# The kinds of steps, as in StepKind.
 FIRST, SECOND, ANY, CHOOSE, FORWARD, BACKWARD, CHECK, COMPLETE = range(8)
 
 # The columns of a step: its kind, the arcs over, x and y, and the last branching step before it.
@@ -19,16 +22,6 @@ KIND, OVER, BEFORE, AFTER, RETURN = range(5)
 DEPTH, BEGUN, LEAVES, NODES = range(4)
 
 LEAVES_AT_ONCE = 1 << 12
-
-
-class PlanArrays(NamedTuple):
-    """A plan for the loop: steps, and for each component its start, passages and writhe."""
-
-    steps: Array
-    starts: Array
-    passage_starts: Array
-    passages: Array
-    writhes: Array
 
 
 class WalkArrays(NamedTuple):

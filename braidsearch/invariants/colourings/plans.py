@@ -11,7 +11,11 @@ from __future__ import annotations
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass, field
 from enum import IntEnum
-from functools import lru_cache
+from functools import cached_property, lru_cache
+from typing import NamedTuple
+
+import numpy as np
+from numpy.typing import NDArray
 
 from braidsearch.invariants.colourings.arcs import ArcDiagram, Crossing, arc_diagram
 from braidsearch.words.braid import Braid
@@ -45,6 +49,21 @@ class Step:
     after: int = 0
 
 
+class PlanArrays(NamedTuple):
+    """A plan for the inner loop.
+
+    A row of ``steps`` is kind, over, before, after, and the place of the last step before it that
+    tries several colours. Each component has the arc at which it starts, its passages (over arc,
+    sign) from ``passage_starts`` on, and its writhe.
+    """
+
+    steps: NDArray[np.int64]
+    starts: NDArray[np.int64]
+    passage_starts: NDArray[np.int64]
+    passages: NDArray[np.int64]
+    writhes: NDArray[np.int64]
+
+
 @dataclass(frozen=True)
 class Plan:
     """The steps that colour all arcs of a diagram and check each crossing."""
@@ -56,6 +75,25 @@ class Plan:
     def seeds(self) -> int:
         """The number of arcs that take their colours from nowhere."""
         return sum(step.kind <= StepKind.SEED for step in self.steps)
+
+    @cached_property
+    def arrays(self) -> PlanArrays:
+        """The plan as the inner loop reads it."""
+        rows, last = [], -1
+        for place, step in enumerate(self.steps):
+            rows.append((step.kind, step.over, step.before, step.after, last))
+            if step.kind <= StepKind.CHOOSE:
+                last = place
+        components = self.diagram.components
+        lengths = [len(component.passages) for component in components]
+        passages = [passage for component in components for passage in component.passages]
+        return PlanArrays(
+            steps=np.array(rows, dtype=np.int64),
+            starts=np.array([component.start for component in components], dtype=np.int64),
+            passage_starts=np.cumsum([0, *lengths], dtype=np.int64),
+            passages=np.array(passages, dtype=np.int64).reshape(-1, 2),
+            writhes=np.array([component.writhe for component in components], dtype=np.int64),
+        )
 
     def iter_widths(self, size: int, centraliser: int, classes: int = 1) -> Iterator[float]:
         """How many partial colourings to expect at each step.
