@@ -23,6 +23,8 @@ if TYPE_CHECKING:
         read_certificate,
         write_certificate,
     )
+    from braidsearch.diagrams import LinkDiagram
+    from braidsearch.diagrams.polygons import polygon_diagram, read_polygons
     from braidsearch.errors import BraidsearchError, CapacityError, InputError
     from braidsearch.search.driver import compare
     from braidsearch.search.limits import Progress, SearchLimits
@@ -30,6 +32,7 @@ if TYPE_CHECKING:
     from braidsearch.search.tighten import Tightening, tighten
     from braidsearch.search.verdict import Verdict
     from braidsearch.verifier import Report
+    from braidsearch.weaving import Woven, weave
     from braidsearch.words import Braid, format_word, parse_word
 
 __version__ = "0.1.0"
@@ -41,11 +44,13 @@ _HOMES: dict[str, str] = {
     "Certificate": "certificates",
     "Distinction": "certificates",
     "InputError": "errors",
+    "LinkDiagram": "diagrams",
     "Progress": "search.limits",
     "Report": "verifier",
     "SearchLimits": "search.limits",
     "Tightening": "search.tighten",
     "Verdict": "search.verdict",
+    "Woven": "weaving",
     "compare": "search.driver",
     "find_symmetries": "search.symmetries",
     "explain_certificate": "certificates",
@@ -53,8 +58,11 @@ _HOMES: dict[str, str] = {
     "format_word": "words",
     "parse_certificate": "certificates",
     "parse_word": "words",
+    "polygon_diagram": "diagrams.polygons",
     "read_certificate": "certificates",
+    "read_polygons": "diagrams.polygons",
     "tighten": "search.tighten",
+    "weave": "weaving",
     "write_certificate": "certificates",
 }
 
@@ -65,11 +73,13 @@ __all__ = [
     "Certificate",
     "Distinction",
     "InputError",
+    "LinkDiagram",
     "Progress",
     "Report",
     "SearchLimits",
     "Tightening",
     "Verdict",
+    "Woven",
     "__version__",
     "compare",
     "explain_certificate",
@@ -78,9 +88,12 @@ __all__ = [
     "format_word",
     "parse_certificate",
     "parse_word",
+    "polygon_diagram",
     "read_certificate",
+    "read_polygons",
     "tighten",
     "verify",
+    "weave",
     "write_certificate",
 ]
 

@@ -9,7 +9,6 @@ from braidsearch.diagrams import (
     LinkDiagram,
     gauss_code,
     parse_code,
-    parse_planar_diagram_code,
     planar_diagram_code,
 )
 from braidsearch.errors import InputError
@@ -116,10 +115,17 @@ def test_an_unknown_notation() -> None:
         parse_code("pd", "[[1,1,2,2]]")
 
 
-def test_a_text_without_end() -> None:
-    """A million entries are turned away before anything is built from them."""
-    with pytest.raises(InputError, match="expected at most 50000 crossings"):
-        parse_planar_diagram_code("1 2 3 4\n" * 250_000)
+@pytest.mark.parametrize(
+    ("notation", "text"),
+    [
+        ("planar-diagram", "1 2 3 4\n" * 50_001),
+        ("gauss", "1 -1 " * 50_001),
+        ("dowker-thistlethwaite", "2 " * 50_001),
+    ],
+)
+def test_a_text_without_end(notation: str, text: str) -> None:
+    """Too many crossings are turned away before anything is built from them."""
+    assert message_of(notation, text).endswith("entries: expected at most 50000 crossings")
 
 
 def read_or_message(notation: str, text: str) -> LinkDiagram | str:

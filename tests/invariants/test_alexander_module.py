@@ -369,6 +369,23 @@ def test_matrices_with_given_factors(data, size, prime):
     assert invariant_factors(matrix, 0, prime) == direct_sum(diagonal, prime)
 
 
+@pytest.mark.parametrize("is_transposed", [False, True])
+@pytest.mark.parametrize("prime", [3, 5, 997])
+def test_entries_that_no_pivot_divides(prime, is_transposed):
+    """With rows (t + 1, t - 1) and (0, (t + 1) (t - 1)^2) the entries have no common divisor.
+
+    So there is one factor, the determinant, though each entry shares a factor with it.
+    """
+    plus, minus = [1, 1], [prime - 1, 1]
+    determinant = multiply_all([plus, plus, minus, minus], prime)
+    matrix = np.zeros((2, 2, 5), dtype=np.int64)
+    matrix[0, 0, :2], matrix[0, 1, :2] = plus, minus
+    matrix[1, 1, :4] = multiply_all([plus, minus, minus], prime)
+    if is_transposed:
+        matrix = matrix.transpose(1, 0, 2)
+    assert invariant_factors(matrix, 0, prime) == [determinant]
+
+
 @settings(max_examples=100)
 @given(data=st.data(), prime=st.sampled_from([2, 3, 7, 997]))
 def test_quotient_rings(data, prime):

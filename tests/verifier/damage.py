@@ -13,6 +13,7 @@ NAMES = (
     *("same", "different", "undecided", "identity", "mirror", "reverse", "mirror-reverse"),
     *("rewrite", "conjugate", "stabilize", "destabilize", "exchange", "components", "homfly"),
     *("linking-numbers", "alexander", "jones", "signature", "colouring", "three-braid", ""),
+    *("levine-tristram", "alexander-module", "sublinks"),
 )
 STRANGERS = (None, True, False, 0, 1, -1, 2, 1.0, "1", [], {}, [[]], 10**9, 10**40, "\ud800")
 WAYS = ("replace", "shift", "delete", "repeat", "exchange", "graft", "add", "name")

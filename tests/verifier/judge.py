@@ -6,6 +6,7 @@ action on the free group, and invariants are those of ``oracles``.
 
 from __future__ import annotations
 
+import json
 from functools import cache
 from typing import Any
 
@@ -17,10 +18,17 @@ SYMMETRIES = {
     "reverse": lambda word: list(word[::-1]),
     "mirror-reverse": lambda word: [-letter for letter in word[::-1]],
 }
-WIDTHS = {"alexander": 2, "jones": 2, "homfly": 3}
+PLAIN = {
+    *("components", "linking-numbers", "linking-sums", "alexander", "jones", "homfly"),
+    *("signature", "three-braid", "colouring", "levine-tristram", "alexander-module"),
+}
 HEADER = {"format", "version", "left", "right", "verdict"}
-cached_value = cache(oracles.value)
 cached_is_equal = cache(oracles.is_equal)
+
+
+@cache
+def cached_value(name: str, strands: int, word: tuple[int, ...], parameters: str) -> Any:
+    return oracles.value(name, strands, word, **json.loads(parameters))
 
 
 def holds(data: Any) -> bool:
@@ -60,12 +68,12 @@ def different_holds(data: Any) -> bool:
 
 def distinction_holds(data: Any, item: Any) -> bool:
     sides = {"left", "right", "left_moves", "right_moves"}
-    if item.keys() != sides | {"symmetry", "invariant", "parameters"} or item["parameters"] != {}:
+    if item.keys() != sides | {"symmetry", "invariant", "parameters"}:
         return False
-    name = item["invariant"]
-    if not is_one_of(name, {*WIDTHS, "components", "linking-numbers", "linking-sums", "signature"}):
+    name, parameters = item["invariant"], item["parameters"]
+    if not is_one_of(name, {*PLAIN, "sublinks"}) or not are_parameters(name, parameters):
         return False
-    if not (has_form(name, item["left"]) and has_form(name, item["right"])):
+    if not (is_of_integers(item["left"]) and is_of_integers(item["right"])):
         return False
     left = end_of_moves(data["left"], item["left_moves"])
     right = end_of_moves(data["right"], item["right_moves"])
@@ -73,23 +81,49 @@ def distinction_holds(data: Any, item: Any) -> bool:
         return False
     image = (right[0], SYMMETRIES[item["symmetry"]](right[1]))
     return all(
-        cached_value(name, strands, tuple(word)) == stated
+        cached_value(name, strands, tuple(word), json.dumps(parameters)) == stated
         for (strands, word), stated in ((left, item["left"]), (image, item["right"]))
     )
 
 
-def has_form(name: str, value: Any) -> bool:
-    if name in ("components", "signature"):
-        return type(value) is int
-    if not isinstance(value, list):
+def is_of_integers(value: Any) -> bool:
+    """Whether a value is an integer or is built of lists of integers; true and 1.0 are none."""
+    return all(map(is_of_integers, value)) if isinstance(value, list) else type(value) is int
+
+
+def are_parameters(name: str, given: Any) -> bool:
+    """Whether the parameters have the keys and ranges of the invariant."""
+    if not isinstance(given, dict):
         return False
-    if name in ("linking-numbers", "linking-sums"):
-        return all(type(number) is int for number in value)
-    return all(
-        isinstance(entry, list)
-        and len(entry) == WIDTHS[name]
-        and all(type(number) is int for number in entry)
-        for entry in value
+    if name == "sublinks":
+        rest = dict(given)
+        count, inner = rest.pop("components", None), rest.pop("invariant", None)
+        is_fit = is_in(count, 1, 1000) and is_one_of(inner, PLAIN)
+        return is_fit and are_parameters(inner, rest)
+    if name == "levine-tristram":
+        is_fit = given.keys() == {"order", "power"}
+        return is_fit and is_in(given["order"], 2, 60) and is_in(given["power"], 1, 59)
+    if name == "alexander-module":
+        return given.keys() == {"prime"} and is_in(given["prime"], 2, 1000)
+    if name == "colouring":
+        is_fit = given.keys() == {"generators", "meridians"} and given["meridians"] != []
+        return is_fit and all(
+            isinstance(one, list) and all(map(is_permutation, one)) for one in given.values()
+        )
+    return given == {}
+
+
+def is_in(value: Any, least: int, most: int) -> bool:
+    return type(value) is int and least <= value <= most
+
+
+def is_permutation(data: Any) -> bool:
+    return (
+        isinstance(data, list)
+        and is_of_integers(data)
+        and not any(isinstance(entry, list) for entry in data)
+        and 1 <= len(data) <= 200
+        and sorted(data) == list(range(1, len(data) + 1))
     )
 
 

@@ -8,6 +8,7 @@ from typing import Any
 from tests.scrambles import apply_random_relation
 from tests.verifier import oracles
 from tests.verifier.judge import SYMMETRIES
+from tests.verifier.permutation_groups import A4, S3, S3_ROTATIONS
 
 Certificate = dict[str, Any]
 INVARIANTS = (
@@ -18,6 +19,18 @@ INVARIANTS = (
     "jones",
     "homfly",
     "signature",
+)
+FINER: tuple[tuple[str, dict[str, Any]], ...] = (
+    ("colouring", S3),
+    ("colouring", S3_ROTATIONS),
+    ("colouring", A4),
+    ("levine-tristram", {"order": 6, "power": 1}),
+    ("levine-tristram", {"order": 5, "power": 2}),
+    ("alexander-module", {"prime": 2}),
+    ("alexander-module", {"prime": 3}),
+    ("sublinks", {"components": 1, "invariant": "jones"}),
+    ("sublinks", {"components": 2, "invariant": "alexander-module", "prime": 5}),
+    ("three-braid", {}),
 )
 
 
@@ -92,7 +105,9 @@ def make_same(generator: random.Random) -> Certificate:
     }
 
 
-def make_different(generator: random.Random) -> Certificate:
+def make_different(
+    generator: random.Random, invariants: Any = tuple((name, {}) for name in INVARIANTS)
+) -> Certificate:
     """A valid certificate of difference for one or two symmetries."""
     braids = []
     for _ in range(2):
@@ -101,13 +116,13 @@ def make_different(generator: random.Random) -> Certificate:
         braids.append({"strands": strands, "word": word})
     distinctions = []
     for symmetry in generator.sample(list(SYMMETRIES), 4):
-        for invariant in generator.sample(INVARIANTS, len(INVARIANTS)):
-            item = make_distinction(generator, braids, symmetry, invariant)
-            if item["left"] != item["right"]:
+        for invariant, parameters in generator.sample(invariants, len(invariants)):
+            item = make_distinction(generator, braids, symmetry, invariant, parameters)
+            if None not in (item["left"], item["right"]) and item["left"] != item["right"]:
                 distinctions.append(item)
                 break
     if not distinctions:
-        return make_different(generator)
+        return make_different(generator, invariants)
     return {
         "format": "braidsearch certificate",
         "version": 1,
@@ -119,9 +134,9 @@ def make_different(generator: random.Random) -> Certificate:
 
 
 def make_distinction(
-    generator: random.Random, braids: list[Any], symmetry: str, invariant: str
+    generator: random.Random, braids: list[Any], symmetry: str, invariant: str, parameters: Any
 ) -> Certificate:
-    """A distinction with true values, which may be equal."""
+    """A distinction with true values, which may be equal, or None where there is none."""
     ends, lists = [], []
     for braid in braids:
         count = generator.choice([0, 0, 2])
@@ -132,9 +147,16 @@ def make_distinction(
     return {
         "symmetry": symmetry,
         "invariant": invariant,
-        "parameters": {},
+        "parameters": parameters,
         "left_moves": lists[0],
         "right_moves": lists[1],
-        "left": oracles.value(invariant, *ends[0]),
-        "right": oracles.value(invariant, right_strands, SYMMETRIES[symmetry](right_word)),
+        "left": oracles.value(invariant, *ends[0], **parameters),
+        "right": oracles.value(
+            invariant, right_strands, SYMMETRIES[symmetry](right_word), **parameters
+        ),
     }
+
+
+def make_finely_different(generator: random.Random) -> Certificate:
+    """The same by colourings, signatures at roots of unity, modules, sublinks, 3-braids."""
+    return make_different(generator, FINER)

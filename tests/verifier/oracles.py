@@ -15,6 +15,7 @@ import sympy
 from braidsearch.words import Braid
 from tests.artin_action import artin_images
 from tests.invariants import oracles
+from tests.verifier import finer_oracles
 
 _T = sympy.Symbol("t")
 
@@ -24,9 +25,16 @@ def is_equal(strands: int, first: Any, second: Any) -> bool:
     return artin_images(Braid(first, strands)) == artin_images(Braid(second, strands))
 
 
-def value(name: str, strands: int, word: Any) -> Any:
-    """The invariant of the closure, in the form of certificates."""
+def value(name: str, strands: int, word: Any, **parameters: Any) -> Any:
+    """The invariant of the closure, in the form of certificates; None where it is not defined."""
     braid = Braid(word, strands)
+    if name == "sublinks":
+        inner, count = parameters.pop("invariant"), parameters.pop("components")
+        parts = finer_oracles.sublink_braids(braid, count)
+        values = [value(inner, part.strands, part.word, **parameters) for part in parts]
+        return None if None in values else sorted(values)
+    if name in ("colouring", "levine-tristram", "alexander-module", "three-braid"):
+        return getattr(finer_oracles, name.replace("-", "_"))(braid, **parameters)
     if name == "components":
         return oracles.component_count(braid)
     if name == "linking-numbers":

@@ -21,8 +21,8 @@ def status_of(folder, name):
 def test_1_unknown_rules_are_not_accepted():
     """Unknown moves, invariants, symmetries, verdicts, versions, parameters: unreadable."""
     for name in (
-        *("move-unknown", "move-exchange", "invariant-unknown", "invariant-colouring"),
-        *("invariant-three-braid", "symmetry-unknown", "verdict-undecided", "version-2"),
+        *("move-unknown", "move-exchange", "invariant-unknown", "symmetry-unknown"),
+        *("verdict-undecided", "version-2", "colouring-with-another-key"),
         *("distinction-with-a-parameter", "format-of-another-program"),
     ):
         assert status_of("malformed", name) == "unreadable"

@@ -54,7 +54,7 @@ def dowker_thistlethwaite_code(components: Iterable[Iterable[int]]) -> LinkDiagr
 
     Source: Dowker, Thistlethwaite, Classification of knot projections, 1983.
     """
-    lists = checked_groups(components, _EXPECTED)
+    lists = checked_groups(components, _EXPECTED, entries_per_crossing=1)
     entries = [entry for component in lists for entry in component]
     _check_entries(entries)
     passage: dict[int, Passage] = {}

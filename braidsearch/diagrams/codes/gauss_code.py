@@ -78,7 +78,7 @@ def gauss_code(
     Raises InputError for 0, for a crossing that is not passed over once and under once, for
     signs that do not match, and for a code that is not planar.
     """
-    lists = checked_groups(components, _EXPECTED)
+    lists = checked_groups(components, _EXPECTED, entries_per_crossing=2)
     _check_passages([label for passages in lists for label in passages])
     numbers = sorted({abs(label) for passages in lists for label in passages})
     number_of = {label: place for place, label in enumerate(numbers)}

@@ -29,12 +29,7 @@ def split_groups(text: str, expected: str) -> list[list[str]]:
     if not plain:
         raise InputError(f"an empty text: expected {expected}")
     tokens = _TOKEN.findall(plain)
-    groups = _bracketed(tokens, expected) if set(plain) & set("[](){}") else _lines(tokens)
-    if sum(map(len, groups)) > 4 * MAX_CROSSINGS:
-        raise InputError(
-            f"{sum(map(len, groups))} entries: expected at most {MAX_CROSSINGS} crossings"
-        )
-    return groups
+    return _bracketed(tokens, expected) if set(plain) & set("[](){}") else _lines(tokens)
 
 
 def _lines(tokens: Iterable[str]) -> list[list[str]]:
@@ -90,11 +85,17 @@ def parse_integer_groups(text: str, expected: str) -> list[list[int]]:
     return [[read_integer(token, expected) for token in group] for group in groups]
 
 
-def checked_groups(groups: object, expected: str) -> list[list[int]]:
-    """Lists of integers from any iterables of them; raises InputError for anything else."""
-    checked = []
+def checked_groups(groups: object, expected: str, entries_per_crossing: int) -> list[list[int]]:
+    """Lists of integers from any iterables of them.
+
+    Raises InputError for anything else, and for more than MAX_CROSSINGS crossings.
+    """
+    checked: list[list[int]] = []
     for group in _iterate(groups, expected):
         checked.append([_checked_integer(item, expected) for item in _iterate(group, expected)])
+    entries = sum(map(len, checked))
+    if entries > entries_per_crossing * MAX_CROSSINGS:
+        raise InputError(f"{entries} entries: expected at most {MAX_CROSSINGS} crossings")
     return checked
 
 

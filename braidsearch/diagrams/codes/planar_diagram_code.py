@@ -45,7 +45,7 @@ def planar_diagram_code(entries: Iterable[Iterable[int]]) -> LinkDiagram:
     Raises InputError for a list of another length, a label that is negative or does not stand at
     two places, under-strands that contradict each other, and a code that is not planar.
     """
-    groups = checked_groups(entries, _EXPECTED)
+    groups = checked_groups(entries, _EXPECTED, entries_per_crossing=4)
     crossings = [group for group in groups if len(group) != 1]
     _check_entries(groups)
     labels = [label for crossing in crossings for label in crossing]
