@@ -7,6 +7,18 @@ braids. Then random polygons of 50 vertices, evenly spread in a cube: the determ
 diagram's closed braid against a count of the tests' own, with fractions and along another
 direction. Last, polygons of ten thousand vertices, timed from the array to the diagram; the bound
 is 20 seconds. A wrong answer or a bound not kept ends with status 1.
+
+Measured on one of two shared cores, the loops compiled before (11 s, once):
+
+    torus knot T(3, 4), 10000 vertices: 9 left, 8 crossings, 0.11 s
+    torus knot T(7, 6), 10000 vertices: 20 left, 49 crossings, 0.17 s
+    closed walk of normal steps, 10000 vertices: 203 left, 213 crossings, 0.33 s
+    closed walk on the lattice, 10000 vertices: 3 left, 0 crossings, 0.10 s
+    circle with noise, 10000 vertices: 12 left, 6 crossings, 0.13 s
+    torus knots: 22 of 22 same; seconds median 0.08, nine in ten 0.71, at most 2.14
+    random polygons of 50 vertices: 1000 of 1000 determinants agree
+      crossings median 74, nine in ten 115, at most 211
+      seconds to the braid median 0.111, nine in ten 0.412, at most 1.183
 """
 
 import argparse
@@ -67,7 +79,8 @@ def random_polygons(count: int) -> int:
             wrong += 1
             print(f"  seed {seed}: another determinant than {expected}")
     print(f"random polygons of 50 vertices: {count - wrong} of {count} determinants agree")
-    print(f"  crossings {spread(crossings, '.0f')}; seconds to the braid {spread(times, '.3f')}")
+    print("  crossings", spread(crossings, ".0f"))
+    print("  seconds to the braid", spread(times, ".3f"))
     return wrong
 
 
