@@ -50,6 +50,6 @@ def _run(script: str) -> subprocess.CompletedProcess[str]:
         capture_output=True,
         text=True,
         check=True,
-        timeout=120,
+        timeout=600,
         env=os.environ | {"PYTHONPATH": place},
     )

@@ -70,7 +70,7 @@ def test_torus_knots(p, q, is_simplified):
 def test_torus_knots_are_proven_same(p, q):
     """compare joins the knot of the coordinates to the standard braid."""
     braid = closed_braid([torus_polygon(p, q, 150)])
-    verdict = compare(braid, torus_link(p, q), limits=SearchLimits(seconds=20))
+    verdict = compare(braid, torus_link(p, q), limits=SearchLimits(seconds=None, nodes=5000))
     assert verdict.outcome == "same"
 
 
