@@ -717,6 +717,16 @@ def seifert_form(braid: Braid, work: Work) -> list[dict[int, int]]:
     return form
 
 
+def entry_pairs(form: list[dict[int, int]]) -> list[dict[int, tuple[int, int]]]:
+    """The rows of (V, V^T): at (i, j) both entries, where one of them is not zero."""
+    pairs: list[dict[int, tuple[int, int]]] = [{} for _ in form]
+    for i, row in enumerate(form):
+        for j, entry in row.items():
+            pairs[i][j] = (entry, form[j].get(i, 0))
+            pairs[j][i] = (form[j].get(i, 0), entry)
+    return pairs
+
+
 def alexander(braid: Braid, work: Work) -> list[list[int]]:
     """The Alexander polynomial det(V - t V^T), lowest exponent 0, lowest coefficient positive.
 
@@ -727,13 +737,8 @@ def alexander(braid: Braid, work: Work) -> list[list[int]]:
     """
     if len({abs(letter) for letter in braid.word}) < braid.strands - 1:
         return []
-    form = seifert_form(braid, work)
-    size = len(form)
-    pattern: list[dict[int, tuple[int, int]]] = [{} for _ in form]
-    for i, row in enumerate(form):
-        for j, entry in row.items():
-            pattern[i][j] = (entry, form[j].get(i, 0))
-            pattern[j][i] = (form[j].get(i, 0), entry)
+    pattern = entry_pairs(seifert_form(braid, work))
+    size = len(pattern)
     prime = mersenne_prime(5 * size // 3 + 3)
     points, values = [], []
     for t in range(2, size // 2 + 3):
@@ -1214,24 +1219,22 @@ def levine_tristram(braid: Braid, work: Work, order: int, power: int) -> list[in
     """
     if gcd(order, power) != 1 or power > order:
         raise RejectedError(f"{power} / {order} gives no primitive root of unity")
-    form = connected_form(braid, work)
-    size = len(form)
+    rows = entry_pairs(connected_form(braid, work))
+    size = len(rows)
     width = 5 * size + 4
-    x, modulus = 1 << width, (1 << width * order) - 1
-    rows: list[dict[int, int]] = [{} for _ in form]
-    for i, row in enumerate(form):
-        for j, entry in row.items():
-            rows[i][j] = rows[i].get(j, 0) + x * entry
-            rows[j][i] = rows[j].get(i, 0) - entry
-    cost = size * sum(map(len, rows)) * (4 + width * width * order // 50_000)
+    modulus = (1 << width * order) - 1
+    cost = size * (size + sum(map(len, rows))) * (4 + width * order // 1000)
     matrix = [[int(i == j) for j in range(size)] for i in range(size)]
     coefficients = [1]
     for k in range(1, size + 1):
         work.spend(cost)
-        matrix = [
-            [sum(entry * matrix[j][i] for j, entry in row.items()) % modulus for i in range(size)]
-            for row in rows
-        ]
+        columns = list(zip(*matrix, strict=True))
+        matrix = []
+        for row in rows:
+            times_x = [sum(v * column[j] for j, (v, _) in row.items()) for column in columns]
+            plain = [sum(w * column[j] for j, (_, w) in row.items()) for column in columns]
+            pairs = zip(times_x, plain, strict=True)
+            matrix.append([((one << width) - other) % modulus for one, other in pairs])
         trace = sum(matrix[i][i] for i in range(size)) % modulus
         c = -(trace - modulus if 2 * trace > modulus else trace) // k
         for i in range(size):
@@ -1306,12 +1309,12 @@ def alexander_module(braid: Braid, work: Work, prime: int) -> list[Polynomial]:
     """
     if any(prime % divisor == 0 for divisor in range(2, prime)):
         raise RejectedError(f"{prime} is not a prime number")
-    form = connected_form(braid, work)
-    rows: list[dict[int, Polynomial]] = [{} for _ in form]
-    for i, row in enumerate(form):
-        for j, entry in row.items():
-            rows[i][j] = add_multiple(rows[i].get(j, []), [0, entry], [1], prime, work)
-            rows[j][i] = add_multiple(rows[j].get(i, []), [-entry], [1], prime, work)
+    pairs = entry_pairs(connected_form(braid, work))
+    rows = [
+        {j: add_multiple([], [-w, v], [1], prime, work) for j, (v, w) in row.items()}
+        for row in pairs
+    ]
+    rows = [{j: entry for j, entry in row.items() if entry} for row in rows]
     diagonal = diagonal_form(rows, prime, work)
     factors = [normalised(factor, prime) for factor in diagonal]
     factors = [factor for factor in factors if len(factor) > 1]
@@ -1323,7 +1326,7 @@ def alexander_module(braid: Braid, work: Work, prime: int) -> list[Polynomial]:
             cofactor, _ = divide(factors[i], one, prime, work)
             factors[j] = normalised(add_multiple([], cofactor, factors[j], prime, work), prime)
             factors[i] = normalised(one, prime)
-    free = len(form) - len(diagonal)
+    free = len(rows) - len(diagonal)
     return [factor for factor in factors if len(factor) > 1] + [[]] * free
 
 
