@@ -7,6 +7,21 @@ The knots up to 13 crossings and the oriented links up to 11 of the package ``da
 cross-checks included, and the Jones polynomial of the braid is compared with the table's. Then so
 many seeded knots and so many links are compared with the table's own braid words, up to reversing
 all components; every certificate is verified once more.
+
+Measured with one process on two shared cores, all 17,153 diagrams in 2 min 22 s:
+
+    knots: 12965 woven in 127 s
+      the table's Jones polynomial: 12965; not: none
+      seconds  median 0.0016, nine in ten 0.0098, at most 2.0257
+      strands  median 6, nine in ten 8, at most 12
+      letters  median 21, nine in ten 35, at most 73
+    links: 4188 woven in 15 s
+      the table's Jones polynomial: 4188; not: none
+      seconds  median 0.0012, nine in ten 0.0054, at most 0.0742
+      strands  median 5, nine in ten 7, at most 10
+      letters  median 17, nine in ten 27, at most 50
+
+Every one is checked by the exact Jones polynomial, by a state sum over the diagram.
 """
 
 import argparse
@@ -68,13 +83,16 @@ def print_woven(title: str, drawings: Sequence[Drawing], pool: ProcessPoolExecut
 
 
 def examine_words(task: tuple[Drawing, float]) -> tuple[str, str, str, float, int]:
-    """Compare the woven braid with the table's: name, outcome, symmetry, seconds, moves."""
+    """Compare the woven braid with the table's: name, outcome, symmetry, seconds, moves.
+
+    The seconds are the processor's, which a busy machine does not stretch; the limit is not.
+    """
     drawing, seconds = task
     woven = weave(parse_planar_diagram_code(drawing.code)).braid
     limits = SearchLimits(seconds=seconds, nodes=None)
-    start = time.perf_counter()
+    start = time.process_time()
     verdict = compare(woven, drawing.row.braid, up_to=("reverse",), limits=limits)
-    taken = time.perf_counter() - start
+    taken = time.process_time() - start
     symmetry, moves = "", 0
     if verdict.certificate is not None:
         if not verify(verdict.certificate, left=woven, right=drawing.row.braid).valid:
@@ -94,7 +112,7 @@ def print_compared(
     print(f"{title} compared with the table's braid words: {len(results)}")
     for (outcome, symmetry), count in Counter((r[1], r[2]) for r in results).items():
         print(f"  {count:6d} {outcome} {symmetry}")
-    print("  seconds ", spread([taken for *_, taken, _ in results], ".2f"))
+    print("  processor seconds", spread([taken for *_, taken, _ in results], ".2f"))
     print("  moves   ", spread([float(moves) for *_, moves in results], ".0f"), flush=True)
 
 
@@ -103,7 +121,9 @@ def main() -> None:
     parser = argparse.ArgumentParser(description=(__doc__ or "").splitlines()[0])
     parser.add_argument("--every", type=int, default=1, help="take every so manieth row only")
     parser.add_argument("--processes", type=int, default=2)
-    parser.add_argument("--compare", type=int, default=300, help="so many of each table; 0 for none")
+    parser.add_argument(
+        "--compare", type=int, default=300, help="so many of each table; 0 for none"
+    )
     parser.add_argument("--seconds", type=float, default=60.0, help="for each comparison")
     given = parser.parse_args()
     tables = {
