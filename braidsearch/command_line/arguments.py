@@ -57,9 +57,12 @@ class CommandParser(argparse.ArgumentParser):
         """A braid word as a positional argument."""
         self.add_argument(name, metavar=name.upper(), type=_unguarded, help=explanation)
 
-    def add_text(self, *flags: str, metavar: str, explanation: str) -> None:
-        """An option with a text for its value, or a positional argument."""
-        self.add_argument(*flags, metavar=metavar, type=_unguarded, help=explanation)
+    def add_text(
+        self, *flags: str, metavar: str, explanation: str, is_repeatable: bool = False
+    ) -> None:
+        """An option with a text for its value, or a list of them, or a positional argument."""
+        action = "append" if is_repeatable else "store"
+        self.add_argument(*flags, metavar=metavar, type=_unguarded, help=explanation, action=action)
 
     def add_number(
         self, flag: str, read: Callable[[str], object], expected: str, explanation: str

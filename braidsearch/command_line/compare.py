@@ -15,7 +15,7 @@ from braidsearch.certificates import (
 from braidsearch.command_line.answer import Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser
 from braidsearch.command_line.compare_report import report_verdict
-from braidsearch.command_line.link_input import read_link_argument
+from braidsearch.command_line.link_input import is_standard_input, read_link_argument
 from braidsearch.command_line.progress import progress_line
 from braidsearch.command_line.search_limits import add_limits, read_limits
 from braidsearch.errors import BraidsearchError, InputError
@@ -59,11 +59,11 @@ def _parser() -> CommandParser:
     parser = CommandParser("compare", _DESCRIPTION, _EXAMPLES)
     parser.add_word("left", "a braid word or a drawing")
     parser.add_word("right", "a braid word or a drawing")
-    parser.add_argument(
+    parser.add_text(
         "--up-to",
-        action="append",
         metavar="SYMMETRIES",
-        help="links that count as the same too: mirror,reverse,mirror-reverse or any",
+        explanation="links that count as the same too: mirror,reverse,mirror-reverse or any",
+        is_repeatable=True,
     )
     parser.add_text("-o", "--output", metavar="FILE", explanation="certificate file (-: print it)")
     parser.add_json()
@@ -72,8 +72,10 @@ def _parser() -> CommandParser:
 
 
 def _read_braids(given: Namespace) -> tuple[Braid, Braid]:
-    if given.left == given.right == "-":
-        raise InputError("RIGHT: -: expected a word, since LEFT reads standard input already")
+    if is_standard_input(given.left) and is_standard_input(given.right):
+        raise InputError(
+            f"RIGHT: {given.right}: expected a word, since LEFT reads standard input already"
+        )
     return read_link_argument("LEFT", given.left), read_link_argument("RIGHT", given.right)
 
 

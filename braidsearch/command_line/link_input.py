@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import os
 import re
 from dataclasses import dataclass
 from pathlib import Path
@@ -39,7 +40,10 @@ INPUTS = """A link is a braid word, or a drawing with its notation in front:
 reads standard input, as in "pd: -"."""
 
 _PREFIX = re.compile(rf"\s*({'|'.join(PREFIXES)})\s*:(.*)", re.DOTALL | re.IGNORECASE)
+_OTHER_NAME = re.compile(r"\s*([^\W\d][^:\n]{0,39}?)\s*:")
+_DRAWN = re.compile(r"\[\s*\[|\bX\s*\[|\b[OU][0-9]+[+-]")
 _LONGEST_INPUT = 100_000_000
+_LONGEST_PATH = 100
 
 
 @dataclass(frozen=True)
@@ -63,12 +67,29 @@ def read_link_argument(name: str, text: str) -> Braid:
     """
     drawing = read_drawing(name, text)
     if drawing is None:
-        return read_word_argument(name, text)
+        return read_undrawn_argument(name, text)
     woven = weave_drawing(drawing)
     print_error(f"{name}: woven from {drawing.title}: {format_word(woven.braid)}")
     for note in woven.notes:
         print_error(f"{name}: note: {note}")
     return woven.braid
+
+
+def read_undrawn_argument(name: str, text: str) -> Braid:
+    """The braid that an argument without a notation in front holds, as ``read_word_argument``.
+
+    Raises InputError; for a text that looks like a drawing it says how to write one.
+    """
+    try:
+        return read_word_argument(name, text)
+    except InputError as error:
+        raise InputError(f"{error}{_hint_at_notations(text)}") from None
+
+
+def is_standard_input(text: str) -> bool:
+    """Whether an argument is read from standard input: a lone -, or one behind a notation."""
+    match = _PREFIX.match(text)
+    return (text if match is None else match[2].strip()) == "-"
 
 
 def read_drawing(name: str, text: str, seed: int = 0) -> Drawing | None:
@@ -78,6 +99,10 @@ def read_drawing(name: str, text: str, seed: int = 0) -> Drawing | None:
     """
     match = _PREFIX.match(text)
     if match is None:
+        other = _OTHER_NAME.match(text)
+        if other is not None:
+            expected = f"a strand count, or a notation: {', '.join(PREFIXES)}"
+            raise InputError(f"{name}: {other[1]!r} before the colon: expected {expected}")
         return None
     notation = PREFIXES[match[1].lower()]
     try:
@@ -97,18 +122,24 @@ def weave_drawing(drawing: Drawing) -> Woven:
     return weave(drawing.diagram, drawing.notes)
 
 
+def _hint_at_notations(text: str) -> str:
+    if os.path.isfile(text):
+        return '; a file has its notation in front: "polygon: FILE", "pd: @FILE"'
+    if _DRAWN.search(text):
+        return '; a drawing has its notation in front: "pd: [[1,5,2,4],...]", "gauss: O1+ U2+ ..."'
+    return ""
+
+
 def _read_polygons(source: str, seed: int) -> LinkDiagram:
     from braidsearch.diagrams.polygons import (  # noqa: PLC0415 - words come faster
         parse_polygons,
         polygon_diagram,
-        read_polygons,
     )
 
-    if not source:
+    if source in ("", "@"):
         raise InputError("polygon: expected the name of a file with rows x y z, or -")
-    if source == "-":
-        return polygon_diagram(parse_polygons(read_standard_input(_LONGEST_INPUT)), seed)
-    return polygon_diagram(read_polygons(Path(source)), seed)
+    is_named = source == "-" or source.startswith("@")
+    return polygon_diagram(parse_polygons(_text_of(source if is_named else f"@{source}")), seed)
 
 
 def _text_of(source: str) -> str:
@@ -118,9 +149,16 @@ def _text_of(source: str) -> str:
     if not source.startswith("@"):
         return source
     path = source[1:].strip()
+    if not path:
+        raise InputError("'@': expected the name of a file behind it")
     try:
         return Path(path).read_text(encoding="utf-8-sig")
     except OSError as error:
-        raise InputError(f"{path!r}: {error.strerror}: expected a file") from None
+        raise InputError(f"{_shown(path)}: {error.strerror}: expected a file") from None
     except (UnicodeDecodeError, ValueError):
-        raise InputError(f"{path!r}: expected a file of text in UTF-8") from None
+        raise InputError(f"{_shown(path)}: expected a file of text in UTF-8") from None
+
+
+def _shown(path: str) -> str:
+    """The path as quoted in a message: of a long one the end, which tells most."""
+    return repr(path if len(path) <= _LONGEST_PATH else "..." + path[3 - _LONGEST_PATH :])

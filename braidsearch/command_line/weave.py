@@ -9,12 +9,13 @@ from typing import TYPE_CHECKING
 
 from braidsearch.certificates.explanation import count_of
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
-from braidsearch.command_line.arguments import CommandParser, read_word_argument
+from braidsearch.command_line.arguments import CommandParser
 from braidsearch.command_line.link_input import (
     INPUTS,
     PREFIXES,
     Drawing,
     read_drawing,
+    read_undrawn_argument,
     weave_drawing,
 )
 from braidsearch.errors import InputError
@@ -46,9 +47,11 @@ def answer(arguments: Sequence[str]) -> Answer:
     given = _parser().read(arguments)
     if given.code is not None and given.code not in _CODES:
         raise InputError(f"--code: {given.code!r}: expected one of {', '.join(_CODES)}")
-    drawing = _reversed(_read(given.link, getattr(given, "seed", 0)), given.reverse or [])
+    drawing = _reversed(_read(given.link, _seed(given)), given.reverse or [])
     woven = weave_drawing(drawing)
-    code = None if given.code is None else _written(woven, given.code)
+    code = None
+    if given.code is not None:
+        woven, code = _written(woven, given.code)
     if given.json:
         return json_answer(SUCCESS, _to_json(woven, given.code, code))
     return Answer(SUCCESS, _report(drawing, woven, given, code))
@@ -57,13 +60,23 @@ def answer(arguments: Sequence[str]) -> Answer:
 def _parser() -> CommandParser:
     parser = CommandParser("weave", _DESCRIPTION, _EXAMPLES)
     parser.add_word("link", "a drawing, or a braid word")
-    parser.add_argument(
-        "--reverse", action="append", metavar="NUMBERS", help="components to turn around: 2 or 1,3"
+    parser.add_text(
+        "--reverse",
+        metavar="NUMBERS",
+        explanation="components to turn around: 2 or 1,3",
+        is_repeatable=True,
     )
     parser.add_text("--code", metavar="NAME", explanation="write it as pd, gauss or dt too")
     parser.add_number("--seed", int, "an integer", "for the projections of polygons that are tried")
     parser.add_json()
     return parser
+
+
+def _seed(given: Namespace) -> int:
+    seed = getattr(given, "seed", 0)
+    if seed is None:  # none lifts the limits of other commands; here there is nothing to lift
+        raise InputError("--seed: 'none': expected an integer")
+    return int(seed)
 
 
 def _read(text: str, seed: int) -> Drawing:
@@ -73,7 +86,7 @@ def _read(text: str, seed: int) -> Drawing:
         return drawing
     from braidsearch.diagrams import closed_braid_diagram  # noqa: PLC0415 - help comes faster
 
-    braid = read_word_argument("LINK", text)
+    braid = read_undrawn_argument("LINK", text)
     return Drawing("braid", closed_braid_diagram(braid), ())
 
 
@@ -93,7 +106,8 @@ def _read_number(text: str, diagram: LinkDiagram) -> int:
     return int(text)
 
 
-def _written(woven: Woven, prefix: str) -> str:
+def _written(woven: Woven, prefix: str) -> tuple[Woven, str]:
+    """The diagram of the closed braid in a notation, and a note on what that leaves open."""
     from braidsearch import diagrams  # noqa: PLC0415 - help comes faster
 
     write = {
@@ -101,7 +115,10 @@ def _written(woven: Woven, prefix: str) -> str:
         "gauss": diagrams.format_gauss_code,
         "dt": diagrams.format_dowker_thistlethwaite_code,
     }[prefix]
-    return write(diagrams.closed_braid_diagram(woven.braid))
+    code = write(diagrams.closed_braid_diagram(woven.braid))
+    _, notes = diagrams.parse_code(PREFIXES[prefix], code)
+    new = [note for note in notes if note not in woven.notes]
+    return replace(woven, notes=(*woven.notes, *new)), code
 
 
 def _to_json(woven: Woven, name: str | None, code: str | None) -> dict[str, object]:
