@@ -307,7 +307,9 @@ def families(largest: int = 8) -> dict[tuple[int, ...], list[list[int]]]:
     """For each class of a family with exponents up to ``largest``, all classes of its link."""
     span = range(-largest, largest + 1)
     members = [[(1, 2), (1, -2), (-1, -2)]]
-    members += [[word_of((1, k), (2, s)) for s in (1, -1)] for k in span if k not in (1, -1)]
+    members += [
+        [word_of((1, k), (2, s)) for s in (1, -1)] for k in range(-30, 31) if k not in (1, -1)
+    ]
     members += [
         [word_of((1, u), (2, v), (1, w), (2, e)), word_of((1, w), (2, v), (1, u), (2, e))]
         for u, v, w, e in product(span, span, span, (1, -1))
