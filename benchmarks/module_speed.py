@@ -2,8 +2,23 @@
 
 Knots of the table with 12 crossings, random braid words, seeded, and torus links, whose modules
 are far from cyclic and whose signatures have large nullities. Each figure is the median and the
-most over a few words, in milliseconds; "guess" is the median of the estimates by which the ladder
-of invariants is ordered. Needs ``database-knotinfo`` for the knots.
+most over a few words, in milliseconds of processor time; "guess" is the median of the estimates
+by which the ladder of invariants is ordered. Needs ``database-knotinfo`` for the knots.
+
+Measured on two shared cores of a server, Python 3.11, NumPy 2.4, medians in milliseconds:
+
+    strands x letters      order 3   order 12   order 59   modulo 2   modulo 13   modulo 997
+    knots, 12 crossings       0.32       0.32       0.32       0.62        0.60         0.54
+          4 x 15              0.28       0.22       0.21       0.70        0.77         0.71
+          5 x 20              0.41       0.46        1.5       0.52        0.71         0.62
+          8 x 100              6.2        5.7        5.8        9.3         7.3          5.7
+         12 x 100              6.9        6.0        6.3         27          25           20
+          8 x 200               23         24         24         15          11           11
+         30 x 200               38         45         46        320         360          330
+          8 x 1000            1900       1900
+
+A word of which the form is singular at a root of large order takes longer there, since ranks are
+asked modulo many primes: up to 4 ms among those of 5 x 20 at order 59.
 """
 
 from __future__ import annotations
@@ -61,9 +76,9 @@ def measure(
     """Median and most milliseconds, and the median guess, over the braids."""
     times = []
     for braid in braids:
-        start = time.perf_counter()
+        start = time.process_time()
         compute(braid)
-        times.append(1000 * (time.perf_counter() - start))
+        times.append(1000 * (time.process_time() - start))
     return statistics.median(times), max(times), 1000 * statistics.median(map(guess, braids))
 
 
