@@ -29,7 +29,7 @@ IntegerArray = NDArray[np.int64]
 SmallArray = NDArray[np.int16]
 
 _LARGEST_KEY = 1 << 62
-_CACHED_PLACES = 6_000_000  # of each of the four square tables, 2 bytes a place: 48 MB
+_CACHED_PLACES = 14_000_000  # of each of four square tables, 2 bytes a place: the whole ladder
 
 
 class ClassArrays(NamedTuple):

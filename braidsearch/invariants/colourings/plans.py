@@ -8,7 +8,7 @@ arcs take their colours from nowhere, the seeds: for most diagrams of few crossi
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Iterable, Iterator, Sequence
 from dataclasses import dataclass, field
 from enum import IntEnum
 from functools import cached_property, lru_cache
@@ -47,6 +47,18 @@ class Step:
     over: int = 0
     before: int = 0
     after: int = 0
+
+    @property
+    def determined_arc(self) -> int:
+        """The arc whose colour FORWARD or BACKWARD finds."""
+        return self.after if self.kind == StepKind.FORWARD else self.before
+
+    @property
+    def used_arcs(self) -> tuple[int, ...]:
+        """The arcs whose colours FORWARD, BACKWARD and CHECK need."""
+        if self.kind == StepKind.CHECK:
+            return self.over, self.before, self.after
+        return self.over, self.before if self.kind == StepKind.FORWARD else self.after
 
 
 class PlanArrays(NamedTuple):
@@ -96,22 +108,29 @@ class Plan:
         )
 
     def iter_widths(self, size: int, centraliser: int, classes: int = 1) -> Iterator[float]:
-        """How many partial colourings to expect at each step.
+        """How many partial colourings to expect at each step."""
+        return iter_widths(self.steps, size, centraliser, classes)
 
-        Seeds multiply, choices leave as many as they find, and a check is passed by one in
-        ``size``; trivial colourings pass everywhere.
-        """
-        width = 1.0
-        for step in self.steps:
-            if step.kind == StepKind.FIRST:
-                width *= classes
-            elif step.kind == StepKind.SECOND:
-                width *= 1 + size / centraliser
-            elif step.kind == StepKind.SEED:
-                width *= size
-            elif step.kind == StepKind.CHECK:
-                width = max(width / size, 1.0)
-            yield width
+
+def iter_widths(
+    steps: Iterable[Step], size: int, centraliser: int, classes: int = 1
+) -> Iterator[float]:
+    """How many partial colourings to expect at each step.
+
+    Seeds multiply, choices leave as many as they find, and a check is passed by one in ``size``;
+    trivial colourings pass everywhere.
+    """
+    width = 1.0
+    for step in steps:
+        if step.kind == StepKind.FIRST:
+            width *= classes
+        elif step.kind == StepKind.SECOND:
+            width *= 1 + size / centraliser
+        elif step.kind == StepKind.SEED:
+            width *= size
+        elif step.kind == StepKind.CHECK:
+            width = max(width / size, 1.0)
+        yield width
 
 
 _NOMINAL_SIZE, _NOMINAL_CENTRALISER = 200, 10
@@ -131,11 +150,13 @@ def colouring_plan(braid: Braid, may_choose: bool = True) -> Plan:
     plans = [
         _planned(diagram, start, may_choose) for start in starts[:: 1 + len(starts) // (most + 1)]
     ]
-    return min(plans, key=_nominal_cost, default=_planned(diagram, None, may_choose))
+    if not plans:
+        return _planned(diagram, None, may_choose)
+    return min(plans, key=lambda plan: _nominal_cost(plan.steps))
 
 
-def _nominal_cost(plan: Plan) -> float:
-    return sum(plan.iter_widths(_NOMINAL_SIZE, _NOMINAL_CENTRALISER))
+def _nominal_cost(steps: Iterable[Step]) -> float:
+    return sum(iter_widths(steps, _NOMINAL_SIZE, _NOMINAL_CENTRALISER))
 
 
 @dataclass
@@ -158,7 +179,7 @@ class _Progress:
         self.known[arc] = True
         waiting = [arc]
         while waiting:
-            arc = waiting.pop()
+            arc = waiting.pop(0)
             for number in self.around[arc]:
                 if not self.used[number]:
                     self._conclude(number, waiting)
@@ -200,7 +221,41 @@ def _planned(diagram: ArcDiagram, start: int | None, may_choose: bool) -> Plan:
         if all(progress.known):
             break
         _seed(progress, first, _best_seed(progress, may_choose))
-    return Plan(diagram, (*progress.steps, Step(StepKind.COMPLETE)))
+    return Plan(diagram, (*checks_first(progress.steps), Step(StepKind.COMPLETE)))
+
+
+def checks_first(steps: Iterable[Step]) -> list[Step]:
+    """The same steps, each check as early as possible after the step that tries colours.
+
+    What a check does not need comes after it, so that a colour that fails costs little. Among the
+    checks between two steps that try colours, the one that needs least is made first.
+    """
+    ordered: list[Step] = []
+    block: list[Step] = []
+    for step in steps:
+        if step.kind <= StepKind.CHOOSE:
+            ordered += _block_in_order(block)
+            ordered.append(step)
+            block = []
+        else:
+            block.append(step)
+    return ordered + _block_in_order(block)
+
+
+def _block_in_order(block: list[Step]) -> list[Step]:
+    """Steps that are determined, checks first."""
+    makers = {step.determined_arc: step for step in block if step.kind != StepKind.CHECK}
+    needs: dict[Step, dict[Step, None]] = {}
+    for step in block:
+        used = [makers[arc] for arc in step.used_arcs if arc in makers]
+        needs[step] = dict.fromkeys(one for maker in used for one in (*needs[maker], maker))
+    ordered: dict[Step, None] = {}
+    checks = [step for step in block if step.kind == StepKind.CHECK]
+    while checks:
+        check = min(checks, key=lambda step: sum(one not in ordered for one in needs[step]))
+        ordered.update(dict.fromkeys((*needs[check], check)))
+        checks.remove(check)
+    return [*ordered, *(step for step in block if step not in ordered)]
 
 
 def _seed(progress: _Progress, first: int, arc: int) -> None:
@@ -244,7 +299,10 @@ def _merit_of(progress: _Progress, crossing: Crossing) -> tuple[int, int]:
 
 
 def _best_seed(progress: _Progress, may_choose: bool) -> int:
-    """The arc that determines most; it meets a known arc at a crossing, or nothing follows."""
+    """The arc that determines most, of several the one whose checks come earliest.
+
+    It meets a known arc at a crossing, or nothing follows.
+    """
     known = progress.known
     meeting = dict.fromkeys(
         arc
@@ -256,16 +314,26 @@ def _best_seed(progress: _Progress, may_choose: bool) -> int:
     if not meeting:
         return _unmet_arc(progress)
 
-    def merit(arc: int) -> tuple[int, int]:
-        trial = progress.copy()
-        trial.take(Step(StepKind.SEED, arc), arc)
-        if may_choose:
-            for crossing in _iter_choices(trial):
-                if not trial.known[crossing[0]]:
-                    _choose(trial, crossing)
-        return trial.merit()
+    taken = len(progress.steps)
+
+    def merit(arc: int) -> tuple[int, int, int]:
+        trial = _with_seed(progress, arc, may_choose)
+        kinds = [step.kind for step in trial.steps[taken:]]
+        first_check = kinds.index(StepKind.CHECK) if StepKind.CHECK in kinds else len(kinds)
+        return *trial.merit(), -first_check
 
     return max(meeting, key=merit)
+
+
+def _with_seed(progress: _Progress, arc: int, may_choose: bool) -> _Progress:
+    """What a seed leads to, roughly: choices are made in the order in which they are met."""
+    trial = progress.copy()
+    trial.take(Step(StepKind.SEED, arc), arc)
+    if may_choose:
+        for crossing in _iter_choices(trial):
+            if not trial.known[crossing[0]]:
+                _choose(trial, crossing)
+    return trial
 
 
 def _unmet_arc(progress: _Progress) -> int:
