@@ -16,7 +16,7 @@ MUTANTS = ((-1, -1, 2, -1, 2, -1, 3, -2, -2, 3, 3), (-1, -1, -1, -1, 2, 2, 1, -3
 
 
 def connected_sum(*words: tuple[int, ...]) -> str:
-    """The word of the connected sum of closed 4-braids, each on the last strand of the one before."""
+    """The word of the connected sum of closed 4-braids, one shared strand between neighbours."""
     letters = [
         letter + 3 * place if letter > 0 else letter - 3 * place
         for place, word in enumerate(words)
