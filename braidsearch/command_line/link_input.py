@@ -4,7 +4,9 @@ from __future__ import annotations
 
 import os
 import re
-from dataclasses import dataclass
+from collections.abc import Collection, Sequence
+from dataclasses import dataclass, field, replace
+from itertools import count
 from pathlib import Path
 from typing import TYPE_CHECKING
 
@@ -16,6 +18,7 @@ from braidsearch.words import Braid, format_word
 
 if TYPE_CHECKING:
     from braidsearch.diagrams import LinkDiagram
+    from braidsearch.diagrams.polygons import Polygon
     from braidsearch.weaving import Woven
 
 PREFIXES: dict[str, str] = {
@@ -48,16 +51,37 @@ _LONGEST_PATH = 100
 
 @dataclass(frozen=True)
 class Drawing:
-    """A link as it was drawn: its notation, its diagram, and what the notation leaves open."""
+    """A link as it was drawn: its notation, its diagram, and what the notation leaves open.
+
+    ``order`` has the number in the diagram, from 0, of every component as the input numbers them,
+    and is empty where these are the same. Polygons are kept beside the diagram, which forgets the
+    place in the file of one that has no crossings; ``seed`` is the one they were drawn with.
+    """
 
     notation: str
     diagram: LinkDiagram
-    notes: tuple[str, ...]
+    notes: tuple[str, ...] = ()
+    order: tuple[int, ...] = ()
+    polygons: tuple[Polygon, ...] = field(default=(), compare=False, repr=False)
+    seed: int = 0
 
     @property
     def title(self) -> str:
         """The notation in words, with the size of the diagram."""
         return f"{TITLES[self.notation]}, {count_of(len(self.diagram.crossings), 'crossing')}"
+
+    def reversed_components(self, components: Collection[int]) -> Drawing:
+        """The drawing with some components turned around, which are numbered from 0.
+
+        Polygons count as they stand in the file; components of a braid word by their strands from
+        the left; those of a code in its order, of a planar diagram code by their least labels, and
+        then those without crossings.
+        """
+        if not self.polygons:
+            chosen = [self.order[k] if self.order else k for k in components]
+            return replace(self, diagram=self.diagram.reversed_components(chosen))
+        turned = [p[::-1] if k in components else p for k, p in enumerate(self.polygons)]
+        return _draw_polygons(turned, self.seed)
 
 
 def read_link_argument(name: str, text: str) -> Braid:
@@ -69,7 +93,7 @@ def read_link_argument(name: str, text: str) -> Braid:
     if drawing is None:
         return read_undrawn_argument(name, text)
     woven = weave_drawing(drawing)
-    print_error(f"{name}: woven from {drawing.title}: {format_word(woven.braid)}")
+    print_error(f"{name}: woven from its {drawing.title}: {format_word(woven.braid)}")
     for note in woven.notes:
         print_error(f"{name}: note: {note}")
     return woven.braid
@@ -107,12 +131,28 @@ def read_drawing(name: str, text: str, seed: int = 0) -> Drawing | None:
     notation = PREFIXES[match[1].lower()]
     try:
         if notation == "polygon":
-            return Drawing(notation, _read_polygons(match[2].strip(), seed), ())
+            return _draw_polygons(_read_polygons(match[2].strip()), seed)
         from braidsearch.diagrams.codes import parse_code  # noqa: PLC0415 - words come faster
 
         return Drawing(notation, *parse_code(notation, _text_of(match[2].strip())))
     except InputError as error:
         raise InputError(f"{name}: {error}") from None
+
+
+def draw_closed_braid(braid: Braid) -> Drawing:
+    """The drawing of a closed braid."""
+    from braidsearch.diagrams import closed_braid_diagram  # noqa: PLC0415 - words come faster
+
+    diagram = closed_braid_diagram(braid)
+    arcs: dict[int, int] = {}  # the last one at each place from the left: the closure takes it up
+    for number, letter in enumerate(braid.word):
+        arcs |= {abs(letter) - 1: 2 * number, abs(letter): 2 * number + 1}
+    circles = count(len(diagram.components))
+    order = (
+        diagram.component_of_arc[arcs[place]] if place in arcs else next(circles)
+        for place in range(braid.strands)
+    )
+    return Drawing("braid", diagram, order=tuple(dict.fromkeys(order)))
 
 
 def weave_drawing(drawing: Drawing) -> Woven:
@@ -130,16 +170,20 @@ def _hint_at_notations(text: str) -> str:
     return ""
 
 
-def _read_polygons(source: str, seed: int) -> LinkDiagram:
-    from braidsearch.diagrams.polygons import (  # noqa: PLC0415 - words come faster
-        parse_polygons,
-        polygon_diagram,
-    )
+def _read_polygons(source: str) -> list[Polygon]:
+    from braidsearch.diagrams.polygons import parse_polygons  # noqa: PLC0415 - words come faster
 
     if source in ("", "@"):
         raise InputError("polygon: expected the name of a file with rows x y z, or -")
     is_named = source == "-" or source.startswith("@")
-    return polygon_diagram(parse_polygons(_text_of(source if is_named else f"@{source}")), seed)
+    return parse_polygons(_text_of(source if is_named else f"@{source}"))
+
+
+def _draw_polygons(polygons: Sequence[Polygon], seed: int) -> Drawing:
+    from braidsearch.diagrams.polygons import polygon_diagram  # noqa: PLC0415 - words come faster
+
+    diagram = polygon_diagram(polygons, seed)
+    return Drawing("polygon", diagram, polygons=tuple(polygons), seed=seed)
 
 
 def _text_of(source: str) -> str:

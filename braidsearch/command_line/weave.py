@@ -14,6 +14,7 @@ from braidsearch.command_line.link_input import (
     INPUTS,
     PREFIXES,
     Drawing,
+    draw_closed_braid,
     read_drawing,
     read_undrawn_argument,
     weave_drawing,
@@ -31,8 +32,10 @@ itself against those of the braid.
 
 {INPUTS}
 
-The components are numbered in the order of the input; --reverse turns some of them around, which no
-braid word can say. --code writes the diagram of the closed braid in another notation."""
+--reverse turns components around, which no braid word can say. They are numbered from 1 in the
+order of the input: polygons as in the file; in a braid word by strands, from the left; in a planar
+diagram code by their least labels; in codes those without crossings last. --code writes the diagram
+of the closed braid in another notation."""
 
 _EXAMPLES = """  braidsearch weave "pd: [[1,5,2,4],[3,1,4,6],[5,3,6,2]]"
   braidsearch weave "gauss: O1+ U2+ O3+ U1+ O2+ U3+" --code dt
@@ -84,10 +87,7 @@ def _read(text: str, seed: int) -> Drawing:
     drawing = read_drawing("LINK", text, seed)
     if drawing is not None:
         return drawing
-    from braidsearch.diagrams import closed_braid_diagram  # noqa: PLC0415 - help comes faster
-
-    braid = read_undrawn_argument("LINK", text)
-    return Drawing("braid", closed_braid_diagram(braid), ())
+    return draw_closed_braid(read_undrawn_argument("LINK", text))
 
 
 def _reversed(drawing: Drawing, values: Sequence[str]) -> Drawing:
@@ -95,7 +95,7 @@ def _reversed(drawing: Drawing, values: Sequence[str]) -> Drawing:
     numbers = [_read_number(part, drawing.diagram) for value in values for part in value.split(",")]
     if not numbers:
         return drawing
-    return replace(drawing, diagram=drawing.diagram.reversed_components(n - 1 for n in numbers))
+    return drawing.reversed_components({number - 1 for number in numbers})
 
 
 def _read_number(text: str, diagram: LinkDiagram) -> int:
