@@ -12,6 +12,19 @@ KnotInfo):
    pair is compared up to reversal.
 
 The pairs that are not proven different are printed by name.
+
+Measured on two cores that others used too:
+
+    107 groups of 223 knots share all polynomials
+    up to all symmetries: 126 pairs compared in 1.4 minutes
+      different 126, not proven different 0
+      seconds       median 1.09, nine in ten 1.48, at most 4.41
+      verification  median 0.15, nine in ten 0.26, at most 0.53
+    8859552 pairs, of which 8859183 differ in HOMFLY-PT polynomials
+    equal HOMFLY-PT: 369 pairs compared in 3.0 minutes
+      different 369, not proven different 0
+      seconds       median 0.86, nine in ten 1.20, at most 1.91
+      verification  median 0.06, nine in ten 0.15, at most 0.50
 """
 
 import argparse
