@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from argparse import Namespace
 from collections.abc import Sequence
 from dataclasses import replace
@@ -42,6 +43,7 @@ _EXAMPLES = """  braidsearch weave "pd: [[1,5,2,4],[3,1,4,6],[5,3,6,2]]"
   braidsearch weave "polygon: ring.xyz" --json
   braidsearch weave "1 1" --reverse 2"""
 
+_LONGEST_NUMBER = 40
 _CODES = tuple(prefix for prefix in PREFIXES if prefix != "polygon")
 
 
@@ -100,10 +102,11 @@ def _reversed(drawing: Drawing, values: Sequence[str]) -> Drawing:
 
 def _read_number(text: str, diagram: LinkDiagram) -> int:
     count = diagram.component_count
-    if not text.strip().isdecimal() or not 1 <= int(text) <= count:
-        expected = f"the number of a component, 1 to {count}"
-        raise InputError(f"--reverse: {text.strip()!r}: expected {expected}")
-    return int(text)
+    plain = text.strip()
+    if not re.fullmatch(r"[0-9]{1,9}", plain) or not 1 <= int(plain) <= count:
+        shown = plain if len(plain) <= _LONGEST_NUMBER else plain[: _LONGEST_NUMBER - 3] + "..."
+        raise InputError(f"--reverse: {shown!r}: expected the number of a component, 1 to {count}")
+    return int(plain)
 
 
 def _written(woven: Woven, prefix: str) -> tuple[Woven, str]:
