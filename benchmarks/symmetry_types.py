@@ -7,6 +7,18 @@ questions of ``find_symmetries`` are asked of its first braid word, and the type
 beside the column ``symmetry_type``: reversible (the reverse alone is the same knot), chiral (no
 image is), fully, positive and negative amphicheiral. An answer counts only with a certificate
 that the verifier accepts.
+
+Measured on two cores, of which others took two fifths:
+
+    2977 knots in 43.8 minutes
+    symmetry_type             knots  agree   open  against
+    reversible                 1580   1580      0        0
+    chiral                     1319   1319      0        0
+    fully amphicheiral           30     30      0        0
+    positive amphicheiral         1      1      0        0
+    negative amphicheiral        47     47      0        0
+      seconds       median 0.47, nine in ten 4.06, at most 36.67
+      verification  median 0.01, nine in ten 0.16, at most 12.52
 """
 
 import argparse
