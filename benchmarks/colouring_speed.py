@@ -24,7 +24,7 @@ from braidsearch.invariants.colourings import (
     group_ladder,
 )
 from braidsearch.invariants.colourings.class_tables import class_tables
-from braidsearch.invariants.colourings.plans import colouring_plan
+from braidsearch.invariants.colourings.planning import colouring_plan
 from braidsearch.words import Braid
 from tests.knot_tables import iter_knots
 

@@ -20,7 +20,8 @@ from braidsearch.invariants.colourings.class_tables import (
 from braidsearch.invariants.colourings.classes import class_sizes
 from braidsearch.invariants.colourings.colours import Colours
 from braidsearch.invariants.colourings.permutations import from_images, order
-from braidsearch.invariants.colourings.plans import Plan, colouring_plan
+from braidsearch.invariants.colourings.planning import colouring_plan
+from braidsearch.invariants.colourings.plans import Plan
 from braidsearch.words.braid import Braid
 
 LARGEST_COST = 1_000.0

@@ -4,7 +4,8 @@ import pytest
 from hypothesis import given, settings
 
 from braidsearch.invariants.colourings.arcs import arc_diagram
-from braidsearch.invariants.colourings.plans import StepKind, colouring_plan
+from braidsearch.invariants.colourings.planning import colouring_plan
+from braidsearch.invariants.colourings.plans import StepKind
 from braidsearch.words import Braid
 from tests.knot_tables import iter_knots
 from tests.strategies import braids
