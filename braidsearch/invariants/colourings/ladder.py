@@ -7,11 +7,14 @@ asked by itself. Of classes that an automorphism of the group takes into each ot
 kept, since their colourings correspond; of a class and that of its inverses one, since colourings
 by the one are the colourings of the reversed link by the other. Nothing here knows any link.
 
-To tell a link from its reverse a group is needed in which no automorphism inverts the meridian.
-Where a meridian acts on a field by a power of the Frobenius map that is not an involution, none
-does, since it would invert a generator of the cyclic quotient by the kernel of that action, on
-which automorphisms act trivially; in M11, whose automorphisms are inner, elements of order 8 and
-11 are not conjugate to their inverses.
+To tell a link from its reverse a group is needed in which no automorphism inverts the meridian
+and whatever commutes with it, as longitudes do. Where a meridian acts on a field by the Frobenius
+map and its order there is more than 2, none does: it would invert a generator of the cyclic
+quotient by the linear maps, on which automorphisms act trivially. All automorphisms of M11 are
+inner, and its elements of order 8 and 11 are not conjugate to their inverses; those of order 4
+are, but not together with the elements of order 8 whose squares they are. In Sz(8) elements of
+order 4 are not conjugate to their inverses, and its automorphisms beyond the inner ones have odd
+order, so they cannot trade two classes.
 """
 
 from __future__ import annotations
