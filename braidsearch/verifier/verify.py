@@ -20,7 +20,7 @@ from collections import Counter
 from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 from fractions import Fraction
-from itertools import combinations, compress, pairwise
+from itertools import chain, combinations, compress, pairwise
 from math import comb, factorial, gcd, isqrt
 from operator import eq
 from typing import Any, NamedTuple, NoReturn
@@ -1223,11 +1223,10 @@ def levine_tristram(braid: Braid, work: Work, order: int, power: int) -> list[in
     size = len(rows)
     width = 5 * size + 4
     modulus = (1 << width * order) - 1
-    cost = size * (size + sum(map(len, rows))) * (4 + width * order // 1000)
+    work.spend(size * size * (size + sum(map(len, rows))) * (4 + width * order // 1000) + 10)
     matrix = [[int(i == j) for j in range(size)] for i in range(size)]
     coefficients = [1]
     for k in range(1, size + 1):
-        work.spend(cost)
         columns = list(zip(*matrix, strict=True))
         matrix = []
         for row in rows:
@@ -1537,16 +1536,12 @@ def colouring(
     Conjugate colourings have the same list of classes, so each list counts all its colourings. The
     arcs of one component have colours of one class, so a seed beside one is tried in that only.
     """
-    degree = len(meridians[0])
-    if any(len(images) != degree for images in generators + meridians):
-        raise RejectedError("permutations of different degrees")
     palette = palette_of(generators, meridians, work)
     diagram = diagram_of(braid, work)
     seeds = choose_seeds(diagram, braid.strands, len(palette.elements), work)
     known = determined({seeds[0]}, diagram.relations, work)
     steps = steps_after(known, seeds[1:], diagram)
     counts: Counter[tuple[int, ...]] = Counter()
-    remembered: dict[tuple[int, bytes], bytes] = {}
     for kind, members in enumerate(palette.classes):
         fixed = dict.fromkeys(known, members[0])
         columns = {WEIGHT: [len(members)]}
@@ -1556,16 +1551,8 @@ def colouring(
             columns = {second.target: [orbit[0] for orbit in orbits]}
             columns[WEIGHT] = [len(members) * len(orbit) for orbit in orbits]
         for colours in solutions(fixed, columns, steps[1:], palette, work):
-            entries = []
-            for circuit in diagram.circuits:
-                pair = peripheral(circuit, colours, palette, work)
-                if pair not in remembered:
-                    centraliser = palette.centralisers[pair[0]]
-                    work.spend(6 * len(centraliser))
-                    remembered[pair] = min(conjugate(pair[1], g) for g in centraliser)
-                least = remembered[pair][:degree]
-                entries.append((pair[0] + 1, *(image + 1 for image in least)))
-            counts[sum(sorted(entries), ())] += colours[WEIGHT]
+            entries = sorted(entry_of(one, colours, palette, work) for one in diagram.circuits)
+            counts[tuple(chain.from_iterable(entries))] += colours[WEIGHT]
     return sorted([*entries, count] for entries, count in counts.items())
 
 
@@ -1574,7 +1561,8 @@ class Palette(NamedTuple):
 
     ``table[o][c]`` is the number of o^-1 c o, ``back[o][c]`` that of o c o^-1. ``carriers`` gives
     for each colour c an h such that h^-1 c h is the first of its class, the given meridian;
-    ``centralisers`` for each class the elements of the group that commute with that.
+    ``centralisers`` for each class the elements of the group that commute with that. ``entries``
+    remembers the entries of pairs (class, longitude beside its meridian).
     """
 
     elements: list[bytes]
@@ -1584,10 +1572,15 @@ class Palette(NamedTuple):
     back: list[list[int]]
     carriers: list[bytes]
     centralisers: list[list[bytes]]
+    degree: int
+    entries: dict[tuple[int, bytes], tuple[int, ...]]
 
 
 def palette_of(generators: list[list[int]], meridians: list[list[int]], work: Work) -> Palette:
     """The classes of the meridians in the group; raises RejectedError unless these are right."""
+    degree = len(meridians[0])
+    if any(len(images) != degree for images in generators + meridians):
+        raise RejectedError("permutations of different degrees")
     steps = [permutation(images) for images in generators]
     group = [UNIT]
     seen = {UNIT}
@@ -1627,7 +1620,8 @@ def palette_of(generators: list[list[int]], meridians: list[list[int]], work: Wo
     work.spend(10 * len(number) ** 2)
     table = [[number[conjugate(colour, over)] for colour in number] for over in number]
     back = [sorted(range(len(row)), key=row.__getitem__) for row in table]
-    return Palette(list(number), kinds, classes, table, back, carriers, centralisers)
+    colours = list(number)
+    return Palette(colours, kinds, classes, table, back, carriers, centralisers, degree, {})
 
 
 def permutation(images: list[int]) -> bytes:
@@ -1838,29 +1832,34 @@ def rows_of(fixed: dict[int, int], columns: dict[int, list[int]]) -> Iterator[di
         yield fixed | dict(zip(columns, row, strict=True))
 
 
-def peripheral(
+def entry_of(
     circuit: tuple[int, list[tuple[int, int, int]]],
     colours: dict[int, int],
     palette: Palette,
     work: Work,
-) -> tuple[int, bytes]:
-    """A component's class and longitude, conjugated such that its meridian is the given one.
+) -> tuple[int, ...]:
+    """A component's class and the least conjugate of its longitude, beside the class's meridian.
 
     The longitude is the product of the elements over the passings under, to the power of their
     signs, corrected by the meridian so that it does not link the component.
     """
     start, passings = circuit
-    work.spend(10 + 5 * len(passings))
+    work.spend(60 + 5 * len(passings) + palette.degree)
     longitude, own = UNIT, 0
     for over, sign, is_own in passings:
         element = palette.elements[colours[over]]
         longitude = longitude.translate(element if sign > 0 else inverted(element))
         own += sign * is_own
-    meridian = palette.elements[colours[start]]
+    colour = colours[start]
+    meridian = palette.elements[colour]
     for _ in range(abs(own)):
         longitude = longitude.translate(inverted(meridian) if own > 0 else meridian)
-    colour = colours[start]
-    return palette.kinds[colour], conjugate(longitude, palette.carriers[colour])
+    pair = palette.kinds[colour], conjugate(longitude, palette.carriers[colour])
+    if pair not in palette.entries:
+        work.spend(6 * len(palette.centralisers[pair[0]]))
+        least = min(conjugate(pair[1], g) for g in palette.centralisers[pair[0]])
+        palette.entries[pair] = (pair[0] + 1, *(i + 1 for i in least[: palette.degree]))
+    return palette.entries[pair]
 
 
 # Any of these, for the links that some of the components form.
