@@ -15,7 +15,11 @@ from braidsearch.certificates import (
 from braidsearch.command_line.answer import Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser
 from braidsearch.command_line.compare_report import report_verdict
-from braidsearch.command_line.link_input import is_standard_input, read_link_argument
+from braidsearch.command_line.link_input import (
+    WORD_OR_DRAWING,
+    is_standard_input,
+    read_link_argument,
+)
 from braidsearch.command_line.progress import progress_line
 from braidsearch.command_line.search_limits import add_limits, read_limits
 from braidsearch.errors import BraidsearchError, InputError
@@ -57,8 +61,8 @@ def answer(arguments: Sequence[str]) -> Answer:
 
 def _parser() -> CommandParser:
     parser = CommandParser("compare", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("left", "a braid word or a drawing")
-    parser.add_word("right", "a braid word or a drawing")
+    parser.add_word("left", WORD_OR_DRAWING)
+    parser.add_word("right", WORD_OR_DRAWING)
     parser.add_text(
         "--up-to",
         metavar="SYMMETRIES",

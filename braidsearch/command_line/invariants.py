@@ -9,7 +9,7 @@ from typing import Any
 from braidsearch.certificates.display import show_value
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser, read_seconds
-from braidsearch.command_line.link_input import read_link_argument
+from braidsearch.command_line.link_input import WORD_OR_DRAWING, read_link_argument
 from braidsearch.words import Braid
 
 _SECONDS = 60.0
@@ -27,7 +27,7 @@ _EXAMPLES = """  braidsearch invariants "1 1 1"
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for a word that cannot be read."""
     parser = CommandParser("invariants", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("word", "a braid word or a drawing")
+    parser.add_word("word", WORD_OR_DRAWING)
     parser.add_json()
     parser.add_number(
         "--seconds", read_seconds, "seconds or none", "leave out what would take longer each (60)"

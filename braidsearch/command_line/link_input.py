@@ -42,6 +42,9 @@ INPUTS = """A link is a braid word, or a drawing with its notation in front:
 (rows x y z, a blank line between components). A code may stand in a file, "pd: @FILE"; a lone -
 reads standard input, as in "pd: -"."""
 
+WORD_OR_DRAWING = 'a braid word, or a drawing: "pd: ...", "gauss: ...", "dt: ...", "polygon: FILE"'
+"""What the help of a command says of an argument that holds a link."""
+
 _PREFIX = re.compile(rf"\s*({'|'.join(PREFIXES)})\s*:(.*)", re.DOTALL | re.IGNORECASE)
 _OTHER_NAME = re.compile(r"\s*([^\W\d][^:\n]{0,39}?)\s*:")
 _DRAWN = re.compile(r"\[\s*\[|\bX\s*\[|\b[OU][0-9]+[+-]")

@@ -8,7 +8,7 @@ from typing import TYPE_CHECKING, Any
 from braidsearch.certificates.explanation import count_of, shown_word
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser
-from braidsearch.command_line.link_input import read_link_argument
+from braidsearch.command_line.link_input import WORD_OR_DRAWING, read_link_argument
 from braidsearch.words import Braid, cyclic_reduce, format_word, free_reduce
 
 if TYPE_CHECKING:
@@ -32,7 +32,7 @@ def answer(arguments: Sequence[str]) -> Answer:
     from braidsearch.normal_form.conjugacy import conjugacy_class  # noqa: PLC0415 - the same
 
     parser = CommandParser("normalise", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("word", "a braid word or a drawing")
+    parser.add_word("word", WORD_OR_DRAWING)
     parser.add_json()
     given = parser.read(arguments)
     braid = read_link_argument("WORD", given.word)

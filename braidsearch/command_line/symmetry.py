@@ -11,7 +11,7 @@ from braidsearch.certificates import check_destination, explain_certificate, wri
 from braidsearch.command_line.answer import Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser
 from braidsearch.command_line.compare import UNDECIDED, verdict_to_json
-from braidsearch.command_line.link_input import read_link_argument
+from braidsearch.command_line.link_input import WORD_OR_DRAWING, read_link_argument
 from braidsearch.command_line.progress import progress_line
 from braidsearch.command_line.search_limits import add_limits, read_limits
 from braidsearch.words import SYMMETRIES
@@ -71,7 +71,7 @@ def answer(arguments: Sequence[str]) -> Answer:
 
 def _parser() -> CommandParser:
     parser = CommandParser("symmetry", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("word", "a braid word or a drawing")
+    parser.add_word("word", WORD_OR_DRAWING)
     parser.add_text(
         "-o", "--output", metavar="FILE", explanation="certificate files, named after it"
     )

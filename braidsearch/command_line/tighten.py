@@ -15,7 +15,7 @@ from braidsearch.certificates import (
 from braidsearch.certificates.explanation import count_of
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser
-from braidsearch.command_line.link_input import read_link_argument
+from braidsearch.command_line.link_input import WORD_OR_DRAWING, read_link_argument
 from braidsearch.command_line.progress import progress_line
 from braidsearch.command_line.search_limits import add_limits, read_limits
 from braidsearch.words import Braid, format_word
@@ -38,7 +38,7 @@ _MOST_MOVES = 12
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read or written."""
     parser = CommandParser("tighten", _DESCRIPTION, _EXAMPLES)
-    parser.add_word("word", "a braid word or a drawing")
+    parser.add_word("word", WORD_OR_DRAWING)
     parser.add_text("-o", "--output", metavar="FILE", explanation="certificate file")
     parser.add_json()
     add_limits(parser)
