@@ -1813,7 +1813,7 @@ def solutions(
             found = [rows[o][colour] for o in columns[over]]
         else:
             found = [rows[o][c] for o, c in zip(columns[over], columns[one], strict=True)]
-            work.spend(len(found) // 2)
+            work.spend(len(found))
         work.spend(20 + len(found) // 4)
         if target not in columns and target not in fixed:
             columns[target] = found
@@ -1879,7 +1879,8 @@ def sublinks(
 
 def sublink(braid: Braid, numbers: list[int], kept: Sequence[int], work: Work) -> Braid:
     """The braid that the strands of some components form, cyclically reduced."""
-    row = [number in kept for number in numbers]
+    wanted = set(kept)
+    row = [number in wanted for number in numbers]
     work.spend(len(braid.word) * (6 + braid.strands // 20) + 4 * braid.strands)
     word = []
     for letter in braid.word:
