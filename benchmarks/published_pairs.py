@@ -7,26 +7,26 @@ to 11 crossings) has two columns of braid words; the knot table has rows with tw
 with two different words is compared as it stands. The rows that stay undecided, and those that
 differ, are written to DIR/published_pairs_open.txt: name, outcome, reason and both words.
 
-Measured on two shared cores, 60 s a row:
+Measured on two cores that others used too, 60 s a row:
 
     knots: 74
       same           48   64.86 %
-      different       0    0.00 %
-      undecided      26   35.14 %
-      seconds      median 0.62, nine in ten 2.73, at most 9.62
-      moves        median 45, nine in ten 83, at most 223
-      verification median 0.005, nine in ten 0.010, at most 0.025
+      different      26   35.14 %
+      undecided       0    0.00 %
+      seconds      median 0.85, nine in ten 3.33, at most 12.50
+      moves        median 45, nine in ten 88, at most 219
+      verification median 0.006, nine in ten 0.016, at most 0.038
     links: 2703
       same         2701   99.93 %
-      different       1    0.04 %
-      undecided       1    0.04 %
-      seconds      median 0.07, nine in ten 0.52, at most 5.56
-      moves        median 5, nine in ten 55, at most 223
-      verification median 0.001, nine in ten 0.005, at most 0.027
+      different       2    0.07 %
+      undecided       0    0.00 %
+      seconds      median 0.15, nine in ten 1.86, at most 18.69
+      moves        median 5, nine in ten 55, at most 281
+      verification median 0.001, nine in ten 0.011, at most 0.101
 
-All 26 knots that stay undecided, and the link L11n369{0,1}, are joined to the reverse: the second
-word is the reverse of the first (the table calls all these knots not invertible). The words of
-L10n99{0,0,0} are two links, told apart by the sums of linking numbers.
+The second word of the 26 knots, and of the link L11n369{0,1}, is the reverse of the first, told from
+it by colourings (the table calls all these knots not invertible). The words of L10n99{0,0,0} are two
+links, told apart by the sums of linking numbers.
 """
 
 import argparse
