@@ -24,9 +24,9 @@ Measured on two cores that others used too, 60 s a row:
       moves        median 5, nine in ten 55, at most 281
       verification median 0.001, nine in ten 0.011, at most 0.101
 
-The second word of the 26 knots, and of the link L11n369{0,1}, is the reverse of the first, told from
-it by colourings (the table calls all these knots not invertible). The words of L10n99{0,0,0} are two
-links, told apart by the sums of linking numbers.
+The second word of the 26 knots, and of the link L11n369{0,1}, is the reverse of the first, told
+from it by colourings (the table calls all these knots not invertible). The words of L10n99{0,0,0}
+are two links, told apart by the sums of linking numbers.
 """
 
 import argparse
