@@ -9,30 +9,30 @@ letters whose polynomials agree. With --direct the classification alone is asked
 and its moves are verified; otherwise the whole of ``compare`` is, for every 20th of the pairs alike
 and for all of those whose lists of classes differ.
 
-Measured with --processes 1 on a loaded machine, where a comparison had about two fifths of a core:
+Measured with --processes 1 --every 1 on a machine that others used too:
 
     210160 pairs among 3000 braids share every polynomial
     random pairs: 10000
-      same           55  milliseconds median 7.21, nine in ten 15.10, at most 21.75
-      different    9945  milliseconds median 18.92, nine in ten 66.43, at most 1964.95
+      same           55  milliseconds median 5.11, nine in ten 7.75, at most 13.66
+      different    9945  milliseconds median 1.02, nine in ten 8.67, at most 40.50
       undecided       0
-        6141  told apart by the number of components
-        2455  told apart by the linking numbers
-        1334  told apart by the Alexander polynomial
-          14  told apart by the Jones polynomial
-           1  told apart by the classification of closed 3-braids (Birman, Menasco, 1993)
-      median of all 18.76 milliseconds; moves median 3, nine in ten 5, at most 6
+          6141  told apart by the number of components
+          2455  told apart by the linking numbers
+          1334  told apart by the Alexander polynomial
+            14  told apart by the Jones polynomial
+             1  told apart by the classification of closed 3-braids (Birman, Menasco, 1993)
+      median of all 1.02 milliseconds; moves median 4, nine in ten 5, at most 6
     flype partners: 500
-      same          500  milliseconds median 11.90, nine in ten 26.00, at most 47.23
+      same          500  milliseconds median 7.48, nine in ten 11.51, at most 20.40
       different       0
       undecided       0
-      median of all 11.90 milliseconds; moves median 1, nine in ten 5, at most 5
-    pairs alike in every polynomial: 10515
-      same        10507  milliseconds median 1.98, nine in ten 6.91, at most 24.08
-      different       8  milliseconds median 16.11, nine in ten 21.21, at most 20.83
+      median of all 7.48 milliseconds; moves median 1, nine in ten 5, at most 6
+    pairs alike in every polynomial: 210160
+      same       210152  milliseconds median 1.28, nine in ten 5.82, at most 37.78
+      different       8  milliseconds median 3.28, nine in ten 15.74, at most 15.32
       undecided       0
-        8  told apart by the classification of closed 3-braids (Birman, Menasco, 1993)
-      median of all 1.98 milliseconds; moves median 2, nine in ten 5, at most 8
+             8  told apart by the classification of closed 3-braids (Birman, Menasco, 1993)
+      median of all 1.28 milliseconds; moves median 3, nine in ten 6, at most 8
 
 and with --direct:
 
