@@ -1337,7 +1337,7 @@ def diagonal_form(rows: list[dict[int, Polynomial]], prime: int, work: Work) -> 
     """
     rows, diagonal = [row for row in rows if row], []
     while rows:
-        work.spend(sum(map(len, rows)))
+        work.spend(4 * sum(map(len, rows)))
         places = ((len(row[j]), len(row), i, j) for i, row in enumerate(rows) for j in row)
         _, _, i, j = min(places)
         pivot = rows.pop(i)

@@ -23,7 +23,7 @@ from braidsearch.verifier import verify
 from braidsearch.words import Braid
 
 Permutation = tuple[int, ...]
-MAX_TUPLES = 2_000
+MAX_TUPLES = 5_000
 MAX_MINOR = 6
 
 
