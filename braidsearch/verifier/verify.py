@@ -237,11 +237,11 @@ def check_different(claim: Claim, work: Work) -> str:
             check_value(f"{where}: {side}", item, braid, stated, work)
         if item.left == item.right:
             raise RejectedError(f"{where}: the two values are equal")
-        names.append(item.parameters.get("invariant", item.invariant))
+        names.append(item.invariant)
     if not names:
         raise RejectedError("no distinction: nothing is shown to differ")
-    theorem = f"; {THREE_BRAID_THEOREM}" if "three-braid" in names else ""
-    names = [item.invariant for item in claim.distinctions]
+    used = (*names, *(item.parameters.get("invariant") for item in claim.distinctions))
+    theorem = f"; {THREE_BRAID_THEOREM}" if "three-braid" in used else ""
     return f"the values of {', '.join(names)} are as stated and differ{theorem}"
 
 
@@ -1452,8 +1452,10 @@ def iter_families(word: tuple[int, ...], half: int, work: Work) -> Iterator[list
             work.spend(10 + (product.bit_length() >> 6))
             if product == 0 or v in (-1, 0, 1) or product % v:
                 continue
-            both = total - 3 * e - v
-            square = both * both - 4 * (product // v)
+            both, other = total - 3 * e - v, product // v  # p + q and p q
+            if abs(other) > (half + 3) ** 2:
+                continue
+            square = both * both - 4 * other
             root = isqrt(max(square, 0))
             p, q = (both - root) // 2, (both + root) // 2
             if root * root == square and v < p < q and abs(v) + abs(p) + abs(q) <= half + 3:
