@@ -3,8 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Iterator
-from functools import partial
-from itertools import chain
+from functools import lru_cache, partial
 from math import comb
 from typing import TYPE_CHECKING
 
@@ -37,45 +36,53 @@ A complex-conjugate root has the same signature, so of each pair one is here.
 PRIMES: tuple[int, ...] = (2, 3, 5, 7, 11, 13)
 """The primes modulo which Alexander modules are compared."""
 
-_MOST_SUBLINKS = 120
+_MOST_SUBLINKS = 120  # of one number of components
+_MOST_COMPONENTS = 5  # of links on whose sublinks everything is asked: thirty at most
+_MOST_LETTERS = 80  # of either braid, for the same
 
 
 def finer_ladder(left: Braid, right: Braid) -> list[Invariant]:
     """The invariants with parameters that may tell these closures apart, cheapest first."""
+    components = len(left.component_cycles)
+    is_small = components <= _MOST_COMPONENTS and max(len(left), len(right)) <= _MOST_LETTERS
     steps = [
         (invariant.estimated_cost(left) + invariant.estimated_cost(right), place, invariant)
-        for place, invariant in enumerate(iter_finer(min(len(left.component_cycles), 64)))
+        for place, invariant in enumerate(iter_finer(components, is_small))
         if invariant.is_applicable(left) and invariant.is_applicable(right)
     ]
     steps.sort(key=lambda step: (max(step[0], NEGLIGIBLE_SECONDS), step[1]))
     return [invariant for _, _, invariant in steps]
 
 
-def iter_finer(components: int) -> Iterator[Invariant]:
-    """All of them, for links of so many components; where cost does not matter, in this order."""
+def iter_finer(components: int, is_small: bool = True) -> Iterator[Invariant]:
+    """All of them, for links of so many components; where cost does not matter, in this order.
+
+    Links that are not small are asked for the plain invariants of their sublinks alone.
+    """
     own = [*map(_levine_tristram, ROOTS_OF_UNITY), *map(_alexander_module, PRIMES)]
     colourings = list(map(_colouring, _group_ladder()))
-    for count in range(1, components):
-        if comb(components, count) <= _MOST_SUBLINKS:
-            certifying = (step for step in INVARIANTS if step.certifies)
-            yield from (
-                of_sublinks(step, count) for step in certifying if step.name != "components"
-            )
+    plain = [step for step in INVARIANTS if step.certifies and step.name != "components"]
+    yield from _on_sublinks(plain, components)
     yield from own
     yield from colourings
+    if is_small:
+        yield from _on_sublinks([*own, *colourings], components)
+
+
+def _on_sublinks(steps: list[Invariant], components: int) -> Iterator[Invariant]:
     for count in range(1, components):
         if comb(components, count) <= _MOST_SUBLINKS:
-            yield from (of_sublinks(step, count) for step in chain(own, colourings))
+            yield from (of_sublinks(step, count) for step in steps)
 
 
 def of_sublinks(invariant: Invariant, components: int) -> Invariant:
     """The values of an invariant for all sublinks of so many components."""
 
     def total(cost: Callable[[Braid], float]) -> Callable[[Braid], float]:
-        return lambda braid: sum(map(cost, sublinks.iter_sublinks(braid, components)))
+        return lambda braid: sum(map(cost, _sublinks(braid, components)))
 
     def is_applicable(braid: Braid) -> bool:
-        return all(map(invariant.is_applicable, sublinks.iter_sublinks(braid, components)))
+        return all(map(invariant.is_applicable, _sublinks(braid, components)))
 
     checked = invariant.verification_cost
     inner = (("invariant", invariant.name), *invariant.parameters)
@@ -89,6 +96,11 @@ def of_sublinks(invariant: Invariant, components: int) -> Invariant:
         parameters=(("components", components), *inner),
         verification_cost=None if checked is None else total(checked),
     )
+
+
+@lru_cache(maxsize=64)
+def _sublinks(braid: Braid, components: int) -> tuple[Braid, ...]:
+    return tuple(sublinks.iter_sublinks(braid, components))
 
 
 def _compute_of_sublinks(

@@ -8,6 +8,7 @@ from typing import TypeAlias
 
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.errors import CapacityError
+from braidsearch.invariants.finer import finer_ladder
 from braidsearch.invariants.table import NEGLIGIBLE_SECONDS, Invariant, Value, ladder
 from braidsearch.moves import Move
 from braidsearch.search.gate import judge
@@ -69,7 +70,7 @@ class Distinguisher:
         """
         left = left_route.current
         image = apply_symmetry(right_route.current, self.symmetry)
-        for cost, invariant in _with_verification(invariants(left, image), left, image):
+        for cost, invariant in _with_verification(invariants(left, image), left, image, budget):
             if invariant.key in self.agreed or cost > min(dearest, budget.seconds_left):
                 continue
             budget.tell(left.strands, "computing invariants")
@@ -77,6 +78,23 @@ class Distinguisher:
             if found is not None:
                 return found
         return None
+
+    def is_different(self, left: Braid, right: Braid, dearest: float, budget: Budget) -> bool:
+        """Whether a cheap invariant of these braids differs; nothing is proven or remembered."""
+        image = apply_symmetry(right, self.symmetry)
+        for invariants in (ladder, finer_ladder):
+            for cost, invariant in _with_verification(invariants(left, image), left, image, budget):
+                if invariant.key in self.agreed or cost > min(dearest, budget.seconds_left):
+                    continue
+                if self._values_differ(invariant, left, image):
+                    return True
+        return False
+
+    def _values_differ(self, invariant: Invariant, left: Braid, image: Braid) -> bool:
+        try:
+            return bool(self.values.value(invariant, left) != self.values.value(invariant, image))
+        except CapacityError:
+            return False
 
     def agreed_names(self) -> list[str]:
         """The names of the invariants found equal; how many of each that takes parameters."""
@@ -113,19 +131,18 @@ class Distinguisher:
 
 
 def _with_verification(
-    invariants: Iterable[Invariant], left: Braid, right: Braid
+    invariants: Iterable[Invariant], left: Braid, right: Braid, budget: Budget
 ) -> list[tuple[float, Invariant]]:
     """The invariants with what they cost, in seconds, the verifier's share included."""
-    costs = [
-        (
-            sum(
-                invariant.estimated_cost(braid) + verification_seconds(invariant, braid)
-                for braid in (left, right)
-            ),
-            invariant,
+    costs = []
+    for invariant in invariants:
+        if budget.is_out_of_time():
+            break
+        cost = sum(
+            invariant.estimated_cost(braid) + verification_seconds(invariant, braid)
+            for braid in (left, right)
         )
-        for invariant in invariants
-    ]
+        costs.append((cost, invariant))
     return sorted(costs, key=lambda pair: max(pair[0], NEGLIGIBLE_SECONDS))
 
 

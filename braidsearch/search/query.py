@@ -251,12 +251,9 @@ class Query:
         return None
 
     def _is_excluded(self, symmetry: str) -> bool:
-        handy = self._route(None), self._route("identity")
+        left, right = self._route(None).current, self._route("identity").current
         distinguisher = self.distinguishers[symmetry]
-        return any(
-            distinguisher.find(*handy, FAIR_SECONDS, self.budget, invariants) is not None
-            for invariants in (ladder, finer_ladder)
-        )
+        return distinguisher.is_different(left, right, FAIR_SECONDS, self.budget)
 
     def _image_certificate(self, moves: list[Move], symmetry: str) -> Certificate | None:
         certificate = self._certificate(moves, symmetry)

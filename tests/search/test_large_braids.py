@@ -92,3 +92,15 @@ def test_verification_costs_grow_with_the_word():
         assert costs == sorted(costs)
         assert costs[0] < costs[-1]
     assert verification_seconds(invariant_named("components"), Braid([1] * 50)) == 0
+
+
+@pytest.mark.parametrize(("strands", "letters"), [(30, 200), (25, 150)])
+def test_links_of_many_components_keep_to_their_time(strands, letters):
+    """Finer invariants of large links, and of their many sublinks, end with the time allowed."""
+    generator = random.Random(strands)
+    word = random_braid(generator, strands, letters)
+    other = Braid([*word.word[letters // 2 :], *word.word[: letters // 2], 1, -2, 1], strands)
+    start = time.monotonic()
+    verdict = compare(word, other, up_to=["mirror", "reverse"], limits=SearchLimits(seconds=2))
+    assert verdict.outcome in ("different", "undecided", "same")
+    assert time.monotonic() - start < 2 + SLACK

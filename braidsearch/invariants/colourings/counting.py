@@ -27,6 +27,7 @@ from braidsearch.words.braid import Braid
 LARGEST_COST = 1_000.0
 
 _NODES_AT_ONCE = 2_000_000
+_MOST_LEAVES = 2_000_000  # some seconds of them; links with many loose components have more
 _SECONDS_PER_STEP = 7e-8
 _SECONDS_PER_TABLE_PLACE = 3e-8
 _VERIFIER_SECONDS_PER_STEP = 1e-6
@@ -49,8 +50,8 @@ def count_colourings(braid: Braid, colours: Colours) -> list[list[int]]:
     M. Eisermann, Knot colouring polynomials, 2007). Automorphisms of the group are not divided
     out, for both sides of a comparison use the same group and the same meridians.
 
-    Raises CapacityError for colours that are too many for tables, and where ``estimated_cost``
-    exceeds LARGEST_COST.
+    Raises CapacityError for colours that are too many for tables, where ``estimated_cost`` exceeds
+    LARGEST_COST, and for more than two million colourings up to conjugation.
     """
     if estimated_cost(braid, colours) > LARGEST_COST:
         raise CapacityError(
@@ -117,10 +118,14 @@ def _iter_leaves(
     """The complete colourings up to conjugation, some at a time: entries and weights."""
     kernels = _kernels()
     walk = kernels.new_walk(plan.diagram.arcs, len(plan.steps), len(plan.diagram.components))
+    total = 0
     while walk.state[kernels.DEPTH] >= 0:
         walk.state[kernels.LEAVES] = 0
         kernels.walk_plan(tables.arrays, plan.arrays, walk, _NODES_AT_ONCE)
         leaves = int(walk.state[kernels.LEAVES])
+        total += leaves
+        if total > _MOST_LEAVES:
+            raise CapacityError(f"more than {_MOST_LEAVES} colourings: expected fewer to count")
         yield walk.leaf_entries[:leaves], walk.leaf_weights[:leaves]
 
 

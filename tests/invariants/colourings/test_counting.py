@@ -237,3 +237,15 @@ def test_parameters_are_what_a_certificate_holds():
         "meridians": [[2, 3, 4, 1]],
     }
     assert eval(repr(S4)) == S4
+
+
+def test_loose_components_have_too_many_colourings() -> None:
+    """Circles apart from each other take all colours: nine have 4^9 colourings by a class of four.
+
+    Beyond two million up to conjugation they are not counted.
+    """
+    colours = LADDER["AGL(1, 4), meridian of order 3"]
+    nine = count_colourings(Braid([], 9), colours)
+    assert sum(row[-1] for row in nine) == 4**9
+    with pytest.raises(CapacityError):
+        count_colourings(Braid([], 13), colours)
