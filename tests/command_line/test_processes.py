@@ -26,8 +26,8 @@ def connected_sum(*words: tuple[int, ...]) -> str:
     return " ".join(map(str, letters))
 
 
-SUMS = (connected_sum(*MUTANTS[:1] * 3), connected_sum(*MUTANTS[:1] * 2, MUTANTS[1]))
-"""Sums of mutants on ten strands: different, equal in every polynomial, and too large for groups
+SUMS = (connected_sum(*MUTANTS[:1] * 6), connected_sum(*MUTANTS[:1] * 5, MUTANTS[1]))
+"""Sums of mutants on nineteen strands: different, equal in every polynomial, and too large for groups
 in which they differ, so that a search between them runs until it is stopped."""
 
 ENDLESS = ("compare", *SUMS, "--seconds", "30", "--nodes", "none")
