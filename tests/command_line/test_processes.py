@@ -27,8 +27,8 @@ def connected_sum(*words: tuple[int, ...]) -> str:
 
 
 SUMS = (connected_sum(*MUTANTS[:1] * 6), connected_sum(*MUTANTS[:1] * 5, MUTANTS[1]))
-"""Sums of mutants on nineteen strands: different, equal in every polynomial, and too large for groups
-in which they differ, so that a search between them runs until it is stopped."""
+"""Sums of mutants on nineteen strands: different, equal in every polynomial, and too large for
+groups in which they differ, so that a search between them runs until it is stopped."""
 
 ENDLESS = ("compare", *SUMS, "--seconds", "30", "--nodes", "none")
 DECIDED = ("compare", "1 1 1", "-1 -1 -1")
