@@ -83,10 +83,14 @@ def test_a_step_is_a_step(invariant, parameters, strands, letters):
 @pytest.mark.slow
 @every_large_value
 def test_what_is_too_large_is_refused(invariant, parameters, strands, letters):
-    """The same with all the work that one file may cost: an answer in words, within two minutes."""
+    """The same with all the work that one file may cost: an answer in words, within two minutes.
+
+    What can be afforded after all is recomputed, and the made-up value is not it.
+    """
     word = random_word(random.Random(7), strands, letters)
     reason = rejected(strands, word, invariant, parameters)
-    assert "too large for this verifier" in reason or "conjugate" in reason
+    answers = ("too large for this verifier", "conjugate", "is not the recomputed one")
+    assert any(answer in reason for answer in answers), reason
 
 
 @pytest.mark.parametrize(
