@@ -13,19 +13,17 @@ from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser
 from braidsearch.command_line.link_input import (
     INPUTS,
-    PREFIXES,
-    Drawing,
-    draw_closed_braid,
     read_drawing,
     read_undrawn_argument,
-    weave_drawing,
 )
 from braidsearch.errors import InputError
 from braidsearch.words import format_word
+from braidsearch.words.link_notation import PREFIXES
 
 if TYPE_CHECKING:
     from braidsearch.diagrams import LinkDiagram
     from braidsearch.weaving import Woven
+    from braidsearch.weaving.drawings import Drawing
 
 _DESCRIPTION = f"""Print a closed braid for a link that is given as a drawing or as a curve in
 space, by Vogel's moves on the diagram, with what was checked: invariants computed on the drawing
@@ -53,6 +51,8 @@ def answer(arguments: Sequence[str]) -> Answer:
     if given.code is not None and given.code not in _CODES:
         raise InputError(f"--code: {given.code!r}: expected one of {', '.join(_CODES)}")
     drawing = _reversed(_read(given.link, _seed(given)), given.reverse or [])
+    from braidsearch.weaving.drawings import weave_drawing  # noqa: PLC0415 - help comes faster
+
     woven = weave_drawing(drawing)
     code = None
     if given.code is not None:
@@ -89,7 +89,10 @@ def _read(text: str, seed: int) -> Drawing:
     drawing = read_drawing("LINK", text, seed)
     if drawing is not None:
         return drawing
-    return draw_closed_braid(read_undrawn_argument("LINK", text))
+    braid = read_undrawn_argument("LINK", text)
+    from braidsearch.weaving.drawings import draw_closed_braid  # noqa: PLC0415 - help comes faster
+
+    return draw_closed_braid(braid)
 
 
 def _reversed(drawing: Drawing, values: Sequence[str]) -> Drawing:
