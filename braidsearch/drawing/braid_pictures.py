@@ -196,7 +196,7 @@ def _piece_part(
 ) -> Part:
     """Some levels of the braid, with its hairlines and numbers, as one of several parts."""
     number, count = numbering
-    geometry = braid_geometry(braid, levels, components)
+    geometry = braid_geometry(braid, levels, components, is_end=number == count - 1)
     last = (braid.strands - 1) * STRAND_SPACING
     right = max(MARGIN, _LETTER_ROOM if options.has_letters else 0.0)
     frame = (-MARGIN, -_NUMBER_ROOM, last + right, length_of(levels) + MARGIN)
@@ -259,7 +259,7 @@ def _letters(placed: Geometry, options: Options) -> list[Text]:
         return []
     texts = []
     for crossing in placed.crossings:
-        x, y = crossing.centre
+        x, y = crossing.meeting
         content = str(crossing.letter).replace("-", "\N{MINUS SIGN}")
         if options.is_downwards:
             texts.append(Text((x + 9.5, y + 3.4), content, 9.5))
@@ -278,7 +278,8 @@ def _boxes(geometry: Geometry, options: Options, place: Callable[[Point], Point]
         if centres:
             across, along = [x for x, _ in centres], [y for _, y in centres]
             side, end = STRAND_SPACING / 2 + 7.0, LEVEL_HEIGHT / 2 - 1.5
-            bounds = (min(across) - side, min(along) - end, max(across) + side, max(along) + end)
+            outer = side + (8.0 if options.has_letters else 0.0)
+            bounds = (min(across) - side, min(along) - end, max(across) + outer, max(along) + end)
             boxes.append(Box(map_rectangle(bounds, place), mark.is_frame))
     return boxes
 

@@ -54,6 +54,10 @@ class Cubic:
         middle = _between(abc, bcd, time)
         return Cubic(a, ab, abc, middle), Cubic(middle, bcd, cd, d)
 
+    def backwards(self) -> Cubic:
+        """The same curve from its end to its start."""
+        return Cubic(self.end, self.second_control, self.first_control, self.start)
+
     def mapped(self, place: Callable[[Point], Point]) -> Cubic:
         """The curve with each control point moved; for an affine map this moves the curve."""
         return Cubic(*(place(point) for point in self.points))

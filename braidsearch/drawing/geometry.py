@@ -10,8 +10,9 @@ counterclockwise, which makes the crossing right-handed.
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterator, Sequence
+from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass, replace
+from itertools import pairwise
 
 from braidsearch.drawing.curves import Cubic, Point, quarter, straight
 from braidsearch.drawing.levels import Level
@@ -19,7 +20,7 @@ from braidsearch.words import Braid
 
 STRAND_SPACING = 24.0
 LEVEL_HEIGHT = 36.0
-LEAD = 14.0
+LEAD = 16.0
 """How far strands run straight before the first level and after the last."""
 
 STROKE = 3.6
@@ -32,19 +33,23 @@ CLOSING_GAP = 34.0
 _NARROW_RETURN = 14.0
 _MOST_WIDE_RETURNS = 6
 _STEEPNESS = 0.4  # of the level's height, to the control points: crossings at right angles
-_SHORTEST_FOR_ARROW = 8.0
+_SLANT = 1.15  # between levels, against the straight line: the strand sways least
+
+ARROW_LENGTH = 11.0
 
 
 @dataclass(frozen=True, slots=True)
 class Segment:
     """A piece of a strand: between levels, or through one crossing.
 
-    ``crossing`` is the number of the letter from 0, None where there is none.
+    ``crossing`` is the number of the letter from 0, None where there is none; ``time`` is when the
+    two strands of the crossing meet, the same on both.
     """
 
     cubic: Cubic
     crossing: int | None = None
     is_over: bool = True
+    time: float = 0.5
 
 
 @dataclass(frozen=True, slots=True)
@@ -61,11 +66,15 @@ class Curve:
 
 @dataclass(frozen=True, slots=True)
 class CrossingPlace:
-    """The middle of a crossing, with the number of its letter from 0."""
+    """Where a letter stands: the middle of its cell in the level, and where its strands meet.
+
+    ``number`` counts the letters of the word from 0.
+    """
 
     number: int
     letter: int
     centre: Point
+    meeting: Point
 
 
 @dataclass(frozen=True, slots=True)
@@ -91,7 +100,7 @@ class Geometry:
         """The same moved by an affine map that keeps lengths."""
         return Geometry(
             tuple(_mapped_curve(curve, place) for curve in self.curves),
-            tuple(replace(each, centre=place(each.centre)) for each in self.crossings),
+            tuple(_mapped_place(crossing, place) for crossing in self.crossings),
             tuple(_mapped_arrow(arrow, place) for arrow in self.arrows),
             tuple(map(place, self.tops)),
             tuple(map(place, self.bottoms)),
@@ -118,21 +127,24 @@ def components_at_levels(braid: Braid, levels: Sequence[Level]) -> Iterator[list
     yield list(current)
 
 
-def braid_geometry(braid: Braid, levels: Sequence[Level], components: Sequence[int]) -> Geometry:
-    """The geometry of some consecutive levels; ``components`` are those at their top."""
+def braid_geometry(
+    braid: Braid, levels: Sequence[Level], components: Sequence[int], is_end: bool = True
+) -> Geometry:
+    """The geometry of some consecutive levels; ``components`` are those at their top.
+
+    Where the braid ends with them, every strand ends in an arrow head.
+    """
     strands, _ = _trace(braid, levels)
-    height = length_of(levels)
-    curves = tuple(
-        Curve(component, tuple(strand))
-        for component, strand in zip(components, strands, strict=True)
-    )
-    arrows = [
-        Arrow(curve.component, _shifted(curve.segments[-1].cubic.end, -LEAD / 2), (0.0, 1.0))
-        for curve in curves
-    ]
-    tops = tuple((position * STRAND_SPACING, 0.0) for position in range(braid.strands))
-    bottoms = tuple((x, height) for x, _ in tops)
-    return Geometry(curves, tuple(_iter_places(braid, levels)), tuple(arrows), tops, bottoms)
+    tops, bottoms = _ends(braid, levels)
+    curves, arrows = [], []
+    for component, strand in zip(components, strands, strict=True):
+        if is_end:
+            start, (x, height) = strand[-1].cubic.start, strand[-1].cubic.end
+            strand[-1] = Segment(straight(start, (x, height - 0.7 * ARROW_LENGTH)))
+            arrows.append(Arrow(component, (x, height - ARROW_LENGTH / 2), (0.0, 1.0)))
+        curves.append(Curve(component, tuple(strand)))
+    places = _places(braid, levels, curves)
+    return Geometry(tuple(curves), places, tuple(arrows), tops, bottoms)
 
 
 def closure_geometry(braid: Braid, levels: Sequence[Level]) -> Geometry:
@@ -148,10 +160,8 @@ def closure_geometry(braid: Braid, levels: Sequence[Level]) -> Geometry:
             segments += back
             arrows.append(Arrow(component, back[2].cubic.point_at(0.5), (0.0, -1.0)))
         curves.append(Curve(component, tuple(segments), is_closed=True))
-    tops = tuple((position * STRAND_SPACING, 0.0) for position in range(braid.strands))
-    bottoms = tuple((x, height) for x, _ in tops)
-    places = tuple(_iter_places(braid, levels))
-    return Geometry(tuple(curves), places, tuple(arrows), tops, bottoms)
+    places = _places(braid, levels, curves)
+    return Geometry(tuple(curves), places, tuple(arrows), *_ends(braid, levels))
 
 
 def length_of(levels: Sequence[Level]) -> float:
@@ -178,7 +188,7 @@ def visible_runs(curve: Curve) -> list[list[Cubic]]:
         if segment.is_over:
             runs[-1].append(segment.cubic)
             continue
-        before, after = _cut_open(segment.cubic)
+        before, after = _cut_open(segment)
         runs[-1].append(before)
         runs.append([after])
     if curve.is_closed and len(runs) > 1:
@@ -186,46 +196,107 @@ def visible_runs(curve: Curve) -> list[list[Cubic]]:
     return runs
 
 
-def _cut_open(cubic: Cubic) -> tuple[Cubic, Cubic]:
-    """The halves of a crossing's under-strand, each without its part near the middle."""
-    first, second = cubic.split(0.5)
-    backwards = Cubic(*first.points[::-1])
+def _cut_open(segment: Segment) -> tuple[Cubic, Cubic]:
+    """An under-strand before and after its crossing, each without its part near the crossing."""
+    first, second = segment.cubic.split(segment.time)
+    backwards = first.backwards()
     kept = backwards.split(backwards.time_of_length(GAP))[1]
-    return Cubic(*kept.points[::-1]), second.split(second.time_of_length(GAP))[1]
+    return kept.backwards(), second.split(second.time_of_length(GAP))[1]
+
+
+@dataclass(frozen=True, slots=True)
+class _Step:
+    """How a strand passes a level at a crossing: from one position to the one beside it."""
+
+    number: int
+    row: int
+    start: int
+    end: int
+    is_over: bool
+
+    def leads_on_to(self, following: _Step) -> bool:
+        """Whether the following step is on the next level and goes the same way."""
+        is_next = following.row == self.row + 1
+        return is_next and following.end - following.start == self.end - self.start
+
+
+def _walk(braid: Braid, levels: Sequence[Level]) -> tuple[list[list[_Step]], list[int]]:
+    """For each start position the steps of its strand, and the position where it ends."""
+    steps: list[list[_Step]] = [[] for _ in range(braid.strands)]
+    at = list(range(braid.strands))  # which strand is at each position
+    for row, level in enumerate(levels):
+        for number in level:
+            letter = braid.word[number]
+            left = abs(letter) - 1
+            right = left + 1
+            steps[at[left]].append(_Step(number, row, left, right, letter < 0))
+            steps[at[right]].append(_Step(number, row, right, left, letter > 0))
+            at[left], at[right] = at[right], at[left]
+    ends = [0] * braid.strands
+    for position, strand in enumerate(at):
+        ends[strand] = position
+    return steps, ends
 
 
 def _trace(braid: Braid, levels: Sequence[Level]) -> tuple[list[list[Segment]], list[int]]:
     """For each start position its segments down to the bottom, and the position where it ends."""
-    paths: list[list[Segment]] = [[] for _ in range(braid.strands)]
-    begun = [0.0] * braid.strands
-    at = list(range(braid.strands))  # which strand is at each position
-    for row, level in enumerate(levels):
-        top = LEAD + LEVEL_HEIGHT * row
-        for number in level:
-            letter = braid.word[number]
-            left = abs(letter) - 1
-            for side, other in ((0, 1), (1, 0)):
-                strand, x = at[left + side], (left + side) * STRAND_SPACING
-                if begun[strand] < top:
-                    paths[strand].append(Segment(straight((x, begun[strand]), (x, top))))
-                is_over = (side == 1) == (letter > 0)
-                cubic = _through((x, top), (left + other) * STRAND_SPACING)
-                paths[strand].append(Segment(cubic, number, is_over))
-                begun[strand] = top + LEVEL_HEIGHT
-            at[left], at[left + 1] = at[left + 1], at[left]
-    ends = [0] * braid.strands
-    for position, strand in enumerate(at):
-        x = position * STRAND_SPACING
-        paths[strand].append(Segment(straight((x, begun[strand]), (x, length_of(levels)))))
-        ends[strand] = position
+    steps, ends = _walk(braid, levels)
+    passages = [_passages(strand) for strand in steps]
+    meeting: dict[int, list[Cubic]] = {}
+    for strand, cubics in zip(steps, passages, strict=True):
+        for step, cubic in zip(strand, cubics, strict=True):
+            meeting.setdefault(step.number, []).append(cubic)
+    times = {number: _meeting_time(*cubics) for number, cubics in meeting.items()}
+    height = length_of(levels)
+    paths = []
+    for position, (strand, cubics) in enumerate(zip(steps, passages, strict=True)):
+        path: list[Segment] = []
+        at = (position * STRAND_SPACING, 0.0)
+        for step, cubic in zip(strand, cubics, strict=True):
+            if cubic.start != at:
+                path.append(Segment(straight(at, cubic.start)))
+            path.append(Segment(cubic, step.number, step.is_over, times[step.number]))
+            at = cubic.end
+        path.append(Segment(straight(at, (at[0], height))))
+        paths.append(path)
     return paths, ends
 
 
-def _through(start: Point, x: float) -> Cubic:
-    """A strand through one level, upright at both ends."""
-    top, bend = start[1], _STEEPNESS * LEVEL_HEIGHT
+def _passages(steps: Sequence[_Step]) -> list[Cubic]:
+    """The curve of each step: upright at its ends, or slanting where it leads on to the next."""
+    slants = [before.leads_on_to(after) for before, after in pairwise(steps)]
+    starts, ends = [False, *slants], [*slants, False]
+    return [_through(*step) for step in zip(steps, starts, ends, strict=False)]
+
+
+def _through(step: _Step, is_slanting_at_start: bool, is_slanting_at_end: bool) -> Cubic:
+    top, bend = LEAD + LEVEL_HEIGHT * step.row, _STEEPNESS * LEVEL_HEIGHT
     bottom = top + LEVEL_HEIGHT
-    return Cubic(start, (start[0], top + bend), (x, bottom - bend), (x, bottom))
+    start, end = step.start * STRAND_SPACING, step.end * STRAND_SPACING
+    slant = _SLANT * _STEEPNESS * (end - start)
+    return Cubic(
+        (start, top),
+        (start + slant * is_slanting_at_start, top + bend),
+        (end - slant * is_slanting_at_end, bottom - bend),
+        (end, bottom),
+    )
+
+
+def _meeting_time(first: Cubic, second: Cubic) -> float:
+    """The time at which both strands of a crossing are at the same place.
+
+    Both have the same heights at the same times, so it is the zero of the difference of their x.
+    Its four Bernstein coefficients change sign once, hence there is exactly one (the variation of
+    a Bernstein polynomial is at most that of its coefficients).
+    """
+    a, b, c, d = (p[0] - q[0] for p, q in zip(first.points, second.points, strict=True))
+    low, high = 0.0, 1.0
+    for _ in range(40):
+        middle = (low + high) / 2
+        rest = 1 - middle
+        value = (a * rest + 3 * b * middle) * rest**2 + (3 * c * rest + d * middle) * middle**2
+        low, high = (middle, high) if (value > 0) == (a > 0) else (low, middle)
+    return (low + high) / 2
 
 
 def _closing_segments(position: int, strands: int, height: float) -> list[Segment]:
@@ -244,12 +315,29 @@ def _closing_segments(position: int, strands: int, height: float) -> list[Segmen
     return [Segment(cubic) for cubic in cubics]
 
 
-def _iter_places(braid: Braid, levels: Sequence[Level]) -> Iterator[CrossingPlace]:
-    for row, level in enumerate(levels):
-        middle = LEAD + LEVEL_HEIGHT * (row + 0.5)
-        for number in level:
-            letter = braid.word[number]
-            yield CrossingPlace(number, letter, ((abs(letter) - 0.5) * STRAND_SPACING, middle))
+def _ends(braid: Braid, levels: Sequence[Level]) -> tuple[tuple[Point, ...], tuple[Point, ...]]:
+    tops = tuple((position * STRAND_SPACING, 0.0) for position in range(braid.strands))
+    return tops, tuple((x, length_of(levels)) for x, _ in tops)
+
+
+def _places(
+    braid: Braid, levels: Sequence[Level], curves: Iterable[Curve]
+) -> tuple[CrossingPlace, ...]:
+    meetings = {
+        segment.crossing: segment.cubic.point_at(segment.time)
+        for curve in curves
+        for segment in curve.segments
+        if segment.crossing is not None
+    }
+    return tuple(
+        CrossingPlace(number, braid.word[number], _cell(braid.word[number], row), meetings[number])
+        for row, level in enumerate(levels)
+        for number in level
+    )
+
+
+def _cell(letter: int, row: int) -> Point:
+    return (abs(letter) - 0.5) * STRAND_SPACING, LEAD + LEVEL_HEIGHT * (row + 0.5)
 
 
 def _mapped_curve(curve: Curve, place: Callable[[Point], Point]) -> Curve:
@@ -257,10 +345,10 @@ def _mapped_curve(curve: Curve, place: Callable[[Point], Point]) -> Curve:
     return replace(curve, segments=tuple(segments))
 
 
+def _mapped_place(crossing: CrossingPlace, place: Callable[[Point], Point]) -> CrossingPlace:
+    return replace(crossing, centre=place(crossing.centre), meeting=place(crossing.meeting))
+
+
 def _mapped_arrow(arrow: Arrow, place: Callable[[Point], Point]) -> Arrow:
     (x0, y0), (x1, y1) = place((0.0, 0.0)), place(arrow.direction)
     return replace(arrow, centre=place(arrow.centre), direction=(x1 - x0, y1 - y0))
-
-
-def _shifted(point: Point, down: float) -> Point:
-    return point[0], point[1] + down

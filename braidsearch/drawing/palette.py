@@ -12,7 +12,7 @@ HAIRLINE = "#9aa1ab"
 
 PAPER = "#ffffff"
 
-BAND = "#f6e3b0"
+BAND = "#fae9bd"
 """Soft, behind the part that a move acts on."""
 
 FRAME = "#b58a1f"

@@ -17,7 +17,7 @@ CAPITAL_HEIGHT = 0.74
 DESCENT = 0.22
 
 MARGIN = 12.0
-COMFORTABLE_WIDTH = 480.0
+COMFORTABLE_WIDTH = 520.0
 """A picture is broken into lines about so wide: on a screen of 360 pixels letters stay readable."""
 
 Rectangle = tuple[float, float, float, float]

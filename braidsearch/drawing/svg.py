@@ -7,14 +7,14 @@ from collections.abc import Iterable, Iterator, Sequence
 from html import escape
 
 from braidsearch.drawing.curves import Cubic, Point
-from braidsearch.drawing.geometry import STROKE, Arrow, Curve, visible_runs
+from braidsearch.drawing.geometry import ARROW_LENGTH, STROKE, Arrow, Curve, visible_runs
 from braidsearch.drawing.palette import BAND, FRAME, HAIRLINE, PAPER, look_of
 from braidsearch.drawing.sheet import Box, Line, Sheet, Text
 
 FONT = "ui-monospace, 'DejaVu Sans Mono', Menlo, Consolas, monospace"
 
 _INLAY = 1.3
-_ARROW_LENGTH, _ARROW_WIDTH, _ARROW_NOTCH = 10.0, 9.0, 2.6
+_ARROW_WIDTH, _ARROW_NOTCH = 10.0, 2.8
 
 
 def write_svg(sheet: Sheet) -> str:
@@ -141,10 +141,10 @@ def _format_arrow(arrow: Arrow) -> str:
     """A head with a notch, its middle on the strand."""
     (x, y), (dx, dy) = arrow.centre, arrow.direction
     corners = (
-        (_ARROW_LENGTH / 2, 0.0),
-        (-_ARROW_LENGTH / 2, _ARROW_WIDTH / 2),
-        (_ARROW_NOTCH - _ARROW_LENGTH / 2, 0.0),
-        (-_ARROW_LENGTH / 2, -_ARROW_WIDTH / 2),
+        (ARROW_LENGTH / 2, 0.0),
+        (-ARROW_LENGTH / 2, _ARROW_WIDTH / 2),
+        (_ARROW_NOTCH - ARROW_LENGTH / 2, 0.0),
+        (-ARROW_LENGTH / 2, -_ARROW_WIDTH / 2),
     )
     points = [
         _format_point((x + along * dx - across * dy, y + along * dy + across * dx))
@@ -155,9 +155,9 @@ def _format_arrow(arrow: Arrow) -> str:
 
 def _format_text(text: Text) -> str:
     anchor = "" if text.anchor == "start" else f' text-anchor="{text.anchor}"'
-    x, y = map(format_number, text.place)
+    x, y, size = map(format_number, (*text.place, text.size))
     return (
-        f'<text x="{x}" y="{y}" font-size="{format_number(text.size)}" fill="{text.colour}"{anchor}>'
+        f'<text x="{x}" y="{y}" font-size="{size}" fill="{text.colour}"{anchor}>'
         f"{_escaped(text.content)}</text>"
     )
 
