@@ -16,10 +16,11 @@ from braidsearch.drawing.geometry import (
     closing_reach,
     closure_geometry,
     components_at_levels,
+    components_of_positions,
     length_of,
 )
 from braidsearch.drawing.levels import Level, arrange_levels, check_size
-from braidsearch.drawing.palette import HAIRLINE
+from braidsearch.drawing.palette import QUIET
 from braidsearch.drawing.sheet import (
     COMFORTABLE_WIDTH,
     MARGIN,
@@ -141,13 +142,18 @@ def describe_word(braid: Braid) -> str:
     return f"Word: {format_word(braid)}."
 
 
-def braid_part(braid: Braid, options: Options) -> Part:
-    """The braid on a page of its own, in as many parts as it takes."""
+def braid_part(braid: Braid, options: Options, components: Sequence[int] = ()) -> Part:
+    """The braid on a page of its own, in as many parts as it takes.
+
+    ``components`` are those of the start positions, as ``Braid.component_cycles`` has them where
+    none are given.
+    """
     levels = arrange_levels(braid.word, _edges(options.marks))
-    components = list(components_at_levels(braid, levels))
+    starts = components or components_of_positions(braid)
+    above = list(components_at_levels(braid, levels, starts))
     cuts = _cuts(len(levels), braid.strands, options)
     pieces = [
-        _piece_part(braid, levels[first:last], components[first], options, (number, len(cuts)))
+        _piece_part(braid, levels[first:last], above[first], options, (number, len(cuts)))
         for number, (first, last) in enumerate(cuts)
     ]
     return in_lines(pieces) if options.is_downwards else below(pieces)
@@ -210,7 +216,7 @@ def _piece_part(
 
 
 def _headed(part: Part, heading: str) -> Part:
-    text = Text((MARGIN / 2, 16.0), heading, 10.0, colour=HAIRLINE)
+    text = Text((MARGIN / 2, 16.0), heading, 10.0, colour=QUIET)
     return overlay([Part(text.width + MARGIN, 18.0, texts=(text,)), part.moved(0.0, 14.0)])
 
 

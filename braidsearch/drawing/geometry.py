@@ -116,9 +116,14 @@ def components_of_positions(braid: Braid) -> list[int]:
     return numbers
 
 
-def components_at_levels(braid: Braid, levels: Sequence[Level]) -> Iterator[list[int]]:
-    """For each level, and then for the end, the component at each position above it."""
-    current = components_of_positions(braid)
+def components_at_levels(
+    braid: Braid, levels: Sequence[Level], components: Sequence[int]
+) -> Iterator[list[int]]:
+    """For each level, and then for the end, the component at each position above it.
+
+    ``components`` are those of the start positions.
+    """
+    current = list(components)
     for level in levels:
         yield list(current)
         for number in level:

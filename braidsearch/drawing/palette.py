@@ -7,6 +7,9 @@ from dataclasses import dataclass
 INK = "#33383f"
 """Numbers, letters and captions."""
 
+QUIET = "#6b737e"
+"""Remarks beside the matter."""
+
 HAIRLINE = "#9aa1ab"
 """The lines on which strands begin and end."""
 
