@@ -1,6 +1,6 @@
 """Pictures of braids, of their closures and of proofs, as SVG."""
 
 from braidsearch.drawing.braid_pictures import DIRECTIONS, Mark, draw_braid, draw_closure
-from braidsearch.drawing.proof_sheets import draw_proof
+from braidsearch.drawing.proof_sheets import MOST_STAGES, draw_proof
 
-__all__ = ["DIRECTIONS", "Mark", "draw_braid", "draw_closure", "draw_proof"]
+__all__ = ["DIRECTIONS", "MOST_STAGES", "Mark", "draw_braid", "draw_closure", "draw_proof"]

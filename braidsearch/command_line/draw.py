@@ -1,0 +1,168 @@
+"""braidsearch draw LINK: the picture of a braid, of its closure, or of a proof."""
+
+from __future__ import annotations
+
+import os
+import re
+from argparse import Namespace
+from collections.abc import Sequence
+from pathlib import Path
+from typing import TYPE_CHECKING
+
+from braidsearch.certificates import check_destination, parse_certificate
+from braidsearch.command_line.answer import SUCCESS, Answer
+from braidsearch.command_line.arguments import CommandParser, read_standard_input
+from braidsearch.command_line.link_input import INPUTS, WORD_OR_DRAWING, read_link_argument
+from braidsearch.errors import CapacityError, InputError
+
+if TYPE_CHECKING:
+    from braidsearch.certificates import Certificate
+
+_DESCRIPTION = f"""Print a picture as SVG: of a braid, of its closure, or of all stages of the proof in
+a certificate, which is known by its content. Strands run downwards, or to the right; components
+differ in colour and in the pattern inside their strands; the word is kept in the description.
+
+{INPUTS}"""
+
+_EXAMPLES = """  braidsearch draw "1 -2 1 -2" --closure -o figure-eight.svg
+  braidsearch draw "4: 1 2 -1 2 3 2" --direction right --letters > braid.svg
+  braidsearch draw proof.json -o proof.svg
+  braidsearch compare "1 1 1" "1 2 1 2" -o - | braidsearch draw --proof - -o proof.svg"""
+
+_LONGEST_INPUT = 100_000_000
+_LONGEST_NUMBER = 9
+
+
+def answer(arguments: Sequence[str]) -> Answer:
+    """Carry out the command. Raises InputError for what cannot be read or written."""
+    given = _parser().read(arguments)
+    _check_choices(given)
+    if given.output not in (None, "-"):
+        _check_picture_destination(given.output)
+    picture = _picture(given)
+    if given.output in (None, "-"):
+        return Answer(SUCCESS, picture)
+    _write_picture(picture, given.output)
+    return Answer(SUCCESS, f"picture: {given.output}")
+
+
+def _parser() -> CommandParser:
+    parser = CommandParser("draw", _DESCRIPTION, _EXAMPLES)
+    parser.add_word("link", f"{WORD_OR_DRAWING}; or a certificate file")
+    for flag, explanation in (
+        ("--closure", "draw the closure of the braid"),
+        ("--proof", "LINK is a certificate (a file, or - for standard input)"),
+        ("--letters", "write each letter beside its crossing (proofs have them always)"),
+        ("--transparent", "without the white paper behind the picture"),
+    ):
+        parser.add_argument(flag, action="store_true", help=explanation)
+    parser.add_text(
+        "--direction",
+        metavar="WAY",
+        explanation="down or right: where strands run to (braids: down; proofs: right)",
+    )
+    parser.add_text(
+        "--stages", metavar="N", explanation="most stages of a proof that are shown (60), or all"
+    )
+    parser.add_text("-o", "--output", metavar="FILE", explanation="file for the picture")
+    return parser
+
+
+def _check_choices(given: Namespace) -> None:
+    if given.closure and given.proof:
+        raise InputError("--closure: expected no --proof beside it")
+    if given.direction not in (None, "down", "right"):
+        raise InputError(f"--direction: {given.direction!r}: expected down or right")
+    _read_stages(given.stages)
+
+
+def _read_stages(text: str | None) -> int | None:
+    """The most stages to show; None for all."""
+    from braidsearch.drawing import MOST_STAGES  # noqa: PLC0415 - help and mistakes come faster
+
+    if text is None or text == "all":
+        return MOST_STAGES if text is None else None
+    is_number = re.fullmatch(rf"[0-9]{{1,{_LONGEST_NUMBER}}}", text)
+    if not is_number or int(text) < 2:
+        raise InputError(f"--stages: {text[:40]!r}: expected an integer from 2 upwards, or all")
+    return int(text)
+
+
+def _picture(given: Namespace) -> str:
+    from braidsearch import drawing  # noqa: PLC0415 - help and mistakes come faster
+
+    certificate = _read_certificate(given)
+    if certificate is not None:
+        if given.closure:
+            raise InputError("--closure: expected a braid, since LINK is a certificate")
+        return drawing.draw_proof(
+            certificate,
+            direction=given.direction or "right",
+            most_stages=_read_stages(given.stages),
+            is_transparent=given.transparent,
+        )
+    if given.stages is not None:
+        raise InputError("--stages: expected a certificate, since it counts those of a proof")
+    braid = read_link_argument("LINK", given.link)
+    draw = drawing.draw_closure if given.closure else drawing.draw_braid
+    try:
+        return draw(
+            braid,
+            direction=given.direction or "down",
+            has_letters=given.letters,
+            is_transparent=given.transparent,
+        )
+    except CapacityError as error:
+        raise CapacityError(f"LINK: {error}") from None
+
+
+def _read_certificate(given: Namespace) -> Certificate | None:
+    """The certificate that LINK names, None where it is a link."""
+    name = given.link
+    if name == "-":
+        text = read_standard_input(_LONGEST_INPUT) if given.proof else ""
+    elif given.proof or os.path.isfile(name):
+        text = _read_file(name)
+    elif name.endswith(".json"):
+        raise InputError(f"LINK: {name!r}: expected an existing file")
+    else:
+        text = ""
+    if not given.proof and not text.lstrip().startswith("{"):
+        return None
+    try:
+        return parse_certificate(text)
+    except InputError as error:
+        raise InputError(f"LINK: {error}") from None
+
+
+def _read_file(name: str) -> str:
+    try:
+        return Path(name).read_text(encoding="utf-8-sig")
+    except OSError as error:
+        raise InputError(f"LINK: {name!r}: {error.strerror}: expected a file") from None
+    except ValueError:
+        raise InputError(f"LINK: {name!r}: expected a file of text in UTF-8") from None
+
+
+def _check_picture_destination(path: str) -> None:
+    try:
+        check_destination(path)
+    except InputError as error:  # its line speaks of a certificate
+        raise InputError(f"picture {str(error).removeprefix('certificate ')}") from None
+
+
+def _write_picture(picture: str, path: str) -> None:
+    """Write the file whole or not at all."""
+    target = os.path.realpath(path)
+    partial = f"{target}.{os.getpid()}.partial"
+    try:
+        if os.path.exists(target) and not os.path.isfile(target):
+            Path(target).write_text(picture + "\n", encoding="ascii")  # a pipe stays one
+            return
+        Path(partial).write_text(picture + "\n", encoding="ascii")
+        os.replace(partial, target)
+    except OSError as error:
+        raise InputError(f"picture {path!r} cannot be written: {error.strerror}") from None
+    finally:
+        if os.path.exists(partial):
+            os.unlink(partial)
