@@ -6,7 +6,7 @@ import operator
 from collections.abc import Iterable, Iterator
 from typing import Any
 
-from braidsearch.errors import InputError
+from braidsearch.errors import CapacityError, InputError
 
 MAX_LETTERS = 100_000
 MAX_STRANDS = 1_000
@@ -69,6 +69,15 @@ class Braid:
 
     def __repr__(self) -> str:
         return f"Braid({list(self.word)}, strands={self.strands})"
+
+    def _repr_svg_(self) -> str | None:
+        """The picture for a notebook; None for a braid that is too large for one."""
+        from braidsearch.drawing import draw_braid  # noqa: PLC0415 - upwards, see the test of imports
+
+        try:
+            return draw_braid(self)
+        except CapacityError:
+            return None
 
     def __len__(self) -> int:
         return len(self.word)

@@ -33,6 +33,13 @@ VERIFIER_IS_IMPORTED_BY = {
 }
 """The top-level ``verify``, the command, and the gate through which every verdict leaves."""
 
+NOTEBOOK_PICTURES = {"braidsearch.words.braid": {"braidsearch.drawing"}}
+"""The only imports upwards: a value that draws itself in a notebook asks for its picture.
+
+They stand inside methods named _repr_..._, which nothing but a notebook calls, so that nothing is
+loaded before.
+"""
+
 PROJECT = Path(__file__).parents[2]
 LOADED_WHERE_USED = {"networkx", "sympy", "numba"}
 LARGEST_FILE = 400
@@ -57,9 +64,26 @@ INNER = [name for name in MODULES if name != "braidsearch" and folder(name) != "
 @pytest.mark.parametrize("module", INNER)
 def test_imports_run_one_way(module: str) -> None:
     """Every import leads to the same folder or to a lower layer."""
-    for imported in own_imports(module) - {"braidsearch", *VERIFIER_IMPORTS}:
+    upwards = NOTEBOOK_PICTURES.get(module, set())
+    for imported in own_imports(module) - {"braidsearch", *VERIFIER_IMPORTS} - upwards:
         same_folder = folder(imported) == folder(module)
         assert same_folder or layer(imported) > layer(module), f"{module} imports {imported}"
+
+
+@pytest.mark.parametrize("module", NOTEBOOK_PICTURES)
+def test_pictures_are_fetched_by_notebooks_alone(module: str) -> None:
+    """What is imported upwards for a picture is imported in _repr_..._ methods and nowhere else."""
+    tree = parse(MODULES[module])
+    methods = [
+        node
+        for node in ast.walk(tree)
+        if isinstance(node, ast.FunctionDef) and re.fullmatch(r"_repr_[a-z]+_", node.name)
+    ]
+    inside = [name for method in methods for name in iter_imports(method)]
+    everywhere = list(iter_imports(tree))
+    for name in NOTEBOOK_PICTURES[module]:
+        assert inside.count(name) == everywhere.count(name) > 0
+        assert layer(name) < layer(module)
 
 
 VERIFIER_IMPORTS = {name for name in MODULES if folder(name) == "verifier"}
