@@ -1,0 +1,1 @@
+"""The ledger: a catalogue of links that keeps the evidence for every decision."""
