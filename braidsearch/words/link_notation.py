@@ -4,7 +4,6 @@ from __future__ import annotations
 
 import os
 import re
-from pathlib import Path
 
 from braidsearch.errors import InputError
 
@@ -19,6 +18,9 @@ PREFIXES: dict[str, str] = {
 WORD = "braid"
 """The notation of a braid word, which has nothing in front."""
 
+MAX_FILE = 100_000_000
+"""So many characters are read of a file that a drawing names."""
+
 _PREFIX = re.compile(rf"\s*({'|'.join(PREFIXES)})\s*:(.*)", re.DOTALL | re.IGNORECASE)
 _OTHER_NAME = re.compile(r"\s*([^\W\d][^:\n]{0,39}?)\s*:")
 _DRAWN = re.compile(r"\[\s*\[|\bX\s*\[|\b[OU][0-9]+[+-]")
@@ -30,6 +32,8 @@ def split_notation(text: str) -> tuple[str, str]:
 
     Raises InputError for a name before a colon that is no notation.
     """
+    if ":" not in text:
+        return WORD, text
     match = _PREFIX.match(text)
     if match is not None:
         return PREFIXES[match[1].lower()], match[2].strip()
@@ -57,14 +61,18 @@ def named_file(notation: str, body: str) -> str | None:
 
 
 def read_named_file(path: str | os.PathLike[str]) -> str:
-    """The text of a file that a drawing names. Raises InputError for what is no text in UTF-8."""
+    """The text of a file that a drawing names. Raises InputError where it has none in UTF-8."""
     shown = _shown_path(os.fspath(path))
     try:
-        return Path(path).read_text(encoding="utf-8-sig")
+        with open(path, encoding="utf-8-sig") as file:
+            text = file.read(MAX_FILE + 1)
     except OSError as error:
         raise InputError(f"{shown}: {error.strerror}: expected a file") from None
     except (UnicodeDecodeError, ValueError):
         raise InputError(f"{shown}: expected a file of text in UTF-8") from None
+    if len(text) > MAX_FILE:
+        raise InputError(f"{shown}: expected at most {MAX_FILE} characters")
+    return text
 
 
 def hint_at_notations(text: str) -> str:

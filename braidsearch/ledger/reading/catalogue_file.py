@@ -6,6 +6,7 @@ import os
 import re
 from collections.abc import Callable, Iterator
 from dataclasses import dataclass
+from functools import cached_property
 from io import TextIOWrapper
 from pathlib import Path
 from typing import BinaryIO, NamedTuple, cast
@@ -63,7 +64,7 @@ class CatalogueFile:
     ignore_columns: bool = False
     progress: Progress | None = None
 
-    @property
+    @cached_property
     def shown(self) -> str:
         """The path as quoted in a message: of a long one the end, which tells most."""
         text = os.fspath(self.path)
@@ -140,19 +141,20 @@ def make_row(
 ) -> Row | Problem:
     """The row with this text for its link, or what is wrong with it.
 
-    ``notation`` is the one that the place of the text says, None where a word or any drawing with
-    its notation in front may stand. A row without a name gets one later.
+    ``notation`` is the one that the place of the text says, WORD where a word or any drawing with
+    its notation in front may stand, None where a text with nothing in front is of the notation
+    of the file. A row without a name gets one later.
     """
-    beside = labels or Labels()
+    name, source, note, strands = map(str.strip, labels or Labels())
     try:
-        name = check_label(beside.name.strip(), "name")
-        source = check_label(beside.source.strip(), "source") or file.source
-        note = _check_note(beside.note.strip())
-        found, body = _split(file, text.strip(), notation, beside.strands.strip())
+        check_label(name, "name")
+        check_label(source, "source")
+        _check_note(note)
+        found, body = _split(file, text.strip(), notation, strands)
         body, named = _fetch(file, found, body)
     except InputError as error:
         return file.problem(line, error)
-    return Row(file.shown, line, name, source, note, found, body, named)
+    return Row(file.shown, line, name, source or file.source, note, found, body, named)
 
 
 def check_label(label: str, title: str) -> str:
@@ -164,22 +166,21 @@ def check_label(label: str, title: str) -> str:
     return label
 
 
-def _check_note(note: str) -> str:
+def _check_note(note: str) -> None:
     if len(note) > MAX_NOTE:
         raise InputError(f"note {shown(note)}: expected at most {MAX_NOTE} characters")
     if _NOT_IN_NOTES.search(note):
         raise InputError(f"note {shown(note)}: expected no control characters")
-    return note
 
 
 def _split(file: CatalogueFile, text: str, notation: str | None, strands: str) -> tuple[str, str]:
     """The notation of a text and what stands behind it."""
-    if notation is not None:
-        found, body = notation, _without_prefix(text, notation)
-    else:
+    if notation in (None, WORD):
         found, body = split_notation(text)
-        if found == WORD and file.notation is not None:
-            found = file.notation
+        if found == WORD:
+            found = notation or file.notation or WORD
+    else:
+        found, body = notation, _without_prefix(text, notation)
     if strands:
         body = _with_strands(found, body, strands)
     if not body:

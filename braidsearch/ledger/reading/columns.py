@@ -7,12 +7,12 @@ from collections.abc import Mapping, Sequence
 from braidsearch.errors import InputError
 from braidsearch.ledger.reading.catalogue_file import CatalogueFile, Labels, make_row
 from braidsearch.ledger.reading.values import Problem, Row, shown
-from braidsearch.words.link_notation import PREFIXES
+from braidsearch.words.link_notation import PREFIXES, WORD
 
 LABEL_COLUMNS = ("name", "source", "note")
 STRANDS = "strands"
-LINK_COLUMNS: dict[str, str | None] = {"link": None, "braid": None, "word": None, **PREFIXES}
-"""The columns for the link, each with the notation that it says, None for a word or any drawing."""
+LINK_COLUMNS: dict[str, str | None] = {"link": None, "braid": WORD, "word": WORD, **PREFIXES}
+"""The columns for the link, each with the notation that it says, None where the file says it."""
 
 KNOWN_COLUMNS = (*LABEL_COLUMNS, STRANDS, *LINK_COLUMNS)
 

@@ -20,7 +20,9 @@ from braidsearch.ledger.reading.values import (
 from braidsearch.words import MAX_LETTERS, Braid, parse_word
 from braidsearch.words.link_notation import WORD, hint_at_notations
 
-_PLAIN_LETTERS = re.compile(r"-?[1-9][0-9]{0,2}(?: -?[1-9][0-9]{0,2})*")
+_PLAIN_WORD = re.compile(
+    r"(?:([1-9][0-9]{0,2}): )?(\[)?(-?[1-9][0-9]{0,2}(?:(?: |, ?)-?[1-9][0-9]{0,2})*)(?(2)\])"
+)
 _DIGEST_SIZE = 16
 
 
@@ -108,10 +110,14 @@ def _read_drawing(row: Row) -> tuple[Braid, tuple[str, ...]]:
 
 
 def _read_word(text: str) -> Braid:
-    if _PLAIN_LETTERS.fullmatch(text) and len(text) < MAX_LETTERS:
-        # What most catalogues hold, ten times as fast as any notation is read.
-        letters = tuple(map(int, text.split(" ")))
-        return Braid.trusted(letters, max(map(abs, letters)) + 1)
+    """``parse_word``; what most catalogues hold is read here, ten times as fast."""
+    match = _PLAIN_WORD.fullmatch(text) if len(text) < MAX_LETTERS else None
+    if match is not None:
+        letters = tuple(map(int, match[3].replace(",", " ").split()))
+        needed = max(map(abs, letters)) + 1
+        strands = int(match[1] or needed)
+        if strands >= needed:
+            return Braid.trusted(letters, strands)
     try:
         return parse_word(text)
     except InputError as error:

@@ -19,6 +19,7 @@ from braidsearch.ledger.reading.columns import (
     row_of_columns,
 )
 from braidsearch.ledger.reading.values import Problem, Row, shown
+from braidsearch.words.link_notation import WORD
 
 _BLANK = re.compile(r"[ \t\r\n]*")
 _AN_OBJECT = 'an object such as {"name": "trefoil", "link": "1 1 1"}'
@@ -138,7 +139,8 @@ def _row_of_value(file: CatalogueFile, line: int, value: Any) -> Row | Problem:
             for column, key in columns.items()
             if column in LABEL_COLUMNS
         }
-        strands, values[link] = _link_texts(link, value[columns[link]])
+        notation = LINK_COLUMNS[link] or file.notation or WORD
+        strands, values[link] = _link_texts(link, notation, value[columns[link]])
         beside = _strands_text(value[columns[STRANDS]]) if STRANDS in columns else ""
         if strands and beside:
             raise InputError(f"{strands} strands and {beside} strands: expected the count once")
@@ -164,14 +166,13 @@ def _strands_text(value: Any) -> str:
     return str(value)
 
 
-def _link_texts(column: str, value: Any) -> tuple[str, str]:
+def _link_texts(column: str, notation: str, value: Any) -> tuple[str, str]:
     """The strand count, where the value holds one, and the link, as texts."""
     if isinstance(value, str):
         return "", value
-    notation = LINK_COLUMNS[column]
-    if notation is None and isinstance(value, dict) and set(value) == {STRANDS, "word"}:
+    if notation == WORD and isinstance(value, dict) and set(value) == {STRANDS, "word"}:
         return _strands_text(value[STRANDS]), _letters(column, value["word"])
-    if notation is None:
+    if notation == WORD:
         return "", _letters(column, value)
     if notation == "polygon" or not _is_integers(value, levels=2):
         kinds = "the name of a file" if notation == "polygon" else "a text, or lists of integers"
@@ -183,9 +184,9 @@ def _letters(column: str, value: Any) -> str:
     if not isinstance(value, list):
         expected = f'a text, a list of letters, or {{"{STRANDS}": 2, "word": [1, 1, 1]}}'
         raise InputError(f"{column} {_shown(value)}: expected {expected}")
-    for letter in value:
-        if not _is_integer(letter):
-            raise InputError(f"{column}: {_shown(letter)}: expected integers as letters")
+    if not set(map(type, value)) <= {int}:  # a bool is an int, and no letter
+        wrong = next(letter for letter in value if type(letter) is not int)
+        raise InputError(f"{column}: {_shown(wrong)}: expected integers as letters")
     return " ".join(map(str, value))
 
 
@@ -197,7 +198,7 @@ def _is_integers(value: Any, levels: int) -> bool:
 
 
 def _is_integer(value: Any) -> bool:
-    return isinstance(value, int) and not isinstance(value, bool)
+    return type(value) is int  # a bool is none
 
 
 def _shown(value: Any) -> str:

@@ -27,42 +27,54 @@ def iter_table_rows(file: CatalogueFile) -> Iterator[Row | Problem]:
     The delimiter is the one that makes the most known titles of that line. A table of columns x,
     y, z is one link in space. Raises InputError for columns that are none.
     """
+    csv.field_size_limit(max(csv.field_size_limit(), MAX_FIELD))
     lines = file.iter_lines(newline="")
-    skipped = 0
-    header = ""
+    blank = 0
     for header in lines:
         if header.strip():
             break
-        skipped += 1
+        blank += 1
+    else:
+        return
     delimiter = _choose_delimiter(header)
-    csv.field_size_limit(max(csv.field_size_limit(), MAX_FIELD))
-    records = _iter_records(chain([header], lines), delimiter)
-    first, titles = next(records, (1, []))
-    if isinstance(titles, str):
-        raise file.error(first + skipped, titles)
-    columns = [plain_column(title) for title in titles]
-    if columns == _COORDINATES:
+    records = _iter_records(chain([header], lines), delimiter, blank)
+    columns, link = _read_titles(file, *next(records))
+    if not link:
         yield polygon_row(file)
         return
-    try:
-        link = check_columns(columns, file.ignore_columns)
-    except InputError as error:
-        raise file.error(first + skipped, str(error)) from None
     for line, cells in records:
         if isinstance(cells, str):
-            yield file.problem(line + skipped, cells)
+            yield file.problem(line, cells)
         elif len(cells) != len(columns):
-            yield file.problem(line + skipped, _wrong_count(cells, columns, delimiter))
+            yield file.problem(line, _wrong_count(cells, columns, delimiter))
         elif any(map(str.strip, cells)):
             values = dict(zip(columns, cells, strict=True))
-            yield row_of_columns(file, line + skipped, link, values)
+            yield row_of_columns(file, line, link, values)
 
 
-def _iter_records(lines: Iterator[str], delimiter: str) -> Iterator[tuple[int, list[str] | str]]:
-    """The first line of each record, counted from 1, with its cells or what is wrong with it."""
+def _read_titles(file: CatalogueFile, line: int, titles: list[str] | str) -> tuple[list[str], str]:
+    """The columns, and which is that of the link; of none where they are coordinates."""
+    if isinstance(titles, str):
+        raise file.error(line, titles)
+    columns = [plain_column(title) for title in titles]
+    if columns == _COORDINATES:
+        return columns, ""
+    try:
+        return columns, check_columns(columns, file.ignore_columns)
+    except InputError as error:
+        raise file.error(line, str(error)) from None
+
+
+def _iter_records(
+    lines: Iterator[str], delimiter: str, before: int
+) -> Iterator[tuple[int, list[str] | str]]:
+    """The number of each record's first line, with its cells or what is wrong with it.
+
+    ``before`` so many lines stand in front. Records without any cell are left out.
+    """
     reader = csv.reader(lines, delimiter=delimiter, strict=True)
     while True:
-        line = reader.line_num + 1
+        line = before + reader.line_num + 1
         try:
             cells = next(reader)
         except StopIteration:
@@ -79,12 +91,15 @@ def _explain(reason: str) -> str:
         return "a quote that is left open: expected a closing one before the end of the file"
     if "field larger" in reason:
         return f"a cell of more than {MAX_FIELD} characters: expected a shorter one"
-    return f'{reason}: expected a cell in quotes to end with its quote, and "" for a quote in it'
+    return 'text behind a closing quote: expected a delimiter, and "" for a quote inside a cell'
 
 
 def _choose_delimiter(header: str) -> str:
     def known(delimiter: str) -> int:
-        cells = next(csv.reader([header], delimiter=delimiter), [])
+        try:
+            cells = next(csv.reader([header], delimiter=delimiter), [])
+        except csv.Error:  # read again with the others, and reported there
+            return 0
         return sum(plain_column(cell) in (*KNOWN_COLUMNS, *_COORDINATES) for cell in cells)
 
     return max(_DELIMITERS, key=known)
