@@ -14,7 +14,7 @@ from tests.architecture.source import FILES, MODULES, PACKAGE, folder, iter_impo
 LAYERS: tuple[frozenset[str], ...] = (
     frozenset({"__main__"}),
     frozenset({"command_line"}),
-    frozenset({"ledger", "drawing"}),
+    frozenset({"ledger", "drawing", "explaining"}),
     frozenset({"search"}),
     frozenset({"certificates", "arc_walk", "weaving"}),
     frozenset({"three_braids"}),

@@ -1,0 +1,90 @@
+"""Chains of moves written out in elementary steps, each of which is a move of a certificate again."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+
+from braidsearch.errors import CapacityError
+from braidsearch.moves.elementary_conjugation import Part, conjugate_parts
+from braidsearch.moves.elementary_relations import MAX_RELATIONS, Letters, apply_relation
+from braidsearch.moves.elementary_rewriting import rewrite_relations
+from braidsearch.moves.elementary_steps import (
+    CONJUGATION,
+    DESTABILIZATION,
+    STABILIZATION,
+    ElementaryStep,
+    step_of_relation,
+)
+from braidsearch.moves.markov import Conjugate, Move, Rewrite, Stabilize, stated_result
+from braidsearch.words import MAX_LETTERS, Braid
+
+Stage = tuple[ElementaryStep, Move]
+"""An elementary step, and the same step as a move, which states its result."""
+
+
+def expand_moves(start: Braid, moves: Iterable[Move]) -> list[Stage]:
+    """The moves, which the caller knows to be true, written out in elementary steps.
+
+    Every rewriting becomes single relations, every conjugation conjugations by one letter and
+    single relations; stages between which the chain comes back to the same word are left out.
+    Raises InputError where two words are not the same element, CapacityError for more steps than a
+    certificate can hold, or longer words.
+    """
+    stages: list[Stage] = []
+    braid = start
+    for number, move in enumerate(moves, 1):
+        stages += _expand_move(braid, move, number)
+        if len(stages) > 2 * MAX_RELATIONS:
+            break
+        braid = stated_result(braid, move)
+    stages = _without_loops(start, stages)
+    if len(stages) > MAX_RELATIONS:
+        raise CapacityError(
+            f"more than {MAX_RELATIONS} elementary steps: expected no more than a certificate holds"
+        )
+    return stages
+
+
+def _expand_move(braid: Braid, move: Move, number: int) -> list[Stage]:
+    word = braid.word
+    if isinstance(move, Rewrite):
+        return _stages(word, list(rewrite_relations(word, move.word)), number)
+    if isinstance(move, Conjugate):
+        parts = conjugate_parts(word, move.by, move.word, braid.strands)
+        return _stages(word, parts, number)
+    if isinstance(move, Stabilize):
+        step = ElementaryStep(STABILIZATION, len(word) + 1, (), move.word[-1:], number)
+    else:
+        step = ElementaryStep(DESTABILIZATION, len(word), word[-1:], (), number)
+    return [(step, move)]
+
+
+def _stages(word: Letters, parts: Iterable[Part], number: int) -> list[Stage]:
+    stages: list[Stage] = []
+    for part in parts:
+        move: Move
+        if isinstance(part, int):
+            word = (-part, *word, part)
+            step = ElementaryStep(CONJUGATION, 1, (), (-part, part), number)
+            move = Conjugate((part,), word)
+        else:
+            word = apply_relation(word, part)
+            step, move = step_of_relation(part, number), Rewrite(word)
+        if len(word) > MAX_LETTERS:
+            raise CapacityError(f"a word of {len(word)} letters: expected {MAX_LETTERS} at most")
+        stages.append((step, move))
+    return stages
+
+
+def _without_loops(start: Braid, stages: list[Stage]) -> list[Stage]:
+    """The chain without the parts that lead back to a braid where it has been."""
+    braids = [start]
+    for _, move in stages:
+        braids.append(stated_result(braids[-1], move))
+    last = {braid: place for place, braid in enumerate(braids)}
+    kept = []
+    place = last[start]
+    while place < len(stages):
+        kept.append(stages[place])
+        place = last[braids[place + 1]]
+    return kept
