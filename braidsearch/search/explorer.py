@@ -25,11 +25,20 @@ if TYPE_CHECKING:
     from braidsearch.search.walks import PresentationKey, Walker
 
 _EXTRA_STRANDS = 2
-_EXPANSIONS_FIRST = 6  # classes expanded on a side before its first walk
-_TURNS_AN_EXPANSION = 3  # after that, one turn in so many expands a class, the others walk
 _WALKS_A_TURN = 60
 _WALKS_A_NODE = 20  # fruitless walks that count as one node
 _WALK_COST, _EXPANSION_COST = 8, 3
+
+
+@dataclass(frozen=True, slots=True)
+class Pace:
+    """How a side divides its turns: classes expanded before its first walk, and turns for one more.
+
+    Walks cost little and stay on the fewest strands; expansions reach every neighbour.
+    """
+
+    expansions_first: int = 6
+    turns_an_expansion: int = 3
 
 
 @dataclass
@@ -68,6 +77,9 @@ class Side:
         heapq.heappush(self.waiting, (key[0], depth, len(self.met), key))
 
 
+DEFAULT_PACE = Pace()
+
+
 class Explorer:
     """One graph of classes, grown from one side or several within a budget.
 
@@ -75,8 +87,9 @@ class Explorer:
     walks over arc presentations.
     """
 
-    def __init__(self, budget: Budget, strands: int) -> None:
+    def __init__(self, budget: Budget, strands: int, pace: Pace = DEFAULT_PACE) -> None:
         self.budget = budget
+        self._pace = pace
         self.graph = ClassGraph()
         self._max_strands = budget.limits.max_strands or strands + _EXTRA_STRANDS
 
@@ -92,7 +105,8 @@ class Explorer:
         A turn may be given up at any time; what it left undone is taken up again.
         """
         side.turns += 1
-        is_walk = side.turns > _EXPANSIONS_FIRST and side.turns % _TURNS_AN_EXPANSION != 0
+        pace = self._pace
+        is_walk = side.turns > pace.expansions_first and side.turns % pace.turns_an_expansion != 0
         if side.waiting and not is_walk:
             return self._expand(side)
         return self._walk(side)

@@ -3,9 +3,11 @@
 from __future__ import annotations
 
 from functools import lru_cache
+from typing import Any
 
 from braidsearch.certificates import Certificate, format_certificate
-from braidsearch.verifier import Report, verify_text
+from braidsearch.verifier import Report, recompute, verify_text
+from braidsearch.words import Braid
 
 
 @lru_cache(maxsize=16)
@@ -21,3 +23,8 @@ def judge(certificate: Certificate) -> Report:
         left=(left.strands, left.word),
         right=(right.strands, right.word),
     )
+
+
+def is_confirmed(invariant: str, braid: Braid, value: Any) -> bool:
+    """Whether the verifier's own route gives the same value for the closure of the braid."""
+    return bool(recompute(invariant, braid.strands, braid.word) == value)

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from braidsearch.moves import Move, MoveChain
 from braidsearch.normal_form.conjugacy import ClassKey
-from braidsearch.search.explorer import Explorer, Side
+from braidsearch.search.explorer import DEFAULT_PACE, Explorer, Pace, Side
 from braidsearch.search.limits import Budget, Ending
 from braidsearch.search.route import Route
 
@@ -16,9 +16,11 @@ class Meeting:
     from either side, are nodes of one graph.
     """
 
-    def __init__(self, left: Route, right: Route, budget: Budget) -> None:
+    def __init__(
+        self, left: Route, right: Route, budget: Budget, pace: Pace = DEFAULT_PACE
+    ) -> None:
         self._budget = budget
-        self._explorer = Explorer(budget, max(left.start.strands, right.start.strands))
+        self._explorer = Explorer(budget, max(left.start.strands, right.start.strands), pace)
         self._left, self._right = self._explorer.begin(left), self._explorer.begin(right)
         self._middle: ClassKey | None = None
         if self._right.start.key in self._left.met:

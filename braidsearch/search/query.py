@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Sequence
-from typing import TYPE_CHECKING, Any
+from typing import TYPE_CHECKING, Any, TypeAlias
 
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.errors import CapacityError, OutOfTimeError
@@ -30,11 +30,13 @@ from braidsearch.words.reduction import find_rotation
 if TYPE_CHECKING:
     from braidsearch.search.meet import Meeting
 
+Rounds: TypeAlias = Sequence[tuple[float, float]]
+
 CHEAP_SECONDS = 0.05
 CHEAP_SECONDS_A_LETTER = 1e-4  # long words take as long to simplify
 FAIR_SECONDS = 1.0
 DEAR_SECONDS = 60.0
-_ROUNDS = ((0.005, 0.1), (0.03, 1.0), (0.1, 5.0), (0.3, 20.0))
+ROUNDS: Rounds = ((0.005, 0.1), (0.03, 1.0), (0.1, 5.0), (0.3, 20.0))
 """The share of the limits up to which each round searches, and its dearest invariants' seconds."""
 _LAST_SHARE = 0.85  # what is left after it looks for a symmetric image
 _LONGEST_GLANCE = 80  # letters up to which a glance at symmetric images takes no notable time
@@ -48,14 +50,16 @@ class Query:
     "same" (None: all).
     """
 
-    def __init__(
+    def __init__(  # noqa: PLR0913, PLR0917 - the question, its bounds, and two refinements
         self,
         left: Braid,
         right: Braid,
         asked: tuple[str, ...],
         budget: Budget,
         others: Sequence[str] | None = None,
+        rounds: Rounds = ROUNDS,
     ) -> None:
+        self.rounds = rounds
         self.left, self.right, self.asked, self.budget = left, right, asked, budget
         self.others = [
             name for name in (SYMMETRIES if others is None else others) if name not in asked
@@ -155,7 +159,7 @@ class Query:
         """Searches and invariants in turn, each round with more of both than the one before."""
         handy = self._route(None), self._route("identity")
         share = 0.0
-        for until, dearest in _ROUNDS:
+        for until, dearest in self.rounds:
             met = self._search(share, until)
             if met is not None:
                 return met

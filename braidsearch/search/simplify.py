@@ -11,7 +11,7 @@ from braidsearch.words.half_twist import flip_letters
 from braidsearch.words.handles import reduce_handles, reduce_handles_turned
 
 _SUMMIT_CAP = 100
-_LONGEST_SUMMIT = 100  # letters up to which the summit is walked for a destabilization
+LONGEST_SUMMIT = 100  # letters up to which the summit is walked for a destabilization
 _LONGEST_HANDLES = 400  # letters up to which handles are reduced
 _WALK_STRANDS, _WALK_LETTERS = 5, 40  # from either of them on a walk comes first
 _SEED = 1
@@ -20,6 +20,11 @@ _SEED = 1
 def greedy_route(braid: Braid, budget: Budget) -> Route:
     """The route by visible reductions and destabilizations alone, which takes little time."""
     return _greedy(Route(braid), budget, 0)
+
+
+def visibly_simplified(route: Route, budget: Budget) -> Route:
+    """A route continued by the reductions visible in the summit of the class, without a walk."""
+    return _greedy(route, budget, _SUMMIT_CAP)
 
 
 def simplified(route: Route, budget: Budget) -> Route:
@@ -77,7 +82,7 @@ def _destabilize_once(chain: MoveChain, budget: Budget, summit_cap: int) -> bool
     for by, word in [((), braid.word), *turned]:
         if _take(chain, draft_destabilization(braid, by, word)):
             return True
-    if len(braid) > _LONGEST_SUMMIT or not summit_cap or budget.is_out_of_time():
+    if len(braid) > LONGEST_SUMMIT or not summit_cap or budget.is_out_of_time():
         return False
     return any(
         _take(chain, draft_destabilization(braid, by, word))

@@ -120,6 +120,18 @@ def verify_file(path: str | os.PathLike[str], left: Bound = None, right: Bound =
     return verify_text(content, left, right)
 
 
+def recompute(invariant: str, strands: int, word: Sequence[int]) -> Any:
+    """The value of an invariant without parameters, as a certificate would state it; else None.
+
+    None for a value that is too large for this verifier. Raises KeyError for an unknown name.
+    """
+    try:
+        braid = cyclically_reduced(Braid(strands, tuple(word)))
+        return INVARIANTS[invariant].compute(braid, Work())
+    except (RejectedError, MemoryError, RecursionError):
+        return None
+
+
 # ---------------------------------------------------------------------------- the claims
 
 

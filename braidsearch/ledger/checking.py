@@ -1,0 +1,208 @@
+"""A ledger checked from the bottom: the file, every proof, what the classes rest on."""
+
+from __future__ import annotations
+
+from collections import deque
+from collections.abc import Callable, Iterator, Sequence
+from concurrent.futures import Executor, Future
+from dataclasses import dataclass, field
+from typing import TypeVar
+
+import networkx as nx
+
+from braidsearch.certificates import parse_certificate
+from braidsearch.errors import BraidsearchError
+from braidsearch.ledger.fingerprints import FIELDS, Fingerprint
+from braidsearch.ledger.store import Evidence, Store
+from braidsearch.search.gate import is_confirmed, judge
+from braidsearch.words import Braid
+
+Item = TypeVar("Item")
+Result = TypeVar("Result")
+
+_CHUNK = 32
+_AHEAD = 64
+
+
+@dataclass(frozen=True, slots=True)
+class CheckReport:
+    """What a check has looked at, and every fault, one line each; no line: all is proven."""
+
+    proofs: int
+    values: int
+    classes: int
+    faults: tuple[str, ...] = field(default=())
+
+    @property
+    def valid(self) -> bool:
+        """Whether everything was found to hold."""
+        return not self.faults
+
+
+def check_ledger(
+    store: Store, executor: Executor, report: Callable[[int, int], None] | None = None
+) -> CheckReport:
+    """Check the file, every proof by the verifier, every class and every stored value.
+
+    - SQLite's own checks of the file and of what refers to what;
+    - each proof is about the braids under which it is stored, and the verifier accepts it;
+    - each braid of an entry has a proof that leads to its canonical form, and the forms of one
+      class hang together by proofs;
+    - the values by which classes are told apart are those that the verifier computes;
+    - every two classes differ in such a value, by a proof, or are listed as undecided;
+    - no proofs contradict each other.
+    """
+    faults = list(_faults_of_file(store))
+    total = store.count("evidence") + store.count("classes")
+    proofs, wrong = _check_proofs(store, executor, lambda done: report and report(done, total))
+    faults += wrong
+    values, wrong = _check_values(
+        store, executor, lambda done: report and report(proofs + done, total)
+    )
+    faults += wrong
+    faults += _faults_of_entries(store)
+    faults += _faults_of_classes(store)
+    faults += _faults_between_classes(store)
+    for number, same, different in store.rows("SELECT id, same, different FROM contradictions"):
+        faults.append(f"contradiction {number}: proof {same} and proof {different}")
+    return CheckReport(proofs, values, store.count("classes"), tuple(faults))
+
+
+def _faults_of_file(store: Store) -> Iterator[str]:
+    for (text,) in store.rows("PRAGMA integrity_check"):
+        if text != "ok":
+            yield f"file: {text}"
+    for row in store.rows("PRAGMA foreign_key_check"):
+        yield f"file: {row[0]}, row {row[1]}: refers to what is not there"
+
+
+def check_proofs(items: Sequence[tuple[Evidence, Braid, Braid]]) -> list[str | None]:
+    """For each proof the reason why it does not hold, None where the verifier accepts it."""
+    return [_fault_of(*item) for item in items]
+
+
+def _fault_of(evidence: Evidence, left: Braid, right: Braid) -> str | None:
+    try:
+        certificate = parse_certificate(evidence.certificate)
+    except BraidsearchError as error:
+        return str(error)
+    if (certificate.left, certificate.right) != (left, right):
+        return "it is about other braids"
+    if certificate.verdict == "same":
+        symmetries = [certificate.symmetry]
+    else:
+        symmetries = [item.symmetry for item in certificate.distinctions]
+    if certificate.verdict != evidence.verdict or symmetries != [evidence.symmetry]:
+        return "it claims something else"
+    report = judge(certificate)
+    return None if report.valid else report.reason
+
+
+def _check_proofs(
+    store: Store, executor: Executor, tell: Callable[[int], object]
+) -> tuple[int, list[str]]:
+    faults: list[str] = []
+    done = 0
+    for chunk, results in _spread(executor, check_proofs, _proofs_with_braids(store)):
+        for (evidence, _, _), fault in zip(chunk, results, strict=True):
+            if fault is not None:
+                faults.append(f"proof {evidence.number}: {fault}")
+        done += len(chunk)
+        tell(done)
+    return done, faults
+
+
+def _proofs_with_braids(store: Store) -> Iterator[tuple[Evidence, Braid, Braid]]:
+    for evidence in store.evidence():
+        yield evidence, store.braid(evidence.left), store.braid(evidence.right)
+
+
+def check_values(items: Sequence[tuple[int, Braid, Fingerprint]]) -> list[list[str]]:
+    """For each class the names of the values that the verifier does not confirm."""
+    return [
+        [
+            name
+            for name, text in zip(FIELDS, marks.values, strict=True)
+            if text is not None and not is_confirmed(name, form, marks.value(name))
+        ]
+        for _, form, marks in items
+    ]
+
+
+def _check_values(
+    store: Store, executor: Executor, tell: Callable[[int], object]
+) -> tuple[int, list[str]]:
+    faults: list[str] = []
+    done = values = 0
+    for chunk, results in _spread(executor, check_values, store.all_classes()):
+        for (number, _, marks), wrong in zip(chunk, results, strict=True):
+            values += len([text for text in marks.values if text is not None])
+            faults += [f"class {number}: its {name} is another one" for name in wrong]
+        done += len(chunk)
+        tell(done)
+    return values, faults
+
+
+def _faults_of_entries(store: Store) -> Iterator[str]:
+    rows = store.rows(
+        "SELECT placed.braid FROM placed WHERE placed.braid != placed.form AND NOT EXISTS ("
+        "SELECT 1 FROM evidence WHERE evidence.left = placed.braid "
+        "AND evidence.right = placed.form AND verdict = 'same' AND symmetry = 'identity')"
+    )
+    for (number,) in rows:
+        yield f"braid {number}: no proof leads to its canonical form"
+
+
+def _faults_of_classes(store: Store) -> Iterator[str]:
+    graph = nx.Graph()
+    class_of = dict(store.rows("SELECT braid, class FROM forms"))
+    graph.add_nodes_from(class_of)
+    graph.add_edges_from(
+        store.rows(
+            "SELECT left, right FROM evidence WHERE verdict = 'same' AND symmetry = 'identity' "
+            "AND left IN (SELECT braid FROM forms) AND right IN (SELECT braid FROM forms)"
+        )
+    )
+    parts: dict[int, int] = {}
+    for part in nx.connected_components(graph):
+        for number in {class_of[form] for form in part}:
+            parts[number] = parts.get(number, 0) + 1
+    for number, count in sorted(parts.items()):
+        if count > 1:
+            yield f"class {number}: its proofs leave it in {count} parts"
+
+
+def _faults_between_classes(store: Store) -> Iterator[str]:
+    """Classes whose fingerprints agree, with neither a proof of difference nor an open question."""
+    form_class = dict(store.rows("SELECT braid, class FROM forms"))
+    known = {
+        frozenset((form_class[left], form_class[right]))
+        for table in ("undecided WHERE", "evidence WHERE verdict = 'different' AND")
+        for left, right in store.rows(
+            f"SELECT left, right FROM {table} symmetry = 'identity' "
+            "AND left IN (SELECT braid FROM forms) AND right IN (SELECT braid FROM forms)"
+        )
+    }
+    for one, other in store.iter_agreeing_pairs():
+        if frozenset((one, other)) not in known:
+            yield f"classes {one} and {other}: nothing tells them apart, and no question is open"
+
+
+def _spread(
+    executor: Executor, function: Callable[[Sequence[Item]], list[Result]], items: Iterator[Item]
+) -> Iterator[tuple[list[Item], list[Result]]]:
+    """The function on chunks of the items, in order; only a few chunks are held at a time."""
+    waiting: deque[tuple[list[Item], Future[list[Result]]]] = deque()
+    chunk: list[Item] = []
+    for item in items:
+        chunk.append(item)
+        if len(chunk) == _CHUNK:
+            waiting.append((chunk, executor.submit(function, chunk)))
+            chunk = []
+        if len(waiting) >= _AHEAD:
+            done, task = waiting.popleft()
+            yield done, task.result()
+    if chunk:
+        waiting.append((chunk, executor.submit(function, chunk)))
+    for done, task in waiting:
+        yield done, task.result()

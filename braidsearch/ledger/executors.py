@@ -1,0 +1,112 @@
+"""Where the work of a ledger is done: here, in processes of this machine, or on a Dask cluster."""
+
+from __future__ import annotations
+
+import os
+import signal
+import threading
+from collections.abc import Callable, Iterator
+from concurrent.futures import Executor, Future, ProcessPoolExecutor
+from contextlib import contextmanager
+from multiprocessing import get_context, parent_process
+from typing import Any
+
+from braidsearch.errors import InputError
+
+
+class DeferredFuture(Future[Any]):
+    """A task that is done when its result is asked for."""
+
+    def __init__(self, function: Callable[..., Any], arguments: tuple[Any, ...]) -> None:
+        super().__init__()
+        self._task = function, arguments
+
+    def result(self, timeout: float | None = None) -> Any:
+        """The result, worked out at the first call."""
+        if not self.done():
+            function, arguments = self._task
+            self.set_result(function(*arguments))
+        return super().result(timeout)
+
+
+class SerialExecutor(Executor):
+    """Does each task in this process, when its result is asked for."""
+
+    def submit(  # type: ignore[override]
+        self, function: Callable[..., Any], /, *arguments: Any
+    ) -> DeferredFuture:
+        """The task, to be done when its result is asked for."""
+        return DeferredFuture(function, arguments)
+
+
+@contextmanager
+def open_executor(processes: int | None = None, scheduler: str | None = None) -> Iterator[Executor]:
+    """The executor for so many processes (None: one for each core), or for a Dask cluster.
+
+    After an error or an interrupt nothing that was not begun is begun any more. Raises InputError
+    for a scheduler that does not answer, or without the library for one.
+    """
+    if scheduler is not None:
+        with _dask_executor(scheduler) as executor:
+            yield executor
+        return
+    count = processes or available_cores()
+    if count == 1:
+        yield SerialExecutor()
+        return
+    pool = ProcessPoolExecutor(count, mp_context=get_context("spawn"), initializer=_begin_worker)
+    try:
+        yield pool
+    except BaseException:
+        _end_now(pool)
+        raise
+    pool.shutdown()
+
+
+def available_cores() -> int:
+    """The cores that this process may use."""
+    if hasattr(os, "sched_getaffinity"):
+        return len(os.sched_getaffinity(0))
+    return os.cpu_count() or 1
+
+
+def _begin_worker() -> None:
+    """Leave interrupts to the parent, and end when the parent ends, however it does."""
+    signal.signal(signal.SIGINT, signal.SIG_IGN)
+    threading.Thread(target=_end_with_parent, daemon=True).start()
+
+
+def _end_with_parent() -> None:
+    parent = parent_process()
+    if parent is not None:
+        parent.join()
+        os._exit(1)
+
+
+def _end_now(pool: ProcessPoolExecutor) -> None:
+    """End the workers at once: what they are at is not wanted any more."""
+    workers = list((getattr(pool, "_processes", None) or {}).values())
+    pool.shutdown(wait=False, cancel_futures=True)
+    for worker in workers:
+        worker.terminate()
+
+
+@contextmanager
+def _dask_executor(address: str) -> Iterator[Executor]:
+    try:
+        from distributed import Client  # noqa: PLC0415 - an extra that few install
+    except ImportError:
+        raise InputError(
+            f"--scheduler {address}: the library of Dask clusters is missing: "
+            "expected braidsearch installed with its extra, as braidsearch[cluster]"
+        ) from None
+    try:
+        client = Client(address, timeout="10s", set_as_default=False)
+    except (OSError, ValueError, TypeError) as error:
+        reason = str(error).splitlines()[0] if str(error) else type(error).__name__
+        raise InputError(
+            f"--scheduler {address}: {reason}: expected the address of a running Dask "
+            "scheduler, such as tcp://127.0.0.1:8786"
+        ) from None
+    with client:
+        yield client.get_executor(pure=False)

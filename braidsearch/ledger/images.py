@@ -1,0 +1,97 @@
+"""Classes that are mirror images or reverses of one another: the coarser grouping."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+
+import networkx as nx
+
+from braidsearch.certificates import Certificate, format_certificate
+from braidsearch.certificates.joining import apply_symmetry_to_moves
+from braidsearch.ledger.fingerprints import Fingerprint, fingerprint
+from braidsearch.ledger.placing import Effort, Finding, ask
+from braidsearch.ledger.preparing import Prepared, prepare
+from braidsearch.ledger.store import Store
+from braidsearch.search.gate import judge
+from braidsearch.words import Braid, apply_symmetry
+
+
+@dataclass(frozen=True, slots=True)
+class Image:
+    """The symmetric image of a form: its canonical form, the proof, its fingerprint.
+
+    ``finding`` says that the closure of the form is the image of that of its canonical form.
+    """
+
+    form: Braid
+    symmetry: str
+    finding: Finding
+    fingerprint: Fingerprint
+
+
+def images_of(form: Braid, symmetries: Sequence[str]) -> list[Image]:
+    """The images of a form under the symmetries, each with its canonical form."""
+    return [_image_of(form, symmetry) for symmetry in symmetries]
+
+
+def _image_of(form: Braid, symmetry: str) -> Image:
+    prepared = prepare(apply_symmetry(form, symmetry))
+    certificate = _certificate(form, prepared, symmetry)
+    finding = Finding(
+        form,
+        certificate.right,
+        symmetry,
+        "same",
+        format_certificate(certificate),
+        f"canonical form of the {symmetry}",
+    )
+    marks = prepared.fingerprint
+    if certificate.right != prepared.form:
+        marks = fingerprint(certificate.right)
+    return Image(form, symmetry, finding, marks)
+
+
+def _certificate(form: Braid, prepared: Prepared, symmetry: str) -> Certificate:
+    """closure(form) is the image of closure(canonical form of the image)."""
+    from braidsearch.certificates import parse_certificate  # noqa: PLC0415
+
+    if prepared.certificate is not None:
+        moves = parse_certificate(prepared.certificate).moves
+        back = apply_symmetry_to_moves(prepared.braid, moves, symmetry)
+        certificate = Certificate.same(form, prepared.form, symmetry, back)
+        if judge(certificate).valid:
+            return certificate
+    return Certificate.same(form, prepared.braid, symmetry, ())
+
+
+def ask_images(
+    form: Braid, candidates: Sequence[tuple[Braid, str]], effort: Effort
+) -> list[Finding]:
+    """For each candidate and symmetry, whether closure(form) is that image of its closure.
+
+    After one that is, the others are left out: they follow, or tell nothing new.
+    """
+    findings = []
+    for candidate, symmetry in candidates:
+        findings.append(ask(form, candidate, symmetry, effort))
+        if findings[-1].outcome == "same":
+            break
+    return findings
+
+
+def group_classes(store: Store) -> list[list[int]]:
+    """The classes in groups that hang together by proofs, whatever their symmetries.
+
+    Each group and the list of them are in the order of the oldest class.
+    """
+    graph = nx.Graph()
+    graph.add_nodes_from(number for (number,) in store.rows("SELECT id FROM classes ORDER BY id"))
+    graph.add_edges_from(
+        store.rows(
+            "SELECT one.class, other.class FROM evidence "
+            "JOIN forms AS one ON one.braid = evidence.left "
+            "JOIN forms AS other ON other.braid = evidence.right WHERE verdict = 'same'"
+        )
+    )
+    return sorted(sorted(group) for group in nx.connected_components(graph))

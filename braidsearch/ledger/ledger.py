@@ -1,0 +1,208 @@
+"""The ledger as scripts use it: one file, opened, asked and closed."""
+
+from __future__ import annotations
+
+import os
+from collections.abc import Callable, Iterable, Sequence
+from concurrent.futures import Executor
+from dataclasses import dataclass
+from types import TracebackType
+
+from braidsearch.certificates import Certificate
+from braidsearch.errors import InputError
+from braidsearch.ledger.checking import CheckReport, check_ledger
+from braidsearch.ledger.executors import SerialExecutor
+from braidsearch.ledger.finding import Finder, Found
+from braidsearch.ledger.placing import Effort
+from braidsearch.ledger.proofs import Proofs
+from braidsearch.ledger.reading import Entry
+from braidsearch.ledger.recording import record_certificate
+from braidsearch.ledger.reporting import LedgerReport, OpenQuestion, open_questions, report_ledger
+from braidsearch.ledger.sorting import Report, Sorter, SortSummary
+from braidsearch.ledger.store import Store, StoredEntry
+from braidsearch.search.gate import judge
+from braidsearch.words import SYMMETRIES, Braid
+
+DEFAULT_NODES = 2_000
+
+
+@dataclass(frozen=True, slots=True)
+class AddSummary:
+    """What ``add`` did: entries that are new, and entries that were there already."""
+
+    added: int
+    known: int
+
+
+@dataclass(frozen=True, slots=True)
+class Proof:
+    """What a ledger can say of two entries: ``outcome`` as of a verdict.
+
+    ``certificate`` is about the braids of the two entries; None when undecided, and then
+    ``question`` says what was tried, if anything was.
+    """
+
+    outcome: str
+    symmetry: str | None
+    certificate: Certificate | None
+    question: OpenQuestion | None = None
+
+
+class Ledger:
+    """A catalogue of links in one file, with the evidence for every decision.
+
+    ``create`` makes the file when there is none. Every method that changes the ledger keeps its
+    change whole, or block by block; after an error, an interrupt or a crash the file holds all
+    that was kept before. Raises InputError, in one line that names the file, for a file that is
+    missing, damaged, no ledger, of a newer version, or written by another process meanwhile.
+
+        with Ledger("rings.ledger", create=True) as ledger:
+            ledger.add([Entry("ring 1", "simulation", "", Braid([1, 1, 1]), "1 1 1")])
+            ledger.sort()
+            ledger.find(Braid([1, 2, 1, 2])).outcome      # "same"
+    """
+
+    def __init__(self, path: str | os.PathLike[str], *, create: bool = False) -> None:
+        self.store = Store(path, create=create)
+
+    def __enter__(self) -> Ledger:
+        return self
+
+    def __exit__(
+        self,
+        kind: type[BaseException] | None,
+        error: BaseException | None,
+        traceback: TracebackType | None,
+    ) -> None:
+        self.close()
+
+    def close(self) -> None:
+        """Close the file."""
+        self.store.close()
+
+    def add(self, entries: Iterable[Entry]) -> AddSummary:
+        """Enter links, all or none of them; those that are there already stay as they are.
+
+        Raises InputError for a name and source that another link has in the ledger.
+        """
+        added = known = 0
+        with self.store.writing():
+            for entry in entries:
+                if self.store.add_entry(entry):
+                    added += 1
+                else:
+                    known += 1
+        return AddSummary(added, known)
+
+    def sort(
+        self,
+        *,
+        nodes: int = DEFAULT_NODES,
+        max_strands: int | None = None,
+        up_to: Sequence[str] = (),
+        executor: Executor | None = None,
+        progress: Report | None = None,
+    ) -> SortSummary:
+        """Put every entry into the class of its oriented link, with proofs for all that is said.
+
+        Open questions that were tried with less are asked again first. ``nodes`` bounds the
+        conjugacy classes that a search for one question enters, ``max_strands`` the strands on the
+        way; no clock decides anything. ``up_to`` names symmetries: which classes are such images
+        of one another is asked as well. ``executor`` is one of the concurrent.futures kind.
+        """
+        effort = Effort(nodes, max_strands)
+        effort.check()
+        check_symmetries(up_to)
+        return Sorter(self.store, effort, executor or SerialExecutor(), progress).sort(up_to)
+
+    def find(self, braid: Braid, *, nodes: int = DEFAULT_NODES) -> Found:
+        """The class of a link, with a certificate; else what it differs from and how."""
+        effort = Effort(nodes)
+        effort.check()
+        with self.store.reading():
+            return Finder(self.store, effort).find(braid)
+
+    def entry(self, reference: str) -> StoredEntry:
+        """The entry that is meant by ``name``, by ``source/name`` or by ``#number``.
+
+        Raises InputError where there is none, or more than one.
+        """
+        found = self.store.entries("name = ?", [reference])
+        if reference.startswith("#") and reference[1:].isdecimal():
+            found = found or self.store.entries("entries.id = ?", [int(reference[1:])])
+        found = found or self.store.entries("source || '/' || name = ?", [reference])
+        if not found:
+            raise InputError(
+                f"{reference}: no such entry: expected a name, source/name, or # and a number"
+            )
+        if len(found) > 1:
+            titles = ", ".join(entry.title for entry in found[:5])
+            raise InputError(f"{reference}: {len(found)} entries: expected one of {titles}")
+        return found[0]
+
+    def proof(self, left: str, right: str, *, up_to: Sequence[str] = ()) -> Proof:
+        """What the evidence in the ledger says of two entries, joined into one certificate.
+
+        Raises InputError for an entry that there is not, or that is not sorted yet.
+        """
+        check_symmetries(up_to)
+        asked = tuple(dict.fromkeys(("identity", *up_to)))
+        with self.store.reading():
+            one, other = (self._sorted_entry(name) for name in (left, right))
+            proofs = Proofs(self.store)
+            certificate = proofs.same(one.braid_number, other.braid_number, asked)
+            if certificate is None:
+                certificate = proofs.different(one.braid_number, other.braid_number, asked)
+            if certificate is None:
+                question = self._question_between(one, other)
+                return Proof("undecided", None, None, question)
+        report = judge(certificate)
+        if not report.valid:
+            raise InputError(
+                f"{left}, {right}: the verifier rejects the stored evidence: {report.reason}: "
+                "expected an intact ledger; ledger check says what is wrong"
+            )
+        return Proof(certificate.verdict, certificate.symmetry, certificate)
+
+    def _sorted_entry(self, reference: str) -> StoredEntry:
+        entry = self.entry(reference)
+        if entry.class_number is None:
+            raise InputError(f"{reference}: not sorted yet: expected ledger sort before")
+        return entry
+
+    def _question_between(self, one: StoredEntry, other: StoredEntry) -> OpenQuestion | None:
+        wanted = {one.class_number, other.class_number}
+        for question in open_questions(self.store):
+            if {question.left.class_number, question.right.class_number} == wanted:
+                return question
+        return None
+
+    def record(self, certificate: Certificate) -> str:
+        """Keep a proof found elsewhere about two links of the ledger, once the verifier accepts it.
+
+        Returns what came of it in words: what it joins or holds apart, or what it contradicts.
+        Raises InputError for a certificate that does not hold, and for braids that are not sorted.
+        """
+        return record_certificate(self.store, certificate)
+
+    def report(self) -> LedgerReport:
+        """All classes with their entries, groups up to symmetry, what is open or contradictory."""
+        with self.store.reading():
+            return report_ledger(self.store)
+
+    def check(
+        self,
+        *,
+        executor: Executor | None = None,
+        progress: Callable[[int, int], None] | None = None,
+    ) -> CheckReport:
+        """Verify everything that the ledger rests on, by the independent verifier."""
+        with self.store.reading():
+            return check_ledger(self.store, executor or SerialExecutor(), progress)
+
+
+def check_symmetries(up_to: Sequence[str]) -> None:
+    """Raise InputError for a name that is no symmetry."""
+    for symmetry in up_to:
+        if symmetry not in SYMMETRIES:
+            raise InputError(f"up to {symmetry!r}: expected {', '.join(SYMMETRIES[1:])}")

@@ -1,0 +1,187 @@
+"""A canonical form among the classes whose fingerprints agree with its own: which is it, if any."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable, Sequence
+from dataclasses import dataclass
+
+from braidsearch.certificates import Certificate, format_certificate
+from braidsearch.errors import CapacityError
+from braidsearch.invariants.finer import finer_ladder
+from braidsearch.ledger.fingerprints import Fingerprint
+from braidsearch.search.closed_three_braids import is_classified, three_braid_ladder
+from braidsearch.search.distinguish import Distinguisher
+from braidsearch.search.explorer import Pace
+from braidsearch.search.gate import judge
+from braidsearch.search.limits import Budget, Ending, SearchLimits
+from braidsearch.search.meet import Meeting
+from braidsearch.search.proof import checked_chain
+from braidsearch.search.query import Query
+from braidsearch.search.route import Route
+from braidsearch.words import Braid
+
+_GLANCE_NODES = 240  # conjugacy classes that the short search enters, in two instalments
+_FIRST_SHARE = 0.25
+_PACE = Pace(expansions_first=2, turns_an_expansion=12)
+_CHEAP_SECONDS = 0.01  # of the finer invariants asked between the two, by estimate
+
+_ROUNDS = ((0.1, 0.1), (0.2, 0.5), (0.4, 5.0), (0.6, 20.0))
+"""As of a query, for searches that are short beside the dearer invariants."""
+
+Marked = tuple[Braid, Fingerprint]
+"""A form with its fingerprint."""
+
+
+@dataclass(frozen=True, slots=True)
+class Effort:
+    """The limits of each question: conjugacy classes entered, and strands on the way.
+
+    There is no limit in seconds, so that the same ledger comes out on every machine.
+    """
+
+    nodes: int = 2_000
+    max_strands: int | None = None
+
+    @property
+    def limits(self) -> SearchLimits:
+        """The same as limits of a search."""
+        return SearchLimits(seconds=None, nodes=self.nodes, max_strands=self.max_strands)
+
+    def check(self) -> None:
+        """Raise InputError for limits that no search can keep."""
+        SearchLimits(seconds=None, nodes=self.nodes, max_strands=self.max_strands)
+
+    def is_within(self, other: Effort) -> bool:
+        """Whether everything that this effort tries is tried by the other as well."""
+        strands, most = self.max_strands, other.max_strands
+        is_narrower = strands == most or (None not in {strands, most} and strands <= most)  # type: ignore[operator]
+        return self.nodes <= other.nodes and is_narrower
+
+
+@dataclass(frozen=True, slots=True)
+class Finding:
+    """What came out for two forms: ``outcome`` is that of a verdict.
+
+    ``certificate`` is the text of the proof, accepted by the verifier; None when undecided.
+    ``reason`` says how in a few words.
+    """
+
+    left: Braid
+    right: Braid
+    symmetry: str
+    outcome: str
+    certificate: str | None
+    reason: str
+
+
+def place_all(
+    forms: Sequence[Marked], candidates: Iterable[Marked], effort: Effort
+) -> list[tuple[Finding, ...]]:
+    """For each form in turn what was found: it joins the class of one candidate, or becomes one.
+
+    The last finding of a form is "same" when it was found to be a candidate.
+    """
+    known = list(candidates)
+    results = []
+    for form, marks in forms:
+        agreeing = [other for other, theirs in known if marks.first_difference(theirs) is None]
+        findings = place(form, agreeing, effort)
+        results.append(findings)
+        if not findings or findings[-1].outcome != "same":
+            known.append((form, marks))
+    return results
+
+
+def place(form: Braid, candidates: Sequence[Braid], effort: Effort) -> tuple[Finding, ...]:
+    """What is found about each candidate, by steps each dearer than the one before.
+
+    Every step is taken for all candidates that are left before the next one is. Sameness with one
+    of them ends it, and is the last finding then.
+    """
+    questions = [_Question(form, candidate, effort) for candidate in candidates]
+    findings: dict[Braid, Finding] = {}
+    for step in (_Question.glance, _Question.tell_apart, _Question.look_on, _Question.ask):
+        for question in questions:
+            if question.right in findings:
+                continue
+            found = step(question)
+            if found is not None and found.outcome == "same":
+                return (found,)
+            if found is not None:
+                findings[question.right] = found
+    return tuple(findings[candidate] for candidate in candidates)
+
+
+def ask(left: Braid, right: Braid, symmetry: str, effort: Effort) -> Finding:
+    """The whole question whether closure(left) is symmetry(closure(right)).
+
+    Raises KeyboardInterrupt when it is interrupted: an answer that nothing but the user's
+    impatience left open must not be kept.
+    """
+    query = Query(left, right, (symmetry,), Budget(effort.limits), others=(), rounds=_ROUNDS)
+    verdict = query.settled()
+    if verdict.explored["ending"] == Ending.INTERRUPTED.value:
+        raise KeyboardInterrupt
+    text = None if verdict.certificate is None else format_certificate(verdict.certificate)
+    return Finding(left, right, symmetry, verdict.outcome, text, verdict.reason)
+
+
+class _Question:
+    """A form and one candidate; each step gives a finding, or None where it leaves it open."""
+
+    def __init__(self, form: Braid, candidate: Braid, effort: Effort) -> None:
+        self.left, self.right, self.effort = form, candidate, effort
+        limits = SearchLimits(None, min(_GLANCE_NODES, effort.nodes), effort.max_strands)
+        self.budget = Budget(limits)
+        # Canonical forms up to 3 strands are equal, or the links differ: no search is needed.
+        self.is_classified = is_classified(form) and is_classified(candidate)
+        self.meeting: Meeting | None = None
+
+    def glance(self) -> Finding | None:
+        """A search so short that it costs less than an invariant."""
+        return self._search(_FIRST_SHARE)
+
+    def tell_apart(self) -> Finding | None:
+        """Finer invariants that cost little."""
+        plain = Route(self.left), Route(self.right)
+        distinguisher = Distinguisher(self.left, self.right, "identity")
+        steps = three_braid_ladder if self.is_classified else finer_ladder
+        found = distinguisher.find(*plain, _CHEAP_SECONDS, self.budget, steps)
+        if found is None or distinguisher.found_by is None:
+            return None
+        certificate = Certificate.different(self.left, self.right, [found])
+        reason = f"told apart by the {distinguisher.found_by.title}"
+        return _finding(certificate, "identity", reason)
+
+    def look_on(self) -> Finding | None:
+        """The search gone on with."""
+        return self._search(1.0)
+
+    def ask(self) -> Finding:
+        """The whole question."""
+        return ask(self.left, self.right, "identity", self.effort)
+
+    def _search(self, share: float) -> Finding | None:
+        if self.is_classified:
+            return None
+        try:
+            if self.meeting is None:
+                plain = Route(self.left), Route(self.right)
+                self.meeting = Meeting(*plain, self.budget, _PACE)
+            if self.meeting.run(share) is not Ending.FOUND:
+                return None
+        except CapacityError:
+            return None
+        chain = checked_chain(self.left, self.meeting.moves(), self.right)
+        certificate = Certificate.same(self.left, self.right, "identity", chain.moves)
+        count = len(certificate.moves)
+        reason = "one move" if count == 1 else f"{count} moves"
+        return _finding(certificate, "identity", reason)
+
+
+def _finding(certificate: Certificate, symmetry: str, reason: str) -> Finding | None:
+    """What the certificate proves, once the verifier has accepted it."""
+    if not judge(certificate).valid:
+        return None
+    sides = certificate.left, certificate.right
+    return Finding(*sides, symmetry, certificate.verdict, format_certificate(certificate), reason)
