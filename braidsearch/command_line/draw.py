@@ -18,9 +18,9 @@ from braidsearch.errors import CapacityError, InputError
 if TYPE_CHECKING:
     from braidsearch.certificates import Certificate
 
-_DESCRIPTION = f"""Print a picture as SVG: of a braid, of its closure, or of all stages of the proof in
-a certificate, which is known by its content. Strands run downwards, or to the right; components
-differ in colour and in the pattern inside their strands; the word is kept in the description.
+_DESCRIPTION = f"""Print a picture as SVG: of a braid, of its closure, or of all stages of the
+proof in a certificate, which is known by its content. Strands run downwards, or to the right;
+components differ in colour and in the pattern inside them; the word is kept as description.
 
 {INPUTS}"""
 

@@ -47,6 +47,12 @@ class Run:
         return [self.start, *(at(c, k / STEPS) for c in self.cubics for k in range(1, STEPS + 1))]
 
     @cached_property
+    def bounds(self) -> tuple[float, float, float, float]:
+        """Left, top, right, bottom."""
+        xs, ys = [p.real for p in self.points], [p.imag for p in self.points]
+        return min(xs), min(ys), max(xs), max(ys)
+
+    @cached_property
     def dense_points(self) -> list[complex]:
         """The corners of the polygon, and points between them no further than 4 apart."""
         dense = [self.start]
@@ -99,7 +105,7 @@ class Picture:
             ahead = [
                 (abs(start - run.end), other)
                 for other, start in starts.items()
-                if is_ahead(run, start)
+                if abs(start - run.end) < LONGEST_GAP and is_ahead(run, start)
             ]
             if ahead and not run.is_closed:
                 following[number] = min(ahead)[1]
@@ -117,6 +123,7 @@ class Picture:
         found = [
             (number, place, point)
             for number, run in enumerate(self.runs)
+            if is_near(run.bounds, gap[0])
             for place, point in iter_meetings(run.points, gap)
         ]
         assert len(found) == 1, f"expected one strand in the gap {gap}, found {len(found)}"
@@ -156,14 +163,20 @@ class Picture:
     def letters(self) -> list[list[int]]:
         """For each part of the picture its word, read from top to bottom and left to right."""
         parts = self.braid_runs()
-        part_of = {run: part for part, runs in enumerate(parts) for run in runs}
-        for _ in self.runs:
-            part_of |= {b: part_of[a] for a, b in self.next_run.items() if a in part_of}
+        part_of = {}
+        for part, runs in enumerate(parts):
+            for first in runs:
+                run: int | None = first
+                while run is not None:
+                    part_of[run] = part
+                    run = self.next_run.get(run)
+        seen: list[list[Seen]] = [[] for _ in parts]
+        for each in self.crossings:
+            seen[part_of[each.under_before]].append(each)
         words = []
-        for number, starts in enumerate(parts):
+        for found, starts in zip(seen, parts, strict=True):
             xs = [self._upright(self._start(run)).real for run in starts]
-            seen = [each for each in self.crossings if part_of[each.under_before] == number]
-            words.append(self._word(seen, xs))
+            words.append(self._word(found, xs))
         return words
 
     def closure_letters(self, spacing: float) -> list[int]:
@@ -292,9 +305,16 @@ def cross(one: complex, other: complex) -> float:
 def is_ahead(run: Run, point: complex) -> bool:
     """Whether a point lies within the longest gap straight ahead of the end of a run."""
     way = point - run.end
-    if not 0 < abs(way) < LONGEST_GAP:
-        return False
-    return (way.conjugate() * run.direction_at_end).real > 0.9 * abs(way)
+    return abs(way) > 0 and (way.conjugate() * run.direction_at_end).real > 0.9 * abs(way)
+
+
+def is_near(bounds: tuple[float, float, float, float], point: complex) -> bool:
+    """Whether a point lies within the longest gap of a rectangle."""
+    left, top, right, bottom = bounds
+    return (
+        left - LONGEST_GAP < point.real < right + LONGEST_GAP
+        and top - LONGEST_GAP < point.imag < bottom + LONGEST_GAP
+    )
 
 
 def iter_meetings(
