@@ -15,6 +15,8 @@ from braidsearch.search.simplify import LONGEST_SUMMIT, greedy_route, simplified
 from braidsearch.words import Braid
 
 _WALK_STRANDS = 5  # from so many strands on that are left, a walk looks for fewer
+_SHORT_WALK = 300  # tries a letter: what it misses among small braids, a search finds when needed
+_SMALL = 40  # letters and strands up to which the walk is a short one
 _REMEMBERED = 20_000
 
 
@@ -58,7 +60,8 @@ def _one_pass(braid: Braid) -> Route:
     budget = Budget(SearchLimits(seconds=None))
     route = visible_route(braid)
     if route.current.strands >= _WALK_STRANDS or len(route.current) > LONGEST_SUMMIT:
-        route = simplified(route, budget)
+        is_small = len(route.current) + route.current.strands <= _SMALL
+        route = simplified(route, budget, _SHORT_WALK if is_small else None)
     return _to_classified_form(route) if is_classified(route.current) else _to_shortest_word(route)
 
 

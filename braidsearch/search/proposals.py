@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
+from functools import lru_cache
 
 from braidsearch.moves import MoveChain, exchange
 from braidsearch.normal_form.conjugacy import iter_summit
@@ -13,6 +14,8 @@ from braidsearch.words.half_twist import flip_letters, half_twist
 from braidsearch.words.handles import reduce_handles, reduce_handles_turned
 
 Letters = tuple[int, ...]
+
+_REMEMBERED = 20_000  # members of summits with their spellings: braids meet in the same classes
 
 
 def iter_words(
@@ -39,8 +42,9 @@ def turnings(braid: Braid) -> list[Letters]:
     return [half_twist(braid.strands)] if braid.strands <= MOST_TURNED else []
 
 
-def _spellings(member: Braid) -> list[Letters]:
-    return [member.word, reduce_handles(member).word, reduce_handles_turned(member).word]
+@lru_cache(maxsize=_REMEMBERED)
+def _spellings(member: Braid) -> tuple[Letters, ...]:
+    return (member.word, reduce_handles(member).word, reduce_handles_turned(member).word)
 
 
 def draft_destabilization(braid: Braid, by: Letters, word: Letters) -> MoveChain | None:

@@ -27,13 +27,20 @@ def visibly_simplified(route: Route, budget: Budget) -> Route:
     return _greedy(route, budget, _SUMMIT_CAP)
 
 
-def simplified(route: Route, budget: Budget) -> Route:
-    """A greedy route continued to the handiest braid at hand: for large braids by a walk first."""
+def simplified(route: Route, budget: Budget, tries_a_letter: int | None = None) -> Route:
+    """A greedy route continued to the handiest braid at hand: for large braids by a walk first.
+
+    ``tries_a_letter`` is the length of the walk for each letter and strand (None: a long one).
+    """
     braid = route.current
     if braid.strands >= _WALK_STRANDS or len(braid) >= _WALK_LETTERS:
-        from braidsearch.search.walks import cooled_route  # noqa: PLC0415 - loads a compiler
+        from braidsearch.search.walks import (  # noqa: PLC0415 - loads a compiler
+            COOLING_TRIES_A_LETTER,
+            cooled_route,
+        )
 
-        route = cooled_route(route, _SEED, budget.is_out_of_time)
+        tries = tries_a_letter or COOLING_TRIES_A_LETTER
+        route = cooled_route(route, _SEED, budget.is_out_of_time, tries)
     return _greedy(route, budget, _SUMMIT_CAP)
 
 

@@ -17,7 +17,7 @@ PresentationKey = tuple[tuple[int, int], ...]
 _HEATS = HeatRange(tries=(100, 2_000), splits=(1, 5), settling=400)
 _EXCHANGE_SHARES = (0.05, 0.3, 1.0)  # few exchanges keep proofs short, many reach further
 _GENTLE_WALKS = 40  # walks from each class with few exchanges, before all shares are drawn
-_COOLING_TRIES_A_LETTER = 3_000
+COOLING_TRIES_A_LETTER = 3_000
 
 
 def walked_stretch(start: Braid, walks: Sequence[Walk]) -> Stretch:
@@ -31,10 +31,15 @@ def _iter_moves(walks: Sequence[Walk]) -> Iterator[ArcMove]:
         yield from part.iter_moves()
 
 
-def cooled_route(route: Route, seed: int, should_stop: ShouldStop = never) -> Route:
+def cooled_route(
+    route: Route,
+    seed: int,
+    should_stop: ShouldStop = never,
+    tries_a_letter: int = COOLING_TRIES_A_LETTER,
+) -> Route:
     """The route continued to the shortest word on the fewest strands that a first walk finds."""
     braid = route.current
-    tries = _COOLING_TRIES_A_LETTER * (len(braid) + braid.strands)
+    tries = tries_a_letter * (len(braid) + braid.strands)
     best = find_short(braid, seed, tries, keep=1, should_stop=should_stop)[0]
     end = best.braid
     if (end.strands, len(end)) >= (braid.strands, len(braid)):

@@ -7,6 +7,8 @@ from braidsearch.words.half_twist import flip_letters
 from braidsearch.words.reduction import free_reduce_letters
 
 _STEPS_A_LETTER = 60
+_CALLS_BEFORE_COMPILING = 3_000  # a process that asks so often has time to load the compiler
+_calls = 0
 
 
 def reduce_handles(braid: Braid) -> Braid:
@@ -32,6 +34,19 @@ def reduce_handles_turned(braid: Braid) -> Braid:
 
 
 def _without_handles(word: list[int], steps: int) -> list[int] | None:
+    """A word without handles, compiled once that is worth its start; None as below."""
+    global _calls  # noqa: PLW0603 - how often this process has come here
+    _calls += 1
+    if _calls > _CALLS_BEFORE_COMPILING and word:
+        from braidsearch.words.handle_kernel import without_handles  # noqa: PLC0415
+
+        reduced = without_handles(word, steps)
+        if reduced is not None:
+            return reduced
+    return _without_handles_plainly(word, steps)
+
+
+def _without_handles_plainly(word: list[int], steps: int) -> list[int] | None:
     """Reduce the handle that ends first, again and again; None when the steps run out.
 
     ``done`` is free of handles, so the handle that a new letter closes holds no other one; what
