@@ -1,24 +1,30 @@
-"""From one word to another for a conjugate braid: single letters around, single relations inside."""
+"""From one word to another for a conjugate braid: letters around, relations inside."""
 
 from __future__ import annotations
 
 from collections.abc import Iterator
 
+from braidsearch.errors import InputError
 from braidsearch.moves.elementary_handles import reduce_chain_handles
 from braidsearch.moves.elementary_relations import (
-    MAX_RELATIONS,
     Letters,
     Relation,
     RelationChain,
+    count_essential,
     is_far,
-    reversed_chain,
 )
 from braidsearch.moves.elementary_rewriting import rewrite_relations
 from braidsearch.moves.elementary_search import words_of_chain
 from braidsearch.moves.elementary_traces import iter_links
 from braidsearch.words import Braid
-from braidsearch.words.handles import reduce_handles, reduce_handles_turned
-from braidsearch.words.reduction import find_rotation, free_reduce_letters
+from braidsearch.words.handles import reduce_handles
+from braidsearch.words.reduction import find_rotation
+
+_LETTER_COST = 2
+"""How many relations it may cost to make the word one letter shorter, in the middle of the way."""
+
+_MOST_RELATIONS = 120
+_MOST_LETTERS_FOR_BOTH = 120
 
 Part = Relation | int
 """A relation, or the letter a by which the whole word is conjugated: a^-1 in front, a behind."""
@@ -27,22 +33,47 @@ Part = Relation | int
 def conjugate_parts(word: Letters, by: Letters, target: Letters, strands: int) -> list[Part]:
     """Relations and conjugations by letters that lead from ``word`` to ``target``.
 
-    The caller knows that target = by^-1 word by; any conjugator that does the same will do.
+    The caller knows that target = by^-1 word by; any conjugator that does the same will do. Both
+    directions are tried, since the words between may be longer in one of them.
     """
     rotation = find_rotation(Braid.trusted(word, strands), Braid.trusted(target, strands))
     if rotation is not None:
         return _rotate(word, rotation)
-    parts: list[Part] = []
-    current = word
     waiting = _short_conjugator(word, by, strands)
+    there = _conjugate_by_letters(word, waiting, target)
+    if len(word) + len(waiting) + len(target) > _MOST_LETTERS_FOR_BOTH:
+        return there
+    back = _conjugate_by_letters(target, _inverse(waiting), word)
+    return there if len(there) <= len(back) else _reversed_parts(back, len(word))
+
+
+def _conjugate_by_letters(word: Letters, waiting: Letters, target: Letters) -> list[Part]:
+    """Conjugate by one letter after the other, taking away between them what cancels cheaply."""
+    parts: list[Part] = []
     while waiting:
-        place, reduced = _best_letter(current, waiting, strands)
+        place, reduced = _best_letter(word, waiting)
         letter = waiting[place]
         waiting = waiting[:place] + waiting[place + 1 :]
         parts.append(letter)
         parts += reduced
-        current = words_of_chain((-letter, *current, letter), reduced)[-1]
-    return parts + rewrite_relations(current, target)
+        word = words_of_chain((-letter, *word, letter), reduced)[-1]
+    return parts + rewrite_relations(word, target)
+
+
+def _reversed_parts(parts: list[Part], length: int) -> list[Part]:
+    """The way back. To undo a conjugation by a, conjugate by a^-1 and cancel at both ends.
+
+    ``length`` is that of the word to which the parts lead.
+    """
+    back: list[Part] = []
+    for part in reversed(parts):
+        if isinstance(part, int):
+            length -= 2
+            back += [-part, Relation(0, (part, -part), ()), Relation(length, (part, -part), ())]
+        else:
+            length += len(part.before) - len(part.after)
+            back.append(part.reversed())
+    return back
 
 
 def _rotate(word: Letters, rotation: int) -> list[Part]:
@@ -64,28 +95,26 @@ def _short_conjugator(word: Letters, by: Letters, strands: int) -> Letters:
     What commutes with the braid may stand in front: its own powers, and full twists.
     """
     twist = tuple(range(1, strands)) * strands
-    inverse_twist, inverse = _inverse(twist), _inverse(word)
     candidates = [by]
-    for front in ((), word, inverse, word * 2, inverse * 2):
-        for turns in ((), twist, inverse_twist):
-            braid = Braid.trusted(front + turns + by, strands)
-            candidates += [reduce_handles(braid).word, reduce_handles_turned(braid).word]
+    for front in ((), word, _inverse(word)):
+        for turns in ((), twist, _inverse(twist)):
+            candidates.append(reduce_handles(Braid.trusted(front + turns + by, strands)).word)
     return min(candidates, key=len)
 
 
-def _best_letter(word: Letters, waiting: Letters, strands: int) -> tuple[int, list[Relation]]:
-    """Which letter of the conjugator goes first, of those that can, and what it lets cancel."""
-    best: tuple[int, int, int, list[Relation]] | None = None
+def _best_letter(word: Letters, waiting: Letters) -> tuple[int, list[Relation]]:
+    """The letter of the conjugator to go first, of those that can, and what then cancels."""
+    best: tuple[int, int, list[Relation]] | None = None
     for place in _iter_front(waiting):
         letter = waiting[place]
-        start = (-letter, *word, letter)
-        relations = _reduce(start)
-        length = len(start) + sum(len(r.after) - len(r.before) for r in relations)
-        found = (length, len(relations), place, relations)
-        if best is None or found[:3] < best[:3]:
-            best = found
-    assert best is not None
-    return best[2], best[3]
+        relations = _reduce((-letter, *word, letter))
+        growth = sum(len(after) - len(before) for _, before, after in relations)
+        cost = _LETTER_COST * growth + count_essential(relations)
+        if best is None or cost < best[0]:
+            best = cost, place, relations
+    if best is None:
+        raise InputError("the empty conjugator: expected a letter")
+    return best[1], best[2]
 
 
 def _iter_front(word: Letters) -> Iterator[int]:
@@ -96,7 +125,7 @@ def _iter_front(word: Letters) -> Iterator[int]:
 
 
 def _reduce(word: Letters) -> list[Relation]:
-    """Cancellations after far commutations; handle reduction where that gives a shorter word."""
+    """Cancellations after far commutations; handle reduction too, where that pays."""
     relations: list[Relation] = []
     while True:
         link = next((link for link in iter_links(word) if len(link.places) == 2), None)
@@ -104,15 +133,15 @@ def _reduce(word: Letters) -> list[Relation]:
             break
         relations += link.relations()
         word = link.after
-    chains = []
+    best: list[Relation] = []
+    cost = _LETTER_COST * len(word)
     for direction in (1, -1):
         chain = RelationChain(word)
-        if reduce_chain_handles(chain, direction, 200) and len(chain.letters) < len(word):
-            chains.append(chain)
-    if not chains:
-        return relations
-    best = min(chains, key=lambda chain: (len(chain.letters), len(chain.relations)))
-    return relations + best.relations
+        if reduce_chain_handles(chain, direction, _MOST_RELATIONS):
+            found = _LETTER_COST * len(chain.letters) + count_essential(chain.relations)
+            if found < cost:
+                best, cost = chain.relations, found
+    return relations + best
 
 
 def _inverse(word: Letters) -> Letters:

@@ -1,8 +1,8 @@
-"""Chains of moves written out in elementary steps, each of which is a move of a certificate again."""
+"""Chains of moves written out in elementary steps, which are moves of a certificate again."""
 
 from __future__ import annotations
 
-from collections.abc import Iterable
+from collections.abc import Iterable, Iterator
 
 from braidsearch.errors import CapacityError
 from braidsearch.moves.elementary_conjugation import Part, conjugate_parts
@@ -37,7 +37,7 @@ def expand_moves(start: Braid, moves: Iterable[Move]) -> list[Stage]:
         if len(stages) > 2 * MAX_RELATIONS:
             break
         braid = stated_result(braid, move)
-    stages = _without_loops(start, stages)
+    stages = _without_detours(start, stages)
     if len(stages) > MAX_RELATIONS:
         raise CapacityError(
             f"more than {MAX_RELATIONS} elementary steps: expected no more than a certificate holds"
@@ -76,15 +76,32 @@ def _stages(word: Letters, parts: Iterable[Part], number: int) -> list[Stage]:
     return stages
 
 
-def _without_loops(start: Braid, stages: list[Stage]) -> list[Stage]:
-    """The chain without the parts that lead back to a braid where it has been."""
+def _without_detours(start: Braid, stages: list[Stage]) -> list[Stage]:
+    """The chain without what leads back to a braid where it has been, or to one next to it.
+
+    Next to a braid are those that it becomes by conjugation with one letter.
+    """
     braids = [start]
     for _, move in stages:
         braids.append(stated_result(braids[-1], move))
     last = {braid: place for place, braid in enumerate(braids)}
-    kept = []
+    kept: list[Stage] = []
     place = last[start]
     while place < len(stages):
-        kept.append(stages[place])
-        place = last[braids[place + 1]]
+        step, move = stages[place]
+        following = last[braids[place + 1]]
+        for letter in _letters_of(braids[place]):
+            conjugate = (-letter, *braids[place].word, letter)
+            reached = last.get(Braid.trusted(conjugate, braids[place].strands), 0)
+            if reached > following:
+                following = reached
+                step = ElementaryStep(CONJUGATION, 1, (), (-letter, letter), step.move)
+                move = Conjugate((letter,), conjugate)
+        kept.append((step, move))
+        place = following
     return kept
+
+
+def _letters_of(braid: Braid) -> Iterator[int]:
+    for index in range(1, braid.strands):
+        yield from (index, -index)

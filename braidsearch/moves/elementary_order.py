@@ -117,6 +117,4 @@ def _sides(letters: list[int], inner: list[int], forwards: bool) -> list[int]:
 
 
 def _inversions(ranks: list[int]) -> int:
-    return sum(
-        ranks[i] > ranks[k] for k in range(1, len(ranks)) for i in range(k)
-    )
+    return sum(ranks[i] > ranks[k] for k in range(1, len(ranks)) for i in range(k))

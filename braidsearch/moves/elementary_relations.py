@@ -16,11 +16,11 @@ MAX_RELATIONS = 100_000
 class Relation(NamedTuple):
     """One relation where it acts: from index ``at`` (from 0), ``before`` becomes ``after``.
 
-    Four shapes: () and x x^-1 (insertion), x x^-1 and () (cancellation), x y and y x with indices
-    that differ by more than 1 (far commutation), and three letters i^e j^f k^g with i = k, |i - j| =
-    1, which become j^g i^f j^e (the braid relation). For one sign that is Artin's relation i j i =
-    j i j; for other signs, unless e = g = -f, it follows from it: i j i^-1 = j^-1 (j i j) i^-1 =
-    j^-1 (i j i) i^-1 = j^-1 i j. (Artin, Theory of braids, 1947.)
+    Four shapes: () and x x^-1 (insertion); x x^-1 and () (cancellation); x y and y x with indices
+    that differ by more than 1 (far commutation); and i^e j^f i^g with |i - j| = 1, which becomes
+    j^g i^f j^e (the braid relation). For one sign that is the relation i j i = j i j of Artin
+    (Theory of braids, 1947). For other signs, unless e = g = -f, it follows from it, as in
+    i j i^-1 = j^-1 (j i j) i^-1 = j^-1 (i j i) i^-1 = j^-1 i j.
     """
 
     at: int
@@ -89,9 +89,27 @@ def iter_relations(word: Letters) -> Iterator[Relation]:
                 yield Relation(at, word[at : at + 3], after)
 
 
+def count_essential(relations: Iterable[Relation]) -> int:
+    """How many of the relations are no far commutations."""
+    return sum(len(before) != 2 or not after for _, before, after in relations)
+
+
 def reversed_chain(relations: Sequence[Relation]) -> list[Relation]:
     """The relations that lead back, last one first."""
     return [relation.reversed() for relation in reversed(relations)]
+
+
+def backwards_chain(word: Letters, relations: Iterable[Relation]) -> list[Relation]:
+    """The chain that acts on ``word`` read from right to left as the relations act on ``word``.
+
+    Every relation read backwards is a relation again.
+    """
+    chain = []
+    length = len(word)
+    for at, before, after in relations:
+        chain.append(Relation(length - at - len(before), before[::-1], after[::-1]))
+        length += len(after) - len(before)
+    return chain
 
 
 class RelationChain:
@@ -106,9 +124,7 @@ class RelationChain:
 
     def _replace(self, at: int, length: int, after: Letters) -> None:
         if len(self.relations) >= MAX_RELATIONS:
-            raise CapacityError(
-                f"more than {MAX_RELATIONS} single relations: expected no more than a certificate holds"
-            )
+            raise CapacityError(f"more than {MAX_RELATIONS} relations: expected at most so many")
         before = tuple(self.letters[at : at + length])
         self.relations.append(Relation(at, before, after))
         self.letters[at : at + length] = after

@@ -12,14 +12,18 @@ from braidsearch.moves.elementary_relations import (
     Letters,
     Relation,
     RelationChain,
+    backwards_chain,
+    count_essential,
     reversed_chain,
 )
-from braidsearch.moves.elementary_search import search_relations
-from braidsearch.moves.elementary_shortening import shorten_relations
+from braidsearch.moves.elementary_search import search_relations, shorten_chain
 from braidsearch.moves.elementary_vertices import iter_blocks
 
-_MOST_WORDS = 120
+_MOST_WORDS = 60
 """How many words the direct search sees before handles are reduced instead."""
+
+_SHORT = 40
+"""The most relations of a chain in whose neighbourhood a shorter one is looked for."""
 
 
 def rewrite_relations(word: Letters, target: Letters) -> list[Relation]:
@@ -31,12 +35,11 @@ def rewrite_relations(word: Letters, target: Letters) -> list[Relation]:
     """
     blocks = list(iter_blocks(word, target))
     try:
-        relations = _join_blocks(blocks)
+        return _join_blocks(blocks)
     except InputError:
         if len(blocks) == 1:
             raise
-        relations = _join_blocks([(word, target)])  # prefixes that only look equal were taken
-    return shorten_relations(word, relations)
+        return _join(word, target)  # prefixes that only look equal were taken for equal
 
 
 def _join_blocks(blocks: Sequence[tuple[Letters, Letters]]) -> list[Relation]:
@@ -56,22 +59,38 @@ def _join(word: Letters, target: Letters) -> list[Relation]:
         routes = list(_iter_routes(word, target))
         if not routes:
             raise InputError(f"{list(word)} and {list(target)}: expected words for one braid")
-        found = min(routes, key=len)
+        found = postpone_commutations(word, min(routes, key=len), target)
+        if len(found) <= _SHORT:
+            found = shorten_chain(word, found, 1)
     return postpone_commutations(word, found, target)
 
 
 def _iter_routes(word: Letters, target: Letters) -> Iterator[list[Relation]]:
-    """Ways by handle reduction, from both ends of the generators."""
+    """Ways by handle reduction: from both ends of the generators, and from both ends of the words."""
+    backwards, target_backwards = word[::-1], target[::-1]
     for direction in (1, -1):
-        there, back = RelationChain(word), RelationChain(target)
-        reduce_chain_handles(there, direction, MAX_RELATIONS)
-        reduce_chain_handles(back, direction, MAX_RELATIONS)
-        if there.letters == back.letters:
-            yield there.relations + reversed_chain(back.relations)
-            continue
+        yield from _iter_reductions(word, target, direction)
+        for route in _iter_reductions(backwards, target_backwards, direction):
+            yield backwards_chain(backwards, route)
+
+
+def _iter_reductions(word: Letters, target: Letters, direction: int) -> Iterator[list[Relation]]:
+    """Reduce both words first, where they then meet or are near; or reduce what parts them alone."""
+    there, back = RelationChain(word), RelationChain(target)
+    for chain in (there, back):
+        reduce_chain_handles(chain, direction, MAX_RELATIONS)
+    middle: list[Relation] | None = []
+    if there.letters != back.letters:
         middle = _through_quotient(tuple(there.letters), tuple(back.letters), direction)
-        if middle is not None:
-            yield there.relations + middle + reversed_chain(back.relations)
+    if middle is None:
+        return
+    yield there.relations + middle + reversed_chain(back.relations)
+    forth = _through_quotient(word, target, direction)
+    if forth is not None:
+        yield forth
+    back_again = _through_quotient(target, word, direction)
+    if back_again is not None:
+        yield reversed_chain(back_again)
 
 
 def _through_quotient(word: Letters, target: Letters, direction: int) -> list[Relation] | None:
@@ -83,5 +102,5 @@ def _through_quotient(word: Letters, target: Letters, direction: int) -> list[Re
     for place, letter in enumerate(reversed(target)):
         inserted.insert(len(word) + place, -letter)
     quotient = RelationChain(inserted.letters[: len(word) + len(target)])
-    reduce_chain_handles(quotient, direction, MAX_RELATIONS)
+    reduce_chain_handles(quotient, direction, MAX_RELATIONS, len(word))
     return None if quotient.letters else inserted.relations + quotient.relations

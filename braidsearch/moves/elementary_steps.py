@@ -34,8 +34,8 @@ class ElementaryStep:
 
     ``kind`` is one of KINDS. An insertion's place is that of its first letter. A conjugation by a
     puts a^-1 in front of the word and a behind it: its place is 1, nothing is ``before``, and
-    ``after`` holds both. A (de)stabilization acts on the last letter. ``move`` is the number, from 1,
-    of the move of the certificate that the step is part of.
+    ``after`` holds both. A (de)stabilization acts on the last letter. ``move`` is the number, from
+    1, of the move of the certificate that the step is part of.
     """
 
     kind: str
