@@ -1,17 +1,15 @@
-"""Certificates turned round and joined are certificates, and the verifier accepts them."""
+"""Certificates of sameness turned round and joined are certificates that the verifier accepts."""
 
-import json
 import random
 import time
-from dataclasses import replace
 from itertools import pairwise
 
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from braidsearch.certificates import Certificate, format_certificate, parse_certificate
-from braidsearch.certificates.grammar import INVARIANTS, MAX_MOVES
+from braidsearch.certificates import Certificate
+from braidsearch.certificates.grammar import MAX_MOVES
 from braidsearch.certificates.joining import (
     apply_symmetry_to_moves,
     compose_symmetries,
@@ -22,90 +20,18 @@ from braidsearch.certificates.joining import (
 )
 from braidsearch.errors import CapacityError, InputError
 from braidsearch.moves import Conjugate, MoveChain, Rewrite, Stabilize
-from braidsearch.search.driver import compare
-from braidsearch.search.limits import SearchLimits
-from braidsearch.verifier import verify_text
 from braidsearch.words import SYMMETRIES, Braid, apply_symmetry, parse_word
-from tests.knot_tables import iter_links
-from tests.strategies import append_random_step, braids, move_chains
-from tests.verifier.finer_oracles import TooLargeError
-from tests.verifier.judge import holds
-from tests.verifier.makers import make_different, make_finely_different
+from tests.certificates.evidence import (
+    certificate_between,
+    certificate_of,
+    holds_for,
+    is_accepted,
+    paths,
+    symmetries,
+)
+from tests.strategies import braids, move_chains
 
-symmetries = st.sampled_from(SYMMETRIES)
-LIMITS = SearchLimits(seconds=None, nodes=400)
-TREFOIL, MIRROR, EIGHT = Braid([1, 1, 1]), Braid([-1, -1, -1]), Braid([1, -2, 1, -2])
-
-
-def is_accepted(certificate, left, right):
-    """Whether the verifier accepts the certificate as one about these two braids."""
-    text = format_certificate(certificate)
-    bound = ((braid.strands, braid.word) for braid in (left, right))
-    return verify_text(text, *bound).valid
-
-
-def holds_for(certificate, left, right):
-    """Whether it is accepted as it is, and with no damage done to it."""
-    return is_accepted(certificate, left, right) and not any(
-        verify_text(format_certificate(damaged)).valid for damaged in iter_damaged(certificate)
-    )
-
-
-def iter_damaged(certificate):
-    """The certificate with something in it that cannot be true, in one place after the other."""
-    right = certificate.right
-    added = Braid([*right.word, right.strands], right.strands + 1)
-    if certificate.verdict == "same":
-        yield replace(certificate, right=added)
-        for moves in damaged_moves(certificate.moves):
-            yield replace(certificate, moves=moves)
-    for place, item in enumerate(certificate.distinctions):
-        changes = [
-            {"left": item.right, "right": item.left},
-            {"left": item.right},
-            {"right": item.left},
-            *({"left_moves": moves} for moves in damaged_moves(item.left_moves)),
-            *({"right_moves": moves} for moves in damaged_moves(item.right_moves)),
-        ]
-        for change in changes:
-            items = list(certificate.distinctions)
-            items[place] = replace(item, **change)
-            yield replace(certificate, distinctions=tuple(items))
-
-
-def damaged_moves(moves):
-    """One letter more after one of the moves: the parity of the exponent sum says it is false."""
-    for place in {0, len(moves) // 2, len(moves) - 1} & set(range(len(moves))):
-        move = replace(moves[place], word=(*moves[place].word, 1))
-        yield (*moves[:place], move, *moves[place + 1 :])
-
-
-def certificate_of(chain, symmetry):
-    """The claim that a chain proves, about its start and the image of its end."""
-    right = apply_symmetry(chain.current, symmetry)
-    return Certificate.same(chain.start, right, symmetry, chain.moves)
-
-
-@st.composite
-def paths(draw, start=None, max_length=4):
-    """Certificates of sameness, each of which begins where the last one ends."""
-    found = []
-    for _ in range(draw(st.integers(1, max_length))):
-        found.append(certificate_of(draw(move_chains(start, 6)), draw(symmetries)))
-        start = found[-1].right
-    return found
-
-
-def random_path(start, generator, length=2):
-    """The same from a seed, and through all symmetries in turn."""
-    found = []
-    for symmetry in generator.sample(SYMMETRIES, length):
-        chain = MoveChain(start)
-        for _ in range(5):
-            append_random_step(chain, generator)
-        found.append(certificate_of(chain, symmetry))
-        start = found[-1].right
-    return found
+TREFOIL, EIGHT = Braid([1, 1, 1]), Braid([1, -2, 1, -2])
 
 
 @given(move_chains())
@@ -203,111 +129,6 @@ def test_there_and_back(path):
     assert (home.left, home.right, home.symmetry) == (path[0].left, path[0].left, "identity")
     assert home.moves == ()
     assert join_chain([*path, *back, *path]) == join_chain(path)
-
-
-def random_differences(count):
-    """Certificates of difference by all invariants, with values from the tests' second routes."""
-    generator = random.Random(611)
-    makers = [make_different, make_finely_different]
-    texts = [json.dumps(makers[at % 2](generator)) for at in range(count)]
-    return [parse_certificate(text) for text in texts]
-
-
-DIFFERENCES = random_differences(36)
-
-
-def test_every_invariant_is_among_the_differences():
-    """Each name of the format tells two links apart here, and each symmetry is asked about."""
-    items = [item for one in DIFFERENCES for item in one.distinctions]
-    assert {item.invariant for item in items} == set(INVARIANTS)
-    assert {item.symmetry for item in items} == set(SYMMETRIES)
-
-
-def check_difference(certificate, generator):
-    """Turn a difference round, join it with sameness on either side and both; all must hold.
-
-    The second verifier of the tests, which shares no code with the first, has to agree.
-    """
-    left, right = certificate.left, certificate.right
-    assert is_accepted(certificate, left, right)
-    turned = reverse_certificate(certificate)
-    assert holds_for(turned, right, left)
-    assert reverse_certificate(turned) == certificate
-    before = [reverse_certificate(one) for one in reversed(random_path(left, generator))]
-    after = random_path(right, generator)
-    far_left, far_right = before[0].left, after[-1].right
-    one, other = join_same(*before), join_same(*after)
-    assert holds_for(join_different(one, certificate, None), far_left, right)
-    assert holds_for(join_different(None, certificate, other), left, far_right)
-    joined = join_different(one, certificate, other)
-    assert holds_for(joined, far_left, far_right)
-    shortened = join_chain([*before, certificate, *after])
-    assert holds_for(shortened, far_left, far_right)
-    between = compose_symmetries(one.symmetry, other.symmetry)
-    expected = [compose_symmetries(item.symmetry, between) for item in certificate.distinctions]
-    for made in (joined, shortened):
-        assert [item.symmetry for item in made.distinctions] == expected
-    assert join_different(None, certificate, None) == certificate
-    return shortened
-
-
-@pytest.mark.parametrize("certificate", DIFFERENCES, ids=range(len(DIFFERENCES)))
-def test_differences(certificate):
-    """A differs from D when A is the same as B, B differs from C, and C is the same as D."""
-    joined = check_difference(certificate, random.Random(612))
-    try:
-        assert holds(json.loads(format_certificate(joined)))
-    except TooLargeError:
-        assert len(joined.left) + len(joined.right) > 20
-
-
-def test_differences_with_plain_sameness():
-    """Without symmetries on the way nothing is carried over: values and parameters stay."""
-    for certificate in DIFFERENCES[:20]:
-        chain = MoveChain(certificate.left)
-        for _ in range(6):
-            append_random_step(chain, random.Random(613))
-        one = certificate_of(chain, "identity")
-        joined = join_different(reverse_certificate(one), certificate, None)
-        for item, own in zip(joined.distinctions, certificate.distinctions, strict=True):
-            assert replace(item, left_moves=own.left_moves) == own
-            assert item.left_moves == (*reverse_certificate(one).moves, *own.left_moves)
-
-
-# The knot 8_17 as a closed 3-braid: its mirror-reverse alone is the same (KnotInfo's table).
-EIGHT_SEVENTEEN = parse_word("-1 -1 2 -1 2 -1 2 2")
-# Two mutants of 11 crossings; the words are those of the README.
-MUTANTS = ("-1 -1 2 -1 2 -1 3 -2 -2 3 3", "-1 -1 -1 -1 2 2 1 -3 2 2 -3 2 -3")
-
-
-def certificate_between(left, right, *up_to):
-    certificate = compare(left, right, up_to=up_to, limits=LIMITS).certificate
-    assert certificate is not None
-    return certificate
-
-
-@pytest.mark.parametrize(
-    ("left", "right", "up_to", "invariant"),
-    [
-        (TREFOIL, MIRROR, ("reverse",), "jones"),
-        (TREFOIL, EIGHT, SYMMETRIES[1:], "alexander"),
-        (EIGHT_SEVENTEEN, EIGHT_SEVENTEEN.reverse(), (), "three-braid"),
-        (*map(parse_word, MUTANTS), (), "colouring"),
-    ],
-)
-def test_differences_that_were_searched_for(left, right, up_to, invariant):
-    """What compare finds, by the invariant that tells these knots apart, is turned and joined."""
-    found = certificate_between(left, right, *up_to)
-    assert found.distinctions[0].invariant == invariant
-    check_difference(found, random.Random(614))
-
-
-def test_sums_of_linking_numbers_of_a_published_row():
-    """The two words of L10n99{0,0,0}, a misprint in LinkInfo (read at test time), differ."""
-    row = next(row for row in iter_links(10) if row.name == "L10n99{0,0,0}")
-    found = certificate_between(*row.braids)
-    assert found.distinctions[0].invariant == "linking-sums"
-    check_difference(found, random.Random(615))
 
 
 @pytest.mark.parametrize(
@@ -446,7 +267,7 @@ def test_a_false_claim_is_not_mended(move, symmetry):
     left = Braid([1, 2, 1])
     end = Braid(move.word, move.strands if isinstance(move, Stabilize) else 3)
     right = apply_symmetry(end, symmetry)
-    assert compare(left, end).outcome == "different"
+    assert certificate_between(left, end).verdict == "different"
     false = Certificate.same(left, right, symmetry, [move])
     home = Certificate.same(right, right, "identity", [])
     assert not is_accepted(false, left, right)

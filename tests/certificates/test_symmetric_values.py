@@ -16,7 +16,7 @@ from braidsearch.words import SYMMETRIES, Braid, apply_symmetry
 from tests.certificates.arbitrary import parameters_and_values
 from tests.strategies import braids
 from tests.verifier import oracles
-from tests.verifier.permutation_groups import A4, A4_BOTH, A5, S3, S3_ROTATIONS
+from tests.verifier.permutation_groups import A4, A4_BOTH, S3, S3_ROTATIONS
 
 symmetries = st.sampled_from(SYMMETRIES)
 
@@ -26,7 +26,6 @@ FINER = {
     "colouring S3, two classes": ("colouring", S3_ROTATIONS),
     "colouring A4": ("colouring", A4),
     "colouring A4, three classes": ("colouring", A4_BOTH),
-    "colouring A5": ("colouring", A5),
     "signature at order 6": ("levine-tristram", {"order": 6, "power": 1}),
     "signature at order 5": ("levine-tristram", {"order": 5, "power": 2}),
     "module over F_2": ("alexander-module", {"prime": 2}),
@@ -119,7 +118,7 @@ def test_colourings_by_meridians_that_no_conjugation_inverts(symmetry, colours, 
     assert symmetric_value("colouring", parameters, value, symmetry) == freeze_value(expected)
 
 
-@settings(max_examples=40)
+@settings(max_examples=20)
 @given(symmetry=symmetries, braid=braids(max_strands=3, max_letters=9))
 def test_carrying_over_twice_changes_nothing(symmetry, braid):
     """Every symmetry is its own inverse, on values and parameters as on words."""
