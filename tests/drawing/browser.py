@@ -4,6 +4,7 @@ import json
 import re
 import shutil
 import subprocess
+from collections.abc import Sequence
 from html import unescape
 from pathlib import Path
 from typing import Any
@@ -17,15 +18,19 @@ needs_chromium = pytest.mark.skipif(
 )
 
 
-def measure_in_browser(page: str, script: str, folder: Path, width: int) -> Any:
-    """The value of a script about ``inner``, the document of a page that is so many pixels wide.
+def measure_in_browser(views: Sequence[tuple[str, int]], script: str, folder: Path) -> list[Any]:
+    """The value of a script about ``inner``, the document of each page at a width in pixels.
 
-    The page, HTML or SVG, lies in a frame, since a window is never narrower than 500 pixels.
+    Every page, HTML or SVG, lies in a frame of its own, since a window is never narrower than 500
+    pixels; all are looked at by one browser, which takes a while to start.
     """
-    file = folder / ("page.svg" if page.startswith("<svg") else "page.html")
-    file.write_text(page, encoding="utf-8")
+    frames = []
+    for number, (page, width) in enumerate(views):
+        file = folder / f"{number}.{'svg' if page.startswith('<svg') else 'html'}"
+        file.write_text(page, encoding="utf-8")
+        frames.append(f'<iframe src="{file.name}" width="{width}" height="800" style="border:0">')
     host = folder / "host.html"
-    host.write_text(_HOST % (file.name, width, script), encoding="utf-8")
+    host.write_text(_HOST % ("</iframe>".join([*frames, ""]), script), encoding="utf-8")
     arguments = [
         str(CHROMIUM),
         "--headless",
@@ -42,20 +47,22 @@ def measure_in_browser(page: str, script: str, folder: Path, width: int) -> Any:
         "--dump-dom",
         host.as_uri(),
     ]
-    finished = subprocess.run(arguments, capture_output=True, text=True, check=True, timeout=120)
+    finished = subprocess.run(arguments, capture_output=True, text=True, check=True, timeout=180)
     found = re.search(r'<pre id="report">(.*?)</pre>', finished.stdout, re.DOTALL)
     assert found, finished.stdout[-500:]
-    return json.loads(unescape(found[1]))
+    measured: list[Any] = json.loads(unescape(found[1]))
+    return measured
 
 
 _HOST = """<!doctype html>
-<iframe src="%s" width="%d" height="800" style="border:0"></iframe>
+%s
 <pre id="report"></pre>
 <script>
 const measure = (inner) => {%s}
 window.onload = () => {
-  const inner = document.querySelector("iframe").contentDocument;
-  document.getElementById("report").textContent = JSON.stringify(measure(inner));
+  const frames = [...document.querySelectorAll("iframe")];
+  const found = frames.map((frame) => measure(frame.contentDocument));
+  document.getElementById("report").textContent = JSON.stringify(found);
 }
 </script>
 """

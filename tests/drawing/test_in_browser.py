@@ -2,7 +2,7 @@
 
 import itertools
 import random
-from pathlib import Path
+from typing import Any
 
 import pytest
 
@@ -13,7 +13,8 @@ from tests.drawing.browser import measure_in_browser, needs_chromium
 from tests.drawing.layout import do_overlap, is_inside
 
 EXAMPLE = Braid([1, -2, 3, -2, 1, -2, 3, 3, -1, 2, -3, 2])
-LONG = Braid([random.Random(1).choice([1, -1]) * (1 + k * k % 3) for k in range(200)])
+GENERATOR = random.Random(1)
+LONG = Braid([GENERATOR.choice([-3, -2, -1, 1, 2, 3]) for _ in range(200)])
 
 PICTURES = [
     draw_closure(EXAMPLE, has_letters=True),
@@ -25,32 +26,45 @@ PICTURES = [
 
 MEASURE = """
 return {
+  room: inner.defaultView.innerWidth,
   wide: inner.documentElement.scrollWidth,
-  room: inner.documentElement.clientWidth,
-  pictures: [...inner.querySelectorAll("svg")].map(svg => ({
+  pictures: [...inner.querySelectorAll("svg")].map((svg) => ({
     shown: svg.getBoundingClientRect().toJSON(),
-    page: svg.viewBox.baseVal.width / svg.viewBox.baseVal.height,
-    texts: [...svg.querySelectorAll("text")].map(text => text.getBoundingClientRect().toJSON()),
+    width: svg.viewBox.baseVal.width,
+    height: svg.viewBox.baseVal.height,
+    texts: [...svg.querySelectorAll("text")].map((text) => text.getBoundingClientRect().toJSON()),
   })),
 }
 """
+WIDTHS = (360, 1200)
+
+
+@pytest.fixture(scope="module")
+def seen(tmp_path_factory: pytest.TempPathFactory) -> dict[tuple[str, int], Any]:
+    """What the browser measures of a page with all pictures, and of one opened as a file."""
+    page = f'<!doctype html><meta charset="utf-8"><body>{"".join(PICTURES)}</body>'
+    pages = {"page": page, "file": draw_braid(LONG, has_letters=True)}
+    views = {(name, width): (pages[name], width) for name in pages for width in WIDTHS}
+    folder = tmp_path_factory.mktemp("browser")
+    found = measure_in_browser(list(views.values()), MEASURE, folder)
+    return dict(zip(views, found, strict=True))
 
 
 @needs_chromium
-@pytest.mark.parametrize("width", [360, 1200])
-def test_pictures_fit_their_page(width: int, tmp_path: Path) -> None:
+@pytest.mark.parametrize("width", WIDTHS)
+def test_pictures_fit_their_page(seen: dict[tuple[str, int], Any], width: int) -> None:
     """Five pictures in one page: none is cut off or distorted, no two texts of one overlap, and
     none of the texts sticks out, as the browser's own fonts are measured.
     """
-    page = f'<!doctype html><meta charset="utf-8"><body>{"".join(PICTURES)}</body>'
-    found = measure_in_browser(page, MEASURE, tmp_path, width)
+    found = seen["page", width]
     assert found["room"] == width
     assert found["wide"] <= found["room"]
     assert len(found["pictures"]) == len(PICTURES)
     for picture in found["pictures"]:
         shown = picture["shown"]
         assert shown["right"] <= width
-        assert abs(shown["width"] / shown["height"] - picture["page"]) < 0.01 * picture["page"]
+        scale = shown["width"] / picture["width"]
+        assert abs(shown["height"] / picture["height"] - scale) < 0.01
         texts = [(t["left"], t["top"], t["right"], t["bottom"]) for t in picture["texts"]]
         frame = (shown["left"], shown["top"] - 1, shown["right"], shown["bottom"] + 1)
         assert texts
@@ -60,19 +74,14 @@ def test_pictures_fit_their_page(width: int, tmp_path: Path) -> None:
 
 
 @needs_chromium
-@pytest.mark.parametrize("width", [360, 1200])
-def test_a_file_fits_its_window(width: int, tmp_path: Path) -> None:
+@pytest.mark.parametrize("width", WIDTHS)
+def test_a_file_fits_its_window(seen: dict[tuple[str, int], Any], width: int) -> None:
     """A picture that is opened as a file of its own is scaled to a narrow window, and not beyond
     its own size in a wide one.
     """
-    script = """
-    const shown = inner.documentElement.getBoundingClientRect();
-    const full = inner.documentElement.viewBox.baseVal.width;
-    return [inner.defaultView.innerWidth, shown.width, shown.height, full];
-    """
-    text = draw_braid(LONG, has_letters=True)
-    window, shown, height, full = measure_in_browser(text, script, tmp_path, width)
-    assert window == width
-    assert full > 400
-    assert shown == pytest.approx(min(width, full), abs=0.1)
-    assert height > 900  # the rest is reached by scrolling
+    found = seen["file", width]
+    (picture,) = found["pictures"]
+    assert found["room"] == width
+    assert picture["width"] > 400
+    assert picture["shown"]["width"] == pytest.approx(min(width, picture["width"]), abs=0.1)
+    assert picture["shown"]["height"] > 900  # the rest is reached by scrolling
