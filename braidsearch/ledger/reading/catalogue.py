@@ -92,7 +92,7 @@ def iter_rows(
     """
     file = CatalogueFile(
         Path(path),
-        Path(path).name if source is None else check_label(source.strip(), "source"),
+        check_label(Path(path).name if source is None else source.strip(), "source"),
         _checked_notation(notation),
         ignore_columns,
         progress,

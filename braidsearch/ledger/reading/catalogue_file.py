@@ -38,7 +38,7 @@ _NOT_IN_NOTES = re.compile(f"[{_CONTROL}]")
 _NOT_IN_LABELS = re.compile(f"[{_CONTROL}\t\n\r]")
 
 Progress = Callable[[int, int], None]
-"""Called with the bytes that were read and all there are."""
+"""Called with what was read and all there is: bytes, or characters of a .json file."""
 
 
 class Labels(NamedTuple):

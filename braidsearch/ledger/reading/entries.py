@@ -23,6 +23,7 @@ from braidsearch.words.link_notation import WORD, hint_at_notations
 _PLAIN_WORD = re.compile(
     r"(?:([1-9][0-9]{0,2}): )?(\[)?(-?[1-9][0-9]{0,2}(?:(?: |, ?)-?[1-9][0-9]{0,2})*)(?(2)\])"
 )
+_LONGEST_PLAIN_WORD = 6 * MAX_LETTERS
 _DIGEST_SIZE = 16
 
 
@@ -111,12 +112,12 @@ def _read_drawing(row: Row) -> tuple[Braid, tuple[str, ...]]:
 
 def _read_word(text: str) -> Braid:
     """``parse_word``; what most catalogues hold is read here, ten times as fast."""
-    match = _PLAIN_WORD.fullmatch(text) if len(text) < MAX_LETTERS else None
+    match = _PLAIN_WORD.fullmatch(text) if len(text) < _LONGEST_PLAIN_WORD else None
     if match is not None:
         letters = tuple(map(int, match[3].replace(",", " ").split()))
         needed = max(map(abs, letters)) + 1
         strands = int(match[1] or needed)
-        if strands >= needed:
+        if strands >= needed and len(letters) <= MAX_LETTERS:
             return Braid.trusted(letters, strands)
     try:
         return parse_word(text)

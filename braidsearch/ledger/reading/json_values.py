@@ -28,10 +28,11 @@ _AN_OBJECT = 'an object such as {"name": "trefoil", "link": "1 1 1"}'
 def iter_json_line_rows(file: CatalogueFile) -> Iterator[Row | Problem]:
     """The rows of a file with one JSON object a line; blank lines do not count."""
     for number, line in enumerate(file.iter_lines(), start=1):
-        if not line.strip():
+        content = line.strip()
+        if not content:
             continue
         try:
-            value = _STRICT.decode(line)
+            value = _STRICT.decode(content)
         except (ValueError, RecursionError) as error:
             yield file.problem(number, _explain(error))
         else:
@@ -65,6 +66,8 @@ def iter_json_rows(file: CatalogueFile) -> Iterator[Row | Problem]:
     if is_list and text[position:].strip() != "]":
         found = shown(text[position + 1 :].strip()) if position < len(text) else "the end"
         yield file.problem(text.count("\n") + 1, f"{found}: expected a list, and nothing behind it")
+    if file.progress is not None:
+        file.progress(len(text), len(text))
 
 
 def _decode_row(

@@ -31,15 +31,19 @@ def iter_line_rows(file: CatalogueFile) -> Iterator[Row | Problem]:
 def iter_code_rows(file: CatalogueFile, notation: str) -> Iterator[Row | Problem]:
     """The rows of a file of diagram codes: one a line, or one that takes all lines.
 
-    The lines are taken one by one where any of the first twenty is a code by itself. Otherwise
-    (a crossing a line, a component a line, brackets that close lines below) they are one code.
+    Lines are links of their own where all of the first twenty are codes by themselves, and one
+    code where none is (a crossing a line, brackets that close lines below). Where some are, as may
+    be with a component a line, it is one code if it is one at all.
     """
-    tried = list(islice(_iter_contents(file), _LINES_TRIED))
-    if len(tried) < 2 or any(_is_code(_split_name(content)[1], notation) for _, content in tried):
-        for line, content in _iter_contents(file):
-            yield _row_of_line(file, line, content, notation)
-    else:
-        yield make_row(file, 0, one_line(file.read_text()), notation)
+    tried = islice(_iter_contents(file), _LINES_TRIED)
+    are_codes = [_is_code(_split_name(content)[1], notation) for _, content in tried]
+    if len(are_codes) > 1 and not all(are_codes):
+        code = one_line(file.read_text())
+        if not any(are_codes) or _is_code(code, notation):
+            yield make_row(file, 0, code, notation)
+            return
+    for line, content in _iter_contents(file):
+        yield _row_of_line(file, line, content, notation)
 
 
 def _iter_contents(file: CatalogueFile) -> Iterator[tuple[int, str]]:
