@@ -2,18 +2,18 @@
 
 from __future__ import annotations
 
+import json
 from collections import deque
 from collections.abc import Callable, Iterator, Sequence
 from concurrent.futures import Executor, Future
 from dataclasses import dataclass, field
 from typing import TypeVar
 
-import networkx as nx
-
 from braidsearch.certificates import parse_certificate
 from braidsearch.errors import BraidsearchError
 from braidsearch.ledger.fingerprints import FIELDS, Fingerprint
-from braidsearch.ledger.store import Evidence, Store
+from braidsearch.ledger.groups import ImageUnion
+from braidsearch.ledger.store import COLUMNS, Evidence, Store, base_of, key_of
 from braidsearch.search.gate import is_confirmed, judge
 from braidsearch.words import Braid
 
@@ -26,11 +26,15 @@ _AHEAD = 64
 
 @dataclass(frozen=True, slots=True)
 class CheckReport:
-    """What a check has looked at, and every fault, one line each; no line: all is proven."""
+    """What a check has looked at, and every fault, one line each; no line: all is proven.
+
+    Entries that are not sorted yet are counted: nothing is said of them, so nothing is wrong.
+    """
 
     proofs: int
     values: int
     classes: int
+    unsorted: int = 0
     faults: tuple[str, ...] = field(default=())
 
     @property
@@ -44,15 +48,19 @@ def check_ledger(
 ) -> CheckReport:
     """Check the file, every proof by the verifier, every class and every stored value.
 
-    - SQLite's own checks of the file and of what refers to what;
+    - SQLite's own checks of the file and of what refers to what; every braid is one;
     - each proof is about the braids under which it is stored, and the verifier accepts it;
     - each braid of an entry has a proof that leads to its canonical form, and the forms of one
       class hang together by proofs;
     - the values by which classes are told apart are those that the verifier computes;
     - every two classes differ in such a value, by a proof, or are listed as undecided;
     - no proofs contradict each other.
+
+    Where the file or a braid in it is damaged, that alone is reported: nothing else has a meaning.
     """
-    faults = list(_faults_of_file(store))
+    faults = [*_faults_of_file(store), *_faults_of_braids(store)]
+    if faults:
+        return CheckReport(0, 0, 0, 0, tuple(faults))
     total = store.count("evidence") + store.count("classes")
     proofs, wrong = _check_proofs(store, executor, lambda done: report and report(done, total))
     faults += wrong
@@ -63,9 +71,9 @@ def check_ledger(
     faults += _faults_of_entries(store)
     faults += _faults_of_classes(store)
     faults += _faults_between_classes(store)
-    for number, same, different in store.rows("SELECT id, same, different FROM contradictions"):
-        faults.append(f"contradiction {number}: proof {same} and proof {different}")
-    return CheckReport(proofs, values, store.count("classes"), tuple(faults))
+    faults += _contradictions(store)
+    unsorted = store.count("entries", "braid NOT IN (SELECT braid FROM placed)")
+    return CheckReport(proofs, values, store.count("classes"), unsorted, tuple(faults))
 
 
 def _faults_of_file(store: Store) -> Iterator[str]:
@@ -74,6 +82,17 @@ def _faults_of_file(store: Store) -> Iterator[str]:
             yield f"file: {text}"
     for row in store.rows("PRAGMA foreign_key_check"):
         yield f"file: {row[0]}, row {row[1]}: refers to what is not there"
+
+
+def _faults_of_braids(store: Store) -> Iterator[str]:
+    for number, strands, word in store.rows("SELECT id, strands, word FROM braids"):
+        try:
+            braid = Braid(map(int, word.split()), strands)
+        except ValueError as error:  # InputError is one
+            yield f"braid {number}: {error}"
+        else:
+            if " ".join(map(str, braid.word)) != word:
+                yield f"braid {number}: {word!r}: expected single blanks between its letters"
 
 
 def check_proofs(items: Sequence[tuple[Evidence, Braid, Braid]]) -> list[str | None]:
@@ -120,13 +139,17 @@ def _proofs_with_braids(store: Store) -> Iterator[tuple[Evidence, Braid, Braid]]
 def check_values(items: Sequence[tuple[int, Braid, Fingerprint]]) -> list[list[str]]:
     """For each class the names of the values that the verifier does not confirm."""
     return [
-        [
-            name
-            for name, text in zip(FIELDS, marks.values, strict=True)
-            if text is not None and not is_confirmed(name, form, marks.value(name))
-        ]
+        [name for name in FIELDS if not _is_confirmed(name, form, marks)]
         for _, form, marks in items
     ]
+
+
+def _is_confirmed(name: str, form: Braid, marks: Fingerprint) -> bool:
+    try:
+        value = marks.value(name)
+    except ValueError:  # no JSON
+        return False
+    return value is None or is_confirmed(name, form, value)
 
 
 def _check_values(
@@ -151,25 +174,49 @@ def _faults_of_entries(store: Store) -> Iterator[str]:
     )
     for (number,) in rows:
         yield f"braid {number}: no proof leads to its canonical form"
+    for number, text in store.rows("SELECT id, remarks FROM entries"):
+        if not _is_list_of_texts(text):
+            yield f"entry {number}: its remarks are damaged"
+
+
+def _is_list_of_texts(text: str) -> bool:
+    try:
+        value = json.loads(text)
+    except ValueError:
+        return False
+    return isinstance(value, list) and all(isinstance(item, str) for item in value)
 
 
 def _faults_of_classes(store: Store) -> Iterator[str]:
-    graph = nx.Graph()
-    class_of = dict(store.rows("SELECT braid, class FROM forms"))
-    graph.add_nodes_from(class_of)
-    graph.add_edges_from(
-        store.rows(
-            "SELECT left, right FROM evidence WHERE verdict = 'same' AND symmetry = 'identity' "
-            "AND left IN (SELECT braid FROM forms) AND right IN (SELECT braid FROM forms)"
-        )
+    rows = store.rows(
+        "SELECT classes.id FROM classes LEFT JOIN forms ON forms.braid = classes.form "
+        "WHERE forms.class IS NOT classes.id"
     )
-    parts: dict[int, int] = {}
-    for part in nx.connected_components(graph):
-        for number in {class_of[form] for form in part}:
-            parts[number] = parts.get(number, 0) + 1
-    for number, count in sorted(parts.items()):
-        if count > 1:
-            yield f"class {number}: its proofs leave it in {count} parts"
+    for (number,) in rows:
+        yield f"class {number}: the form that represents it is none of its own"
+    union = ImageUnion()
+    for left, right in _proofs_inside_classes(store):
+        union.join(left, right)
+    parts: dict[int, set[int]] = {}
+    for form, number in store.rows("SELECT braid, class FROM forms"):
+        parts.setdefault(number, set()).add(union.find(form)[0])
+    for number, found in sorted(parts.items()):
+        if len(found) > 1:
+            yield f"class {number}: its proofs leave it in {len(found)} parts"
+    for row in store.rows("SELECT id, key, base, is_complete, " + COLUMNS + " FROM fingerprints"):
+        number, key, base, is_complete, *values = row
+        marks = Fingerprint(tuple(values))
+        if (key, base, is_complete) != (key_of(marks), base_of(marks), marks.is_complete):
+            yield f"fingerprint {number}: it is looked up under other values than it has"
+
+
+def _proofs_inside_classes(store: Store) -> list[tuple[int, int]]:
+    return store.rows(
+        "SELECT evidence.left, evidence.right FROM evidence "
+        "JOIN forms AS one ON one.braid = evidence.left "
+        "JOIN forms AS other ON other.braid = evidence.right "
+        "WHERE verdict = 'same' AND symmetry = 'identity' AND one.class = other.class"
+    )
 
 
 def _faults_between_classes(store: Store) -> Iterator[str]:
@@ -186,6 +233,25 @@ def _faults_between_classes(store: Store) -> Iterator[str]:
     for one, other in store.iter_agreeing_pairs():
         if frozenset((one, other)) not in known:
             yield f"classes {one} and {other}: nothing tells them apart, and no question is open"
+
+
+def _contradictions(store: Store) -> Iterator[str]:
+    """The contradictions that are known, and proofs that say what the classes deny."""
+    known = set()
+    for number, same, different in store.rows("SELECT id, same, different FROM contradictions"):
+        known |= {same, different}
+        yield f"contradiction {number}: proof {same} and proof {different}"
+    rows = store.rows(
+        "SELECT evidence.id, verdict, one.class, other.class FROM evidence "
+        "JOIN forms AS one ON one.braid = evidence.left "
+        "JOIN forms AS other ON other.braid = evidence.right WHERE symmetry = 'identity' "
+        "AND (verdict = 'same') != (one.class = other.class) ORDER BY evidence.id"
+    )
+    for number, verdict, one, other in rows:
+        if number not in known and verdict == "same":
+            yield f"proof {number}: it joins classes {one} and {other}, which are kept apart"
+        elif number not in known:
+            yield f"proof {number}: it tells braids apart that are both in class {one}"
 
 
 def _spread(

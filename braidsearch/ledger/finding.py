@@ -3,13 +3,13 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from typing import TYPE_CHECKING
 
 from braidsearch.certificates import Certificate, parse_certificate
 from braidsearch.certificates.joining import join_chain, join_different
 from braidsearch.errors import CapacityError
 from braidsearch.ledger.fingerprints import FIELDS, Fingerprint, fingerprint
 from braidsearch.ledger.judgements import fingerprint_certificate
-from braidsearch.ledger.placing import Effort, Finding, place
 from braidsearch.ledger.preparing import form_certificate, same_certificate
 from braidsearch.ledger.proofs import Proofs
 from braidsearch.ledger.reporting import first_entry
@@ -17,6 +17,9 @@ from braidsearch.ledger.store import Store, StoredEntry
 from braidsearch.search.canonical_form import visible_route
 from braidsearch.search.gate import judge
 from braidsearch.words import Braid
+
+if TYPE_CHECKING:
+    from braidsearch.ledger.placing import Finding
 
 _MOST_COMPARED = 5
 
@@ -54,10 +57,10 @@ class Found:
 
 
 class Finder:
-    """Looks up one braid, and keeps nothing of it."""
+    """Looks up one braid, and keeps nothing of it; ``nodes`` bounds each search."""
 
-    def __init__(self, store: Store, effort: Effort) -> None:
-        self.store, self.effort = store, effort
+    def __init__(self, store: Store, nodes: int) -> None:
+        self.store, self.nodes = store, nodes
         self.proofs = Proofs(store)
         self.classes = store.count("classes")
         self.unsorted = store.count_unsorted()
@@ -89,7 +92,7 @@ class Finder:
         candidates = self.store.agreeing_classes(marks)
         if not candidates:
             return self._of_new(start, marks)
-        findings = place(form, [candidate for _, candidate, _ in candidates], self.effort)
+        findings = self._place(form, [candidate for _, candidate, _ in candidates])
         numbers = {candidate: number for number, candidate, _ in candidates}
         if findings[-1].outcome == "same":
             findings = findings[-1:]
@@ -99,6 +102,11 @@ class Finder:
         outcomes = {one.outcome for one in compared}
         outcome = next(name for name in ("same", "undecided", "different") if name in outcomes)
         return Found(outcome, compared, self.classes, self._remaining(marks), self.unsorted)
+
+    def _place(self, form: Braid, candidates: list[Braid]) -> tuple[Finding, ...]:
+        from braidsearch.ledger.placing import Effort, place  # noqa: PLC0415 - loads the search, which look-ups do without
+
+        return place(form, candidates, Effort(self.nodes))
 
     def _of_known(self, number: int, before: Certificate | None) -> Found:
         """The class of a braid that is in the ledger, or whose form is."""

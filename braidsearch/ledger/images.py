@@ -1,18 +1,15 @@
-"""Classes that are mirror images or reverses of one another: the coarser grouping."""
+"""Which classes are mirror images or reverses of a form: look-ups first, then questions."""
 
 from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
 
-import networkx as nx
-
 from braidsearch.certificates import Certificate, format_certificate
 from braidsearch.certificates.joining import apply_symmetry_to_moves
 from braidsearch.ledger.fingerprints import Fingerprint, fingerprint
 from braidsearch.ledger.placing import Effort, Finding, ask
 from braidsearch.ledger.preparing import Prepared, prepare
-from braidsearch.ledger.store import Store
 from braidsearch.search.gate import judge
 from braidsearch.words import Braid, apply_symmetry
 
@@ -78,20 +75,3 @@ def ask_images(
         if findings[-1].outcome == "same":
             break
     return findings
-
-
-def group_classes(store: Store) -> list[list[int]]:
-    """The classes in groups that hang together by proofs, whatever their symmetries.
-
-    Each group and the list of them are in the order of the oldest class.
-    """
-    graph = nx.Graph()
-    graph.add_nodes_from(number for (number,) in store.rows("SELECT id FROM classes ORDER BY id"))
-    graph.add_edges_from(
-        store.rows(
-            "SELECT one.class, other.class FROM evidence "
-            "JOIN forms AS one ON one.braid = evidence.left "
-            "JOIN forms AS other ON other.braid = evidence.right WHERE verdict = 'same'"
-        )
-    )
-    return sorted(sorted(group) for group in nx.connected_components(graph))

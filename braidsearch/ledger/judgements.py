@@ -4,14 +4,17 @@ from __future__ import annotations
 
 import json
 from collections.abc import Sequence
+from typing import TYPE_CHECKING
 
 from braidsearch.certificates import Certificate, Distinction, format_certificate
 from braidsearch.ledger.fingerprints import FIELDS, Fingerprint
-from braidsearch.ledger.placing import Effort, Finding
-from braidsearch.ledger.preparing import Prepared
 from braidsearch.ledger.store import Store
 from braidsearch.search.gate import judge
 from braidsearch.words import Braid
+
+if TYPE_CHECKING:
+    from braidsearch.ledger.placing import Effort, Finding
+    from braidsearch.ledger.preparing import Prepared
 
 
 class Judgements:
@@ -27,6 +30,8 @@ class Judgements:
 
     def take_form(self, number: int, prepared: Prepared, findings: Sequence[Finding]) -> None:
         """Place a braid of an entry at its form; a new form joins a class or becomes one."""
+        from braidsearch.ledger.placing import Finding  # noqa: PLC0415 - loads the search, which look-ups do without
+
         store = self.store
         if store.is_placed(number):
             return
@@ -110,6 +115,8 @@ class Judgements:
 
     def _evidence_between(self, one: int, other: int) -> int | None:
         """A proof that two classes differ, by a stored one or by their fingerprints."""
+        from braidsearch.ledger.placing import Finding  # noqa: PLC0415 - loads the search, which look-ups do without
+
         inside = "(SELECT braid FROM forms WHERE class = ?)"
         number: int | None = self.store.one(
             "SELECT id FROM evidence WHERE verdict = 'different' AND symmetry = 'identity' AND "

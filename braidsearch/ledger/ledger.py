@@ -7,21 +7,22 @@ from collections.abc import Callable, Iterable, Sequence
 from concurrent.futures import Executor
 from dataclasses import dataclass
 from types import TracebackType
+from typing import TYPE_CHECKING
 
 from braidsearch.certificates import Certificate
 from braidsearch.errors import InputError
-from braidsearch.ledger.checking import CheckReport, check_ledger
-from braidsearch.ledger.executors import SerialExecutor
-from braidsearch.ledger.finding import Finder, Found
-from braidsearch.ledger.placing import Effort
 from braidsearch.ledger.proofs import Proofs
-from braidsearch.ledger.reading import Entry
-from braidsearch.ledger.recording import record_certificate
 from braidsearch.ledger.reporting import LedgerReport, OpenQuestion, open_questions, report_ledger
-from braidsearch.ledger.sorting import Report, Sorter, SortSummary
 from braidsearch.ledger.store import Store, StoredEntry
 from braidsearch.search.gate import judge
+from braidsearch.search.limits import SearchLimits
 from braidsearch.words import SYMMETRIES, Braid
+
+if TYPE_CHECKING:
+    from braidsearch.ledger.checking import CheckReport
+    from braidsearch.ledger.finding import Found
+    from braidsearch.ledger.reading import Entry
+    from braidsearch.ledger.sorting import Report, SortSummary
 
 DEFAULT_NODES = 2_000
 
@@ -85,14 +86,34 @@ class Ledger:
 
         Raises InputError for a name and source that another link has in the ledger.
         """
+        from braidsearch.ledger.reading.catalogue_file import check_label  # noqa: PLC0415 - for this
+
         added = known = 0
         with self.store.writing():
             for entry in entries:
+                check_label(entry.name, "name")
+                check_label(entry.source, "source")
                 if self.store.add_entry(entry):
                     added += 1
                 else:
                     known += 1
         return AddSummary(added, known)
+
+    def conflicts(self, entries: Sequence[Entry]) -> list[tuple[Entry, str]]:
+        """The entries whose name another link of their source has, in the ledger or before them.
+
+        Each with what is wrong in words.
+        """
+        seen: dict[tuple[str, str], Entry] = {}
+        found = []
+        for entry in entries:
+            other = seen.setdefault((entry.source, entry.name), entry)
+            if self.store.has_other(entry):
+                found.append((entry, f"{entry.name!r}: in the ledger it is another link"))
+            elif other.braid != entry.braid:
+                place = f"{other.file or 'before'}{f', line {other.line}' if other.line else ''}"
+                found.append((entry, f"{entry.name!r}: another link has this name: {place}"))
+        return [(entry, f"{said}: expected another name or source") for entry, said in found]
 
     def sort(
         self,
@@ -110,6 +131,10 @@ class Ledger:
         way; no clock decides anything. ``up_to`` names symmetries: which classes are such images
         of one another is asked as well. ``executor`` is one of the concurrent.futures kind.
         """
+        from braidsearch.ledger.executors import SerialExecutor  # noqa: PLC0415 - look-ups come faster
+        from braidsearch.ledger.placing import Effort  # noqa: PLC0415 - the same
+        from braidsearch.ledger.sorting import Sorter  # noqa: PLC0415 - the same
+
         effort = Effort(nodes, max_strands)
         effort.check()
         check_symmetries(up_to)
@@ -117,10 +142,11 @@ class Ledger:
 
     def find(self, braid: Braid, *, nodes: int = DEFAULT_NODES) -> Found:
         """The class of a link, with a certificate; else what it differs from and how."""
-        effort = Effort(nodes)
-        effort.check()
+        from braidsearch.ledger.finding import Finder  # noqa: PLC0415 - not needed to add
+
+        SearchLimits(seconds=None, nodes=nodes)  # raises where no search can keep them
         with self.store.reading():
-            return Finder(self.store, effort).find(braid)
+            return Finder(self.store, nodes).find(braid)
 
     def entry(self, reference: str) -> StoredEntry:
         """The entry that is meant by ``name``, by ``source/name`` or by ``#number``.
@@ -183,6 +209,8 @@ class Ledger:
         Returns what came of it in words: what it joins or holds apart, or what it contradicts.
         Raises InputError for a certificate that does not hold, and for braids that are not sorted.
         """
+        from braidsearch.ledger.recording import record_certificate  # noqa: PLC0415 - look-ups come faster
+
         return record_certificate(self.store, certificate)
 
     def report(self) -> LedgerReport:
@@ -197,6 +225,9 @@ class Ledger:
         progress: Callable[[int, int], None] | None = None,
     ) -> CheckReport:
         """Verify everything that the ledger rests on, by the independent verifier."""
+        from braidsearch.ledger.checking import check_ledger  # noqa: PLC0415 - look-ups come faster
+        from braidsearch.ledger.executors import SerialExecutor  # noqa: PLC0415 - the same
+
         with self.store.reading():
             return check_ledger(self.store, executor or SerialExecutor(), progress)
 

@@ -12,6 +12,8 @@ from braidsearch.ledger.store import Store
 from braidsearch.search.gate import judge
 from braidsearch.words import Braid, format_word
 
+ALREADY = "it is there already"
+
 
 def record_certificate(store: Store, certificate: Certificate) -> str:
     """Keep a proof about two braids of the ledger; what came of it, in words.
@@ -19,13 +21,12 @@ def record_certificate(store: Store, certificate: Certificate) -> str:
     Raises InputError for a proof that the verifier does not accept, for one of several symmetries
     at once, and for braids that are not in the ledger.
     """
-    report = judge(certificate)
-    if not report.valid:
-        raise InputError(f"the certificate does not hold: {report.reason}")
+    check_certificate(store, certificate)
     symmetries = [item.symmetry for item in certificate.distinctions]
     if certificate.symmetry is not None:
         symmetries.append(certificate.symmetry)
     with store.writing():
+        proofs = store.count("evidence")
         before = store.count("classes"), store.count("contradictions")
         for symmetry in symmetries:
             _record(store, _for_symmetry(certificate, symmetry), symmetry)
@@ -34,7 +35,16 @@ def record_certificate(store: Store, certificate: Certificate) -> str:
         return "it contradicts proofs that the ledger has: both are kept, and no class is changed"
     if after[0] < before[0]:
         return "it joins two classes"
-    return "it is kept as one more proof"
+    return ALREADY if store.count("evidence") == proofs else "it is kept as one more proof"
+
+
+def check_certificate(store: Store, certificate: Certificate) -> None:
+    """Raise InputError for a certificate that ``record_certificate`` would refuse."""
+    report = judge(certificate)
+    if not report.valid:
+        raise InputError(f"the certificate does not hold: {report.reason}")
+    for braid in (certificate.left, certificate.right):
+        _number_of(store, braid)
 
 
 def _for_symmetry(certificate: Certificate, symmetry: str) -> Certificate:
@@ -51,6 +61,12 @@ def _record(store: Store, certificate: Certificate, symmetry: str) -> None:
     before = proofs.same(near, left, ("identity",))
     after = proofs.same(right, far, ("identity",))
     joined = join_chain([part for part in (before, certificate, after) if part is not None])
+    text = format_certificate(joined)
+    if store.one(
+        "SELECT 1 FROM evidence WHERE left = ? AND right = ? AND certificate = ?",
+        [near, far, text],
+    ):
+        return
     if not judge(joined).valid:
         raise ValueError("the verifier did not accept a joined proof")
     finding = Finding(
@@ -58,7 +74,7 @@ def _record(store: Store, certificate: Certificate, symmetry: str) -> None:
         joined.right,
         symmetry,
         joined.verdict,
-        format_certificate(joined),
+        text,
         "recorded from a certificate",
     )
     judgements = Judgements(store, Effort())

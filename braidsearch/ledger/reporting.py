@@ -4,11 +4,14 @@ from __future__ import annotations
 
 from collections import defaultdict
 from dataclasses import dataclass
+from typing import TYPE_CHECKING
 
-from braidsearch.ledger.images import group_classes
-from braidsearch.ledger.placing import Effort
+from braidsearch.ledger.groups import group_classes
 from braidsearch.ledger.store import Store, StoredEntry
 from braidsearch.words import Braid
+
+if TYPE_CHECKING:
+    from braidsearch.ledger.placing import Effort
 
 
 @dataclass(frozen=True, slots=True)

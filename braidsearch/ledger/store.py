@@ -10,19 +10,22 @@ from contextlib import contextmanager
 from dataclasses import dataclass
 from functools import lru_cache
 from itertools import combinations
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
 from braidsearch.errors import InputError
 from braidsearch.ledger.fingerprints import FIELDS, Fingerprint
-from braidsearch.ledger.placing import Effort, Finding
 from braidsearch.ledger.reading import Entry
 from braidsearch.ledger.schema import connect, readable
 from braidsearch.words import Braid
 
+if TYPE_CHECKING:
+    from braidsearch.ledger.placing import Effort, Finding
+
 Revision = tuple[int, int, int]
 """Braids placed, classes, the number of the last proof."""
 
-_COLUMNS = ", ".join(name.replace("-", "_") for name in FIELDS)
+COLUMNS = ", ".join(name.replace("-", "_") for name in FIELDS)
+"""The columns of a fingerprint's values."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -160,6 +163,15 @@ class Store:
         )
         return True
 
+    def has_other(self, entry: Entry) -> bool:
+        """Whether another link has the name and the source of an entry."""
+        rows = self.rows(
+            "SELECT strands, word FROM entries JOIN braids ON braids.id = braid "
+            "WHERE source = ? AND name = ?",
+            [entry.source, entry.name],
+        )
+        return bool(rows) and rows[0] != _columns_of(entry.braid)
+
     def entries(
         self, condition: str = "1", values: Iterable[Any] = (), most: int = -1
     ) -> list[StoredEntry]:
@@ -210,7 +222,7 @@ class Store:
     def fingerprint_of_class(self, number: int) -> Fingerprint:
         """The fingerprint of the form that represents a class."""
         rows = self.rows(
-            f"SELECT {_COLUMNS} FROM fingerprints JOIN classes ON fingerprint = fingerprints.id "
+            f"SELECT {COLUMNS} FROM fingerprints JOIN classes ON fingerprint = fingerprints.id "
             "WHERE classes.id = ?",
             [number],
         )
@@ -221,11 +233,11 @@ class Store:
         if marks.is_complete:
             condition, values = "key = ?", [key_of(marks)]
             condition += " OR (base = ? AND is_complete = 0)"
-            values.append(_base_of(marks))
+            values.append(base_of(marks))
         else:
-            condition, values = "base = ?", [_base_of(marks)]
+            condition, values = "base = ?", [base_of(marks)]
         rows = self.rows(
-            f"SELECT classes.id, strands, word, {_COLUMNS} FROM fingerprints "
+            f"SELECT classes.id, strands, word, {COLUMNS} FROM fingerprints "
             "JOIN classes ON fingerprint = fingerprints.id JOIN braids ON braids.id = form "
             f"WHERE {condition} ORDER BY classes.id",
             values,
@@ -251,7 +263,7 @@ class Store:
         depth = max((place for place, count in enumerate(counts) if count), default=0)
         agrees, values = _agreement(marks, depth)
         rows = self.rows(
-            f"SELECT classes.id, strands, word, {_COLUMNS} FROM fingerprints "
+            f"SELECT classes.id, strands, word, {COLUMNS} FROM fingerprints "
             "JOIN classes ON fingerprint = fingerprints.id JOIN braids ON braids.id = form "
             f"WHERE {agrees} ORDER BY classes.id LIMIT ?",
             [*values, most],
@@ -261,7 +273,7 @@ class Store:
     def all_classes(self) -> Iterator[tuple[int, Braid, Fingerprint]]:
         """Every class with the form that represents it and the fingerprint of that."""
         statement = (
-            f"SELECT classes.id, strands, word, {_COLUMNS} FROM classes "
+            f"SELECT classes.id, strands, word, {COLUMNS} FROM classes "
             "JOIN fingerprints ON fingerprint = fingerprints.id JOIN braids ON braids.id = form "
             "ORDER BY classes.id"
         )
@@ -278,7 +290,7 @@ class Store:
         lacking = self.rows("SELECT DISTINCT base FROM fingerprints WHERE is_complete = 0")
         for (base,) in lacking:
             rows = self.rows(
-                f"SELECT classes.id, classes.fingerprint, {_COLUMNS} FROM classes "
+                f"SELECT classes.id, classes.fingerprint, {COLUMNS} FROM classes "
                 "JOIN fingerprints ON fingerprint = fingerprints.id WHERE base = ?",
                 [base],
             )
@@ -310,9 +322,9 @@ class Store:
             return int(known)
         marked = ", ".join("?" * (3 + len(FIELDS)))
         statement = (
-            f"INSERT INTO fingerprints (key, base, is_complete, {_COLUMNS}) VALUES ({marked})"
+            f"INSERT INTO fingerprints (key, base, is_complete, {COLUMNS}) VALUES ({marked})"
         )
-        values = [key, _base_of(marks), int(marks.is_complete), *marks.values]
+        values = [key, base_of(marks), int(marks.is_complete), *marks.values]
         return int(self.execute(statement, values).lastrowid or 0)
 
     def add_form(self, form: int, number: int) -> None:
@@ -371,6 +383,8 @@ class Store:
 
     def undecided(self) -> list[tuple[int, int, str, Effort, str]]:
         """The open questions: two forms, the symmetry, the limits tried, the reason."""
+        from braidsearch.ledger.placing import Effort  # noqa: PLC0415 - loads the search, which look-ups do without
+
         rows = self.rows("SELECT * FROM undecided ORDER BY left, right, symmetry")
         return [
             (left, right, symmetry, Effort(nodes, most), reason)
@@ -419,7 +433,8 @@ def _agreement(marks: Fingerprint, depth: int) -> tuple[str, list[str]]:
     return agrees, values
 
 
-def _base_of(marks: Fingerprint) -> str:
+def base_of(marks: Fingerprint) -> str:
+    """The text under which fingerprints are looked up when one lacks values."""
     return json.dumps(marks.base)
 
 
