@@ -5,7 +5,7 @@ import time
 from itertools import pairwise
 
 import pytest
-from hypothesis import given
+from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from braidsearch.certificates import Certificate
@@ -34,12 +34,14 @@ from tests.strategies import braids, move_chains
 TREFOIL, EIGHT = Braid([1, 1, 1]), Braid([1, -2, 1, -2])
 
 
+@settings(max_examples=60)
 @given(move_chains())
 def test_the_chains_of_these_tests(chain):
     """What is joined here is true to begin with, and damage to it is seen."""
     assert holds_for(certificate_of(chain, "identity"), chain.start, chain.current)
 
 
+@settings(max_examples=60)
 @given(move_chains(), symmetries)
 def test_moves_of_the_images(chain, symmetry):
     """Moves from one braid to another become moves from image to image, for each symmetry."""
@@ -51,6 +53,7 @@ def test_moves_of_the_images(chain, symmetry):
     assert holds_for(Certificate.same(start, end, "identity", moves), start, end)
 
 
+@settings(max_examples=60)
 @given(move_chains(), symmetries)
 def test_images_of_images(chain, symmetry):
     """The images of the images are the moves; two conjugations added on the way cancel."""
@@ -68,6 +71,7 @@ def test_images_of_images(chain, symmetry):
         assert len(twice) <= len(chain.moves)
 
 
+@settings(max_examples=60)
 @given(move_chains(), symmetries)
 def test_sameness_turned_round(chain, symmetry):
     """closure(left) = s(closure(right)) turned round holds as well; twice is the claim itself."""
@@ -93,6 +97,7 @@ def test_symmetries_compose(first, second, braid):
     assert (composed == "identity") == (first == second)
 
 
+@settings(max_examples=60)
 @given(st.data(), move_chains(), symmetries, symmetries)
 def test_two_joined(data, chain, one, other):
     """A ~ s(B) and B ~ t(C) make A ~ st(C), with the moves of both."""
@@ -104,6 +109,7 @@ def test_two_joined(data, chain, one, other):
     assert holds_for(joined, first.left, second.right)
 
 
+@settings(max_examples=60)
 @given(paths())
 def test_a_path_joined(path):
     """A path makes one certificate, no longer than it, that meets no word twice."""
@@ -121,6 +127,7 @@ def test_a_path_joined(path):
     assert (True, True) not in pairwise(staying)
 
 
+@settings(max_examples=60)
 @given(paths())
 def test_there_and_back(path):
     """A path walked back leaves nothing, and walked a third time the path itself."""
