@@ -2,8 +2,9 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
+from functools import partial
 
 from braidsearch.certificates import Certificate, format_certificate
 from braidsearch.errors import CapacityError
@@ -20,11 +21,10 @@ from braidsearch.search.query import Query
 from braidsearch.search.route import Route
 from braidsearch.words import Braid
 
-_GLANCE_NODES = 240  # conjugacy classes that the short search enters, in two instalments
-_FIRST_SHARE = 0.25
-_PACE = Pace(expansions_first=2, turns_an_expansion=12)
-_CHEAP_SECONDS = 0.01  # of the finer invariants asked between the two, by estimate
+_STEPS: tuple[tuple[int, float], ...] = ((60, 0.01), (1_000, 0.1))
+"""Nodes up to which a search for sameness goes, and then the dearest invariants' seconds."""
 
+_PACE = Pace(expansions_first=2, turns_an_expansion=12)
 _ROUNDS = ((0.1, 0.1), (0.2, 0.5), (0.4, 5.0), (0.6, 20.0))
 """As of a query, for searches that are short beside the dearer invariants."""
 
@@ -100,7 +100,7 @@ def place(form: Braid, candidates: Sequence[Braid], effort: Effort) -> tuple[Fin
     """
     questions = [_Question(form, candidate, effort) for candidate in candidates]
     findings: dict[Braid, Finding] = {}
-    for step in (_Question.glance, _Question.tell_apart, _Question.look_on, _Question.ask):
+    for step in _iter_steps(effort):
         for question in questions:
             if question.right in findings:
                 continue
@@ -110,6 +110,15 @@ def place(form: Braid, candidates: Sequence[Braid], effort: Effort) -> tuple[Fin
             if found is not None:
                 findings[question.right] = found
     return tuple(findings[candidate] for candidate in candidates)
+
+
+def _iter_steps(effort: Effort) -> Iterator[Callable[[_Question], Finding | None]]:
+    for nodes, seconds in _STEPS:
+        if nodes < effort.nodes:
+            yield partial(_Question.search, nodes=nodes)
+            yield partial(_Question.tell_apart, seconds=seconds)
+    yield partial(_Question.search, nodes=effort.nodes)
+    yield _Question.ask
 
 
 def ask(left: Braid, right: Braid, symmetry: str, effort: Effort) -> Finding:
@@ -131,44 +140,36 @@ class _Question:
 
     def __init__(self, form: Braid, candidate: Braid, effort: Effort) -> None:
         self.left, self.right, self.effort = form, candidate, effort
-        limits = SearchLimits(None, min(_GLANCE_NODES, effort.nodes), effort.max_strands)
-        self.budget = Budget(limits)
+        self.budget = Budget(effort.limits)
         # Canonical forms up to 3 strands are equal, or the links differ: no search is needed.
         self.is_classified = is_classified(form) and is_classified(candidate)
         self.meeting: Meeting | None = None
 
-    def glance(self) -> Finding | None:
-        """A search so short that it costs less than an invariant."""
-        return self._search(_FIRST_SHARE)
-
-    def tell_apart(self) -> Finding | None:
-        """Finer invariants that cost little."""
+    def tell_apart(self, seconds: float) -> Finding | None:
+        """Finer invariants that cost up to so many seconds each, by estimate."""
         plain = Route(self.left), Route(self.right)
         distinguisher = Distinguisher(self.left, self.right, "identity")
         steps = three_braid_ladder if self.is_classified else finer_ladder
-        found = distinguisher.find(*plain, _CHEAP_SECONDS, self.budget, steps)
+        found = distinguisher.find(*plain, seconds, self.budget, steps)
         if found is None or distinguisher.found_by is None:
             return None
         certificate = Certificate.different(self.left, self.right, [found])
         reason = f"told apart by the {distinguisher.found_by.title}"
         return _finding(certificate, "identity", reason)
 
-    def look_on(self) -> Finding | None:
-        """The search gone on with."""
-        return self._search(1.0)
-
     def ask(self) -> Finding:
         """The whole question."""
         return ask(self.left, self.right, "identity", self.effort)
 
-    def _search(self, share: float) -> Finding | None:
+    def search(self, nodes: int) -> Finding | None:
+        """The search for moves, begun or gone on with, until so many nodes were entered."""
         if self.is_classified:
             return None
         try:
             if self.meeting is None:
                 plain = Route(self.left), Route(self.right)
                 self.meeting = Meeting(*plain, self.budget, _PACE)
-            if self.meeting.run(share) is not Ending.FOUND:
+            if self.meeting.run(nodes / max(1, self.effort.nodes)) is not Ending.FOUND:
                 return None
         except CapacityError:
             return None

@@ -14,7 +14,7 @@ _FULL, _OUT_OF_STEPS = -1, -2
 
 
 def without_handles(word: list[int], steps: int) -> list[int] | None:
-    """The word without handles; None where the steps or the room run out, or nothing is compiled."""
+    """The word without handles; None where steps or room run out, or nothing is compiled."""
     if not is_compiled():
         return None
     room = _TIMES * len(word) + _ROOM
