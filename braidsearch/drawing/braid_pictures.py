@@ -189,6 +189,9 @@ def _cuts(count: int, strands: int, options: Options) -> list[tuple[int, int]]:
     else:
         most = count  # no second part would fit beside the first
     parts = max(1, -(-count // max(1, most)))
+    beside = max(1, int(COMFORTABLE_WIDTH / width)) if options.is_downwards else 1
+    if parts > beside:
+        parts = min(count, -(-parts // beside) * beside)  # the last line is as full as the others
     edges = [count * part // parts for part in range(parts + 1)]
     return list(pairwise(edges))
 
