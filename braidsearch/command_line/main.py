@@ -22,6 +22,7 @@ from braidsearch.errors import BraidsearchError, InputError
 COMMANDS: dict[str, str] = {
     "compare": "say whether two closed braids are the same link, with a certificate",
     "verify": "replay a certificate",
+    "explain": "a proof in words, step by step, as text or as LaTeX",
     "weave": "a closed braid for a drawing or a curve in space",
     "tighten": "fewest strands, then fewest letters, for the same link",
     "symmetry": "which mirror images and reverses of a link are the same link again",

@@ -48,7 +48,7 @@ def _frame_start(letters: list[int], end: int, direction: int) -> int | None:
 
 
 def _reduce_frame(chain: RelationChain, start: int, end: int, direction: int, most: int) -> None:
-    """Reduce what makes the frame no handle, then the handle; gives up beyond ``most`` relations."""
+    """Reduce the handles inside, then the handle that is left; gives up beyond ``most``."""
     letters = chain.letters
     following = abs(letters[start]) + direction
     while len(chain.relations) <= most:

@@ -11,7 +11,7 @@ from braidsearch.moves.elementary_traces import commutations_between, sort_by_co
 def postpone_commutations(
     word: Letters, relations: Sequence[Relation], target: Letters
 ) -> list[Relation]:
-    """Relations from ``word`` to ``target`` with the same insertions, cancellations, braid relations.
+    """Relations from ``word`` to ``target``, the same ones but for the far commutations.
 
     Letters are followed by name: ``given`` is their order in the chain that is given, ``made``
     that in the chain that is made, which is equal to it by far commutations at all times. A

@@ -13,7 +13,6 @@ from braidsearch.moves.elementary_relations import (
     Relation,
     RelationChain,
     backwards_chain,
-    count_essential,
     reversed_chain,
 )
 from braidsearch.moves.elementary_search import search_relations, shorten_chain
@@ -66,7 +65,7 @@ def _join(word: Letters, target: Letters) -> list[Relation]:
 
 
 def _iter_routes(word: Letters, target: Letters) -> Iterator[list[Relation]]:
-    """Ways by handle reduction: from both ends of the generators, and from both ends of the words."""
+    """Ways by handle reduction, with generators and with words read from either end."""
     backwards, target_backwards = word[::-1], target[::-1]
     for direction in (1, -1):
         yield from _iter_reductions(word, target, direction)
@@ -75,7 +74,7 @@ def _iter_routes(word: Letters, target: Letters) -> Iterator[list[Relation]]:
 
 
 def _iter_reductions(word: Letters, target: Letters, direction: int) -> Iterator[list[Relation]]:
-    """Reduce both words first, where they then meet or are near; or reduce what parts them alone."""
+    """Reduce both words, and what then parts them; or what parts them from the start."""
     there, back = RelationChain(word), RelationChain(target)
     for chain in (there, back):
         reduce_chain_handles(chain, direction, MAX_RELATIONS)
