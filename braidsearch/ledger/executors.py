@@ -6,7 +6,7 @@ import os
 import signal
 import threading
 from collections.abc import Callable, Iterator
-from concurrent.futures import Executor, Future, ProcessPoolExecutor
+from concurrent.futures import BrokenExecutor, Executor, Future, ProcessPoolExecutor
 from contextlib import contextmanager
 from multiprocessing import get_context, parent_process
 from typing import Any
@@ -56,7 +56,16 @@ def open_executor(processes: int | None = None, scheduler: str | None = None) ->
         return
     pool = ProcessPoolExecutor(count, mp_context=get_context("spawn"), initializer=_begin_worker)
     try:
+        with _interrupts_held():
+            for _ in range(count):
+                pool.submit(available_cores)  # anything: a process is started for each
         yield pool
+    except BrokenExecutor:
+        _end_now(pool)
+        raise InputError(
+            "a worker process was ended from outside, or for want of memory: what was kept before "
+            "is not lost: expected to run the command again, perhaps with fewer processes"
+        ) from None
     except BaseException:
         _end_now(pool)
         raise
@@ -68,6 +77,23 @@ def available_cores() -> int:
     if hasattr(os, "sched_getaffinity"):
         return len(os.sched_getaffinity(0))
     return os.cpu_count() or 1
+
+
+@contextmanager
+def _interrupts_held() -> Iterator[None]:
+    """Let interrupts wait; processes that are started meanwhile never receive any.
+
+    Ctrl-C goes to all processes of a terminal, and one that is only about to begin would answer it
+    with a traceback.
+    """
+    if not hasattr(signal, "pthread_sigmask"):
+        yield
+        return
+    before = signal.pthread_sigmask(signal.SIG_BLOCK, {signal.SIGINT})
+    try:
+        yield
+    finally:
+        signal.pthread_sigmask(signal.SIG_SETMASK, before)
 
 
 def _begin_worker() -> None:
@@ -100,8 +126,9 @@ def _dask_executor(address: str) -> Iterator[Executor]:
             f"--scheduler {address}: the library of Dask clusters is missing: "
             "expected braidsearch installed with its extra, as braidsearch[cluster]"
         ) from None
+    open_client: Any = Client  # the library has no types
     try:
-        client = Client(address, timeout="10s", set_as_default=False)
+        client = open_client(address, timeout="10s", set_as_default=False)
     except (OSError, ValueError, TypeError) as error:
         reason = str(error).splitlines()[0] if str(error) else type(error).__name__
         raise InputError(
