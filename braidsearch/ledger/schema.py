@@ -18,6 +18,13 @@ VERSION = 1
 WAIT_SECONDS = 60.0
 """How long a writer waits for another one to finish."""
 
+EXPECTED_INTACT = (
+    "expected an intact ledger; restore a copy, or save what can still be read with ledger export"
+)
+"""What is said of a damaged ledger."""
+
+_LONGEST_TEXT = 200
+
 TABLES = """
 CREATE TABLE braids (
     id INTEGER PRIMARY KEY, strands INTEGER NOT NULL, word TEXT NOT NULL,
@@ -73,6 +80,15 @@ CREATE TABLE contradictions (
     different INTEGER NOT NULL REFERENCES evidence, left INTEGER NOT NULL REFERENCES classes,
     right INTEGER NOT NULL REFERENCES classes
 ) STRICT;
+CREATE INDEX copy_of_entries ON entries (note, given, remarks);
+CREATE INDEX copy_of_evidence ON evidence (symmetry, verdict, reason);
+CREATE INDEX copy_of_undecided ON undecided (nodes, max_strands, reason);
+CREATE INDEX copy_of_contradictions ON contradictions (same, different, left, right);
+"""
+"""The statements that make the tables.
+
+Whatever no proof and no other index holds once more is in an index ``copy_of_...``: SQLite's own
+check compares a table with its indexes, so that no value can be damaged unnoticed.
 """
 
 
@@ -110,16 +126,26 @@ def _set_up(connection: sqlite3.Connection, name: str, create: bool) -> None:
     )
     if application != APPLICATION:
         raise InputError(f"{name}: an SQLite file, but no ledger: expected one made by ledger add")
-    if version > VERSION:
+    if version != VERSION:
+        maker = "a newer" if version > VERSION else "no known"
         raise InputError(
-            f"{name}: a ledger of version {version}, made by a newer braidsearch: "
+            f"{name}: a ledger of version {version}, made by {maker} braidsearch: "
             f"expected version {VERSION}"
         )
     connection.execute("PRAGMA synchronous = FULL")
 
 
 def _is_empty(connection: sqlite3.Connection) -> bool:
-    return not connection.execute("SELECT count(*) FROM sqlite_master").fetchone()[0]
+    """Whether nobody has made anything of the file yet."""
+    tables, application, version = (
+        connection.execute(question).fetchone()[0]
+        for question in (
+            "SELECT count(*) FROM sqlite_master",
+            "PRAGMA application_id",
+            "PRAGMA user_version",
+        )
+    )
+    return not (tables or application or version)
 
 
 def _create(connection: sqlite3.Connection) -> None:
@@ -149,7 +175,9 @@ def readable(name: str) -> Iterator[None]:
 
 
 def _meaning(error: sqlite3.Error) -> str:
-    text = str(error)
+    text = "".join(sign if sign.isprintable() else "?" for sign in str(error))[:_LONGEST_TEXT]
+    if "malformed" in text or "corrupt" in text or "decode" in text:
+        return f"damaged ({text}): {EXPECTED_INTACT}"
     if "full" in text or "disk I/O" in text:
         return (
             f"{text}: the step under way was not kept, all before it was: "
@@ -159,13 +187,8 @@ def _meaning(error: sqlite3.Error) -> str:
         return "another process is writing in it: expected it to finish first"
     if "not a database" in text:
         return "no ledger: expected an SQLite file made by ledger add"
-    if "malformed" in text or "corrupt" in text:
-        return (
-            f"damaged ({text}): expected an intact ledger; restore a copy, "
-            "or save what can still be read with ledger export"
-        )
     if "readonly" in text:
-        return "no permission to write: expected a ledger that can be written"
+        return "no permission to write: expected a ledger, in a folder, that can be written"
     if "unable to open" in text:
-        return "cannot be opened: expected a file that can be read"
-    return f"{text}: expected an intact ledger"
+        return "cannot be opened: expected a file that can be read, in a folder that can be written"
+    return f"{text}: {EXPECTED_INTACT}"

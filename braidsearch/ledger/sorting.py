@@ -88,7 +88,9 @@ class Sorter:
                 self.executor.submit(ask, *self._braids(left, right), symmetry, self.effort)
                 for left, right, symmetry in batch
             ]
-            for (left, right, _), task in zip(batch, tasks, strict=True):
+            for (left, right, symmetry), task in zip(batch, tasks, strict=True):
+                if not self.store.is_undecided(left, right, symmetry):
+                    continue  # it followed from the answers before it
                 finding = task.result()
                 with self._changing():
                     self.judgements.take_answer(left, right, finding)

@@ -81,6 +81,11 @@ class Store(EntryRows, ClassRows):
             for left, right, symmetry, nodes, most, reason in rows
         ]
 
+    def is_undecided(self, left: int, right: int, symmetry: str) -> bool:
+        """Whether a question is open still."""
+        condition = "left = ? AND right = ? AND symmetry = ?"
+        return bool(self.one(f"SELECT 1 FROM undecided WHERE {condition}", [left, right, symmetry]))
+
     def add_contradiction(self, same: int, different: int, left: int, right: int) -> None:
         """Keep that two proofs contradict each other."""
         self.execute(
