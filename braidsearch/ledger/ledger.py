@@ -13,6 +13,7 @@ from braidsearch.certificates import Certificate
 from braidsearch.errors import InputError
 from braidsearch.ledger.proofs import Proofs
 from braidsearch.ledger.reporting import LedgerReport, OpenQuestion, open_questions, report_ledger
+from braidsearch.ledger.soundness import blaming_damage
 from braidsearch.ledger.store import Store, StoredEntry
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import SearchLimits
@@ -89,7 +90,7 @@ class Ledger:
         from braidsearch.ledger.reading.catalogue_file import check_label  # noqa: PLC0415 - for this
 
         added = known = 0
-        with self.store.writing():
+        with blaming_damage(self.store), self.store.writing():
             for entry in entries:
                 check_label(entry.name, "name")
                 check_label(entry.source, "source")
@@ -138,14 +139,15 @@ class Ledger:
         effort = Effort(nodes, max_strands)
         effort.check()
         check_symmetries(up_to)
-        return Sorter(self.store, effort, executor or SerialExecutor(), progress).sort(up_to)
+        with blaming_damage(self.store):
+            return Sorter(self.store, effort, executor or SerialExecutor(), progress).sort(up_to)
 
     def find(self, braid: Braid, *, nodes: int = DEFAULT_NODES) -> Found:
         """The class of a link, with a certificate; else what it differs from and how."""
         from braidsearch.ledger.finding import Finder  # noqa: PLC0415 - not needed to add
 
         SearchLimits(seconds=None, nodes=nodes)  # raises where no search can keep them
-        with self.store.reading():
+        with blaming_damage(self.store), self.store.reading():
             return Finder(self.store, nodes).find(braid)
 
     def entry(self, reference: str) -> StoredEntry:
@@ -173,7 +175,7 @@ class Ledger:
         """
         check_symmetries(up_to)
         asked = tuple(dict.fromkeys(("identity", *up_to)))
-        with self.store.reading():
+        with blaming_damage(self.store), self.store.reading():
             one, other = (self._sorted_entry(name) for name in (left, right))
             proofs = Proofs(self.store)
             certificate = proofs.same(one.braid_number, other.braid_number, asked)
@@ -211,11 +213,12 @@ class Ledger:
         """
         from braidsearch.ledger.recording import record_certificate  # noqa: PLC0415 - look-ups come faster
 
-        return record_certificate(self.store, certificate)
+        with blaming_damage(self.store):
+            return record_certificate(self.store, certificate)
 
     def report(self) -> LedgerReport:
         """All classes with their entries, groups up to symmetry, what is open or contradictory."""
-        with self.store.reading():
+        with blaming_damage(self.store), self.store.reading():
             return report_ledger(self.store)
 
     def check(
