@@ -5,7 +5,7 @@ from __future__ import annotations
 import os
 import sqlite3
 from collections.abc import Iterable, Iterator
-from contextlib import contextmanager
+from contextlib import contextmanager, suppress
 from typing import Any
 
 from braidsearch.ledger.schema import connect, readable
@@ -29,22 +29,25 @@ class Database:
     @contextmanager
     def writing(self) -> Iterator[None]:
         """A transaction: what is changed inside is kept as a whole, or, after an error, not."""
-        self.execute("BEGIN IMMEDIATE")
         try:
+            self.execute("BEGIN IMMEDIATE")
             yield
             self.execute("COMMIT")
-        except BaseException:
-            if self._connection.in_transaction:
-                self._connection.execute("ROLLBACK")
-            raise
+        finally:
+            self._roll_back()
 
     @contextmanager
     def reading(self) -> Iterator[None]:
         """One state of the ledger, whatever other processes write meanwhile."""
-        self.execute("BEGIN")
         try:
+            self.execute("BEGIN")
             yield
         finally:
+            self._roll_back()
+
+    def _roll_back(self) -> None:
+        """Give up what is not committed; where even that fails, closing the file does it."""
+        with suppress(sqlite3.Error):
             if self._connection.in_transaction:
                 self._connection.execute("ROLLBACK")
 

@@ -12,7 +12,7 @@ from typing import Any
 from braidsearch.errors import InputError
 from braidsearch.ledger.database import Database
 from braidsearch.ledger.reading import Entry
-from braidsearch.words import Braid
+from braidsearch.words import MAX_STRANDS, Braid
 
 
 @dataclass(frozen=True, slots=True)
@@ -135,8 +135,15 @@ def _columns_of(braid: Braid) -> tuple[int, str]:
 
 
 def braid_from(strands: int, word: str) -> Braid:
-    """The braid of a row."""
-    return Braid.trusted(tuple(map(int, word.split())), strands)
+    """The braid of a row.
+
+    Raises ValueError for what is no braid, which stands in damaged files alone.
+    """
+    letters = tuple(map(int, word.split()))
+    most = max(map(abs, letters), default=0)
+    if not 1 <= strands <= MAX_STRANDS or 0 in letters or most >= strands:
+        raise ValueError(f"{word!r} on {strands} strands: expected a braid")
+    return Braid.trusted(letters, strands)
 
 
 def _entry_from(row: tuple[Any, ...]) -> StoredEntry:
