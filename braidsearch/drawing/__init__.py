@@ -1,6 +1,7 @@
 """Pictures of braids, of their closures and of proofs, as SVG."""
 
-from braidsearch.drawing.braid_pictures import DIRECTIONS, Mark, draw_braid, draw_closure
+from braidsearch.drawing.braid_parts import DIRECTIONS, Mark
+from braidsearch.drawing.braid_pictures import draw_braid, draw_closure
 from braidsearch.drawing.proof_sheets import MOST_STAGES, draw_proof
 
 __all__ = ["DIRECTIONS", "MOST_STAGES", "Mark", "draw_braid", "draw_closure", "draw_proof"]

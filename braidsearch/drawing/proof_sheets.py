@@ -14,9 +14,9 @@ from braidsearch.certificates.explanation import (
     explain_move,
     shown_braid,
 )
-from braidsearch.drawing.braid_pictures import Mark, Options, braid_part, describe_word
+from braidsearch.drawing.braid_parts import Mark, Options, braid_part
+from braidsearch.drawing.braid_pictures import describe_word
 from braidsearch.drawing.changes import Span, carried_components, changed_letters
-from braidsearch.drawing.geometry import components_of_positions
 from braidsearch.drawing.levels import check_size
 from braidsearch.drawing.palette import QUIET
 from braidsearch.drawing.sheet import (
@@ -28,6 +28,7 @@ from braidsearch.drawing.sheet import (
     in_lines,
     paragraph,
 )
+from braidsearch.drawing.strand_paths import components_of_positions
 from braidsearch.drawing.svg import write_svg
 from braidsearch.errors import BraidsearchError, InputError
 from braidsearch.moves import Destabilize, Move, Stabilize
