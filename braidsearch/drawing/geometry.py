@@ -1,7 +1,7 @@
 """The values of which a picture's geometry consists: curves cut at crossings, arrows, places.
 
 In a frame of its own strands run downwards, position 1 lies at x = 0 and position p at
-x = (p - 1) ``STRAND_SPACING``, and the strands begin at y = 0; ``Geometry.mapped`` takes it to a page.
+x = (p - 1) ``STRAND_SPACING``, and strands begin at y = 0; ``mapped`` takes all to a page.
 """
 
 from __future__ import annotations
