@@ -28,6 +28,7 @@ COMMANDS: dict[str, str] = {
     "symmetry": "which mirror images and reverses of a link are the same link again",
     "normalise": "reduced word, left normal form and conjugacy summit of a braid",
     "invariants": "invariants of the closure of a braid",
+    "ledger": "a catalogue of links that keeps the evidence for every decision",
     "draw": "the picture of a braid, of its closure, or of a proof",
 }
 """Each command and its summary; the command NAME is ``answer`` in the file NAME.py here."""

@@ -101,20 +101,8 @@ class Ledger:
         return AddSummary(added, known)
 
     def conflicts(self, entries: Sequence[Entry]) -> list[tuple[Entry, str]]:
-        """The entries whose name another link of their source has, in the ledger or before them.
-
-        Each with what is wrong in words.
-        """
-        seen: dict[tuple[str, str], Entry] = {}
-        found = []
-        for entry in entries:
-            other = seen.setdefault((entry.source, entry.name), entry)
-            if self.store.has_other(entry):
-                found.append((entry, f"{entry.name!r}: in the ledger it is another link"))
-            elif other.braid != entry.braid:
-                place = f"{other.file or 'before'}{f', line {other.line}' if other.line else ''}"
-                found.append((entry, f"{entry.name!r}: another link has this name: {place}"))
-        return [(entry, f"{said}: expected another name or source") for entry, said in found]
+        """The entries that ``add`` would refuse, each with the reason in words."""
+        return find_conflicts(entries, self.store)
 
     def sort(
         self,
@@ -216,10 +204,20 @@ class Ledger:
         with blaming_damage(self.store):
             return record_certificate(self.store, certificate)
 
-    def report(self) -> LedgerReport:
-        """All classes with their entries, groups up to symmetry, what is open or contradictory."""
+    def check_recordable(self, certificate: Certificate) -> None:
+        """Raise InputError for a certificate that ``record`` would refuse."""
+        from braidsearch.ledger.recording import check_certificate  # noqa: PLC0415 - as above
+
+        check_certificate(self.store, certificate)
+
+    def report(self, up_to: Sequence[str] = SYMMETRIES) -> LedgerReport:
+        """All classes with their entries, groups up to symmetry, what is open or contradictory.
+
+        ``up_to`` names the symmetries of which the groups are made.
+        """
+        check_symmetries(up_to)
         with blaming_damage(self.store), self.store.reading():
-            return report_ledger(self.store)
+            return report_ledger(self.store, up_to)
 
     def check(
         self,
@@ -233,6 +231,24 @@ class Ledger:
 
         with self.store.reading():
             return check_ledger(self.store, executor or SerialExecutor(), progress)
+
+
+def find_conflicts(entries: Sequence[Entry], store: Store | None = None) -> list[tuple[Entry, str]]:
+    """The entries whose name another link of their source has, in the ledger or before them.
+
+    Each with what is wrong in words; ``store`` is None for a ledger that there is not yet.
+    """
+    seen: dict[tuple[str, str], Entry] = {}
+    found = []
+    for entry in entries:
+        other = seen.setdefault((entry.source, entry.name), entry)
+        if store is not None and store.has_other(entry):
+            found.append((entry, "in the ledger another link has this name"))
+        elif other.braid != entry.braid:
+            place = f"{other.file or 'before'}{f', line {other.line}' if other.line else ''}"
+            found.append((entry, f"another link has this name: {place}"))
+    expected = "expected another name or source"
+    return [(entry, f"{entry.name!r}: {said}: {expected}") for entry, said in found]
 
 
 def check_symmetries(up_to: Sequence[str]) -> None:

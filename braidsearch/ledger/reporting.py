@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections import defaultdict
+from collections.abc import Collection
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
@@ -54,7 +55,7 @@ class Contradiction:
 
 @dataclass(frozen=True, slots=True)
 class LedgerReport:
-    """A ledger as a whole. ``groups`` holds the numbers of classes that are images of another.
+    """A ledger as a whole. ``groups`` holds the numbers of classes that are images of one another.
 
     ``unsorted`` counts entries without a class, ``proofs`` the stored evidence.
     """
@@ -67,8 +68,8 @@ class LedgerReport:
     contradictions: tuple[Contradiction, ...]
 
 
-def report_ledger(store: Store) -> LedgerReport:
-    """The report on all of the ledger."""
+def report_ledger(store: Store, up_to: Collection[str]) -> LedgerReport:
+    """The report on all of the ledger; groups are made up to these symmetries."""
     members: defaultdict[int, list[StoredEntry]] = defaultdict(list)
     unsorted = 0
     for entry in store.entries():
@@ -79,7 +80,7 @@ def report_ledger(store: Store) -> LedgerReport:
     classes = tuple(
         LinkClass(number, form, tuple(members[number])) for number, form, _ in store.all_classes()
     )
-    groups = tuple(map(tuple, group_classes(store)))
+    groups = tuple(map(tuple, group_classes(store, up_to)))
     return LedgerReport(
         classes,
         groups,

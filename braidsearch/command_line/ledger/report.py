@@ -1,0 +1,286 @@
+"""braidsearch ledger report LEDGER: the classes, what is open, what is contradictory."""
+
+from __future__ import annotations
+
+from argparse import Namespace
+from collections.abc import Sequence
+from dataclasses import replace
+from typing import TYPE_CHECKING, Any
+
+from braidsearch.certificates.display import show_value
+from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
+from braidsearch.command_line.ledger.options import add_symmetries, ledger_parser, read_symmetries
+from braidsearch.command_line.ledger.showing import (
+    CONTRADICTED,
+    MOST_LINES,
+    cut,
+    entry_to_json,
+    plural,
+    quoted,
+    retry_command,
+    show_contradictions,
+    show_entry,
+    show_question,
+)
+from braidsearch.errors import InputError
+from braidsearch.words import SYMMETRIES, format_word
+
+if TYPE_CHECKING:
+    from braidsearch.certificates import Certificate
+    from braidsearch.ledger.ledger import Ledger
+    from braidsearch.ledger.reporting import LedgerReport, LinkClass, OpenQuestion
+    from braidsearch.ledger.store import StoredEntry
+
+_DESCRIPTION = """Show what a ledger holds: how many classes; those with more than one entry, with
+the moves by which each entry is joined to the first; what is open, with the limits tried; and
+contradictions, if there are any. Long listings are cut unless --all is given.
+
+--up-to shows classes that are images of each other together, as far as ledger sort --up-to has
+looked. --class shows one class with its invariants."""
+
+_EXAMPLES = """  braidsearch ledger report rings.ledger
+  braidsearch ledger report rings.ledger --up-to any
+  braidsearch ledger report rings.ledger --class gel-04
+  braidsearch ledger report rings.ledger --json --all
+
+exit status: 0, 1 with contradictions, 2 for a mistake in the input."""
+
+
+def answer(arguments: Sequence[str]) -> Answer:
+    """Carry out the command. Raises InputError for what cannot be read."""
+    from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - help comes faster
+
+    given = _parser().read(arguments)
+    asked = read_symmetries(given.up_to)
+    with Ledger(given.ledger) as ledger:
+        report = ledger.report(asked or SYMMETRIES[1:])
+        wanted = _asked_class(given)
+        if wanted is not None:
+            report = _of_one_class(ledger, report, wanted)
+        status = CONTRADICTED if report.contradictions else SUCCESS
+        count = len(report.contradictions)
+        hint = f"braidsearch ledger report: {plural(count, 'CONTRADICTION')}" * (count > 0)
+        if given.json:
+            return json_answer(status, _to_json(report), hint)
+        lines = _lines(ledger, given, report, asked)
+    return Answer(status, "\n".join(lines), hint)
+
+
+def _parser() -> Any:
+    parser = ledger_parser("report", _DESCRIPTION, _EXAMPLES)
+    add_symmetries(parser, "show such images together")
+    parser.add_text(
+        "--class", metavar="CLASS", explanation="one class: its number, or one of its entries"
+    )
+    parser.add_argument("--all", action="store_true", help="list everything, also single entries")
+    parser.add_json()
+    return parser
+
+
+def _asked_class(given: Namespace) -> str | None:
+    value: str | None = getattr(given, "class")
+    return value
+
+
+def _of_one_class(ledger: Ledger, report: LedgerReport, reference: str) -> LedgerReport:
+    """The report on one class alone."""
+    number = _class_number(ledger, report, reference)
+    return replace(
+        report,
+        classes=tuple(one for one in report.classes if one.number == number),
+        groups=tuple(group for group in report.groups if number in group),
+        open_questions=tuple(
+            question
+            for question in report.open_questions
+            if number in (question.left.class_number, question.right.class_number)
+        ),
+    )
+
+
+def _class_number(ledger: Ledger, report: LedgerReport, reference: str) -> int:
+    if reference.isdecimal() and int(reference) in {one.number for one in report.classes}:
+        return int(reference)
+    try:
+        entry = ledger.entry(reference)
+    except InputError as error:
+        raise InputError(f"--class: {error}, or the number of a class") from None
+    if entry.class_number is None:
+        raise InputError(f"--class: {reference}: not sorted yet: expected ledger sort before")
+    return entry.class_number
+
+
+def _lines(
+    ledger: Ledger, given: Namespace, report: LedgerReport, asked: Sequence[str]
+) -> list[str]:
+    lines = show_contradictions(report.contradictions)
+    is_one = _asked_class(given) is not None
+    if not is_one:
+        lines += _totals(given, report, asked)
+    if is_one or not asked:
+        lines += cut(_classes(ledger, report, given.all, is_one), given.all)
+    if asked or any(len(group) > 1 for group in report.groups):
+        lines += cut(_groups(ledger, report, given.all), given.all)
+    if report.open_questions:
+        lines.append(f"open questions: {len(report.open_questions)}")
+        questions = [f"  {show_question(question)}" for question in report.open_questions]
+        lines += cut(questions, given.all)
+        lines.append(f"to try them again: {retry_command(given.ledger, report.open_questions)}")
+    return lines
+
+
+def _totals(given: Namespace, report: LedgerReport, asked: Sequence[str]) -> list[str]:
+    entries = sum(len(one.entries) for one in report.classes)
+    many = sum(len(one.entries) > 1 for one in report.classes)
+    up_to = f"up to {', '.join(asked)}" if asked else "up to mirror images and reverses"
+    lines = [
+        f"entries: {entries + report.unsorted}",
+        f"classes: {plural(len(report.classes), 'oriented link')}, {many} with more than one entry",
+        f"groups: {len(report.groups)} {up_to}, as far as asked",
+        f"proofs: {report.proofs}",
+    ]
+    if report.unsorted:
+        lines.insert(1, f"not sorted yet: {report.unsorted}: {_sort_command(given.ledger)}")
+    if not report.open_questions:
+        lines.append("open questions: none")
+    lines.append(f"contradictions: {len(report.contradictions) or 'none'}")
+    return lines
+
+
+def _sort_command(ledger: str) -> str:
+    return f"braidsearch ledger sort {quoted(ledger)}"
+
+
+def _classes(ledger: Ledger, report: LedgerReport, is_whole: bool, has_values: bool) -> list[str]:
+    """The classes with more than one entry, and single ones where they are asked for."""
+    shown = [one for one in report.classes if len(one.entries) > 1 or is_whole or has_values]
+    lines: list[str] = []
+    for one in shown:
+        if len(lines) > MOST_LINES and not is_whole:  # a proof for each entry takes its time
+            lines += [""] * (1 + len(one.entries))
+        else:
+            lines += _class_lines(ledger, one, has_values, is_whole)
+    single = len(report.classes) - len(shown)
+    if single:
+        lines.append(f"classes with one entry: {single} (--all lists them)")
+    return lines
+
+
+def _class_lines(ledger: Ledger, one: LinkClass, has_values: bool, is_whole: bool) -> list[str]:
+    form = format_word(one.form)
+    lines = [f"class {one.number}: {plural(len(one.entries), 'entry')}, word {form}"]
+    if has_values:
+        lines += _value_lines(ledger, one.number)
+    first = one.entries[0] if one.entries else None
+    for place, entry in enumerate(one.entries):
+        if first is None or entry is first or (place > MOST_LINES and not is_whole):
+            lines.append(f"  {show_entry(entry)}")
+            continue
+        certificate = _proof(ledger, entry, first, ("identity",))
+        lines.append(f"  {show_entry(entry)}: {_joined(certificate)}")
+    return lines
+
+
+def _proof(
+    ledger: Ledger, entry: StoredEntry, first: StoredEntry, symmetries: Sequence[str]
+) -> Certificate | None:
+    from braidsearch.ledger.proofs import Proofs  # noqa: PLC0415 - help comes faster
+
+    return Proofs(ledger.store).same(entry.braid_number, first.braid_number, symmetries)
+
+
+def _joined(certificate: Certificate | None) -> str:
+    if certificate is None:
+        return "NO PROOF joins it: see braidsearch ledger check"
+    return f"{_moves(certificate)} to the first"
+
+
+def _value_lines(ledger: Ledger, number: int) -> list[str]:
+    from braidsearch.invariants import TITLES  # noqa: PLC0415 - help comes faster
+    from braidsearch.ledger.fingerprints import FIELDS  # noqa: PLC0415 - the same
+
+    marks = ledger.store.fingerprint_of_class(number)
+    lines = []
+    for name in FIELDS:
+        value = marks.value(name)
+        shown = "not computed" if value is None else show_value(name, value)
+        lines.append(f"  {TITLES[name]}: {shown}")
+    return lines
+
+
+def _groups(ledger: Ledger, report: LedgerReport, is_whole: bool) -> list[str]:
+    """Classes that are images of each other, and what each is of the first."""
+    lines: list[str] = []
+    single = 0
+    for group in report.groups:
+        if len(group) == 1:
+            single += 1
+        elif len(lines) > MOST_LINES and not is_whole:
+            lines += [""] * (1 + len(group))
+        else:
+            lines += _group_lines(ledger, group)
+    if single:
+        lines.append(f"classes in no group with others: {single}")
+    return lines
+
+
+def _group_lines(ledger: Ledger, group: Sequence[int]) -> list[str]:
+    from braidsearch.ledger.reporting import first_entry  # noqa: PLC0415 - help comes faster
+
+    first = first_entry(ledger.store, group[0])
+    lines = [f"group of {plural(len(group), 'class')}"]
+    for number in group:
+        entry = first_entry(ledger.store, number)
+        said = f"  class {number}, {show_entry(entry)}"
+        if number != group[0]:
+            certificate = _proof(ledger, entry, first, SYMMETRIES)
+            said += f": {_image(certificate)}"
+        lines.append(said)
+    return lines
+
+
+def _image(certificate: Certificate | None) -> str:
+    if certificate is None:
+        return "NO PROOF joins it: see braidsearch ledger check"
+    return f"{certificate.symmetry} of the first, by {_moves(certificate)}"
+
+
+def _moves(certificate: Certificate) -> str:
+    return plural(len(certificate.moves), "move") if certificate.moves else "no move"
+
+
+def _to_json(report: LedgerReport) -> dict[str, Any]:
+    return {
+        "entries": sum(len(one.entries) for one in report.classes) + report.unsorted,
+        "unsorted": report.unsorted,
+        "proofs": report.proofs,
+        "classes": [
+            {
+                "number": one.number,
+                "form": {"strands": one.form.strands, "word": list(one.form.word)},
+                "entries": [entry_to_json(entry) for entry in one.entries],
+            }
+            for one in report.classes
+        ],
+        "groups": [list(group) for group in report.groups],
+        "open_questions": [_question_to_json(question) for question in report.open_questions],
+        "contradictions": [
+            {
+                "number": one.number,
+                "same": one.same,
+                "different": one.different,
+                "left": entry_to_json(one.left),
+                "right": entry_to_json(one.right),
+            }
+            for one in report.contradictions
+        ],
+    }
+
+
+def _question_to_json(question: OpenQuestion) -> dict[str, Any]:
+    return {
+        "left": entry_to_json(question.left),
+        "right": entry_to_json(question.right),
+        "symmetry": question.symmetry,
+        "tried": {"nodes": question.tried.nodes, "max_strands": question.tried.max_strands},
+        "reason": question.reason,
+    }
