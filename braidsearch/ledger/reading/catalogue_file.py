@@ -103,7 +103,8 @@ class CatalogueFile:
         if found is not None:
             self._check_text(found[0], text.count("\n", 0, found.start()) + 1)
         if len(text) > MAX_TEXT:
-            raise self.error(0, f"more than {MAX_TEXT} characters: expected a smaller file")
+            other = ", or one object a line (.jsonl)" * (self.path.suffix.lower() == ".json")
+            raise self.error(0, f"more than {MAX_TEXT} characters: expected a smaller file{other}")
         return text
 
     def _open(self, newline: str | None) -> TextIOWrapper:

@@ -349,6 +349,17 @@ def test_cells_of_millions_of_letters(tmp_path: Path) -> None:
     assert csv.field_size_limit() >= max(before, 10_000_000)
 
 
+def test_files_that_are_read_as_a_whole_are_bounded(
+    tmp_path: Path, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    """A list in JSON is; the same objects on lines of their own are not."""
+    monkeypatch.setattr("braidsearch.ledger.reading.catalogue_file.MAX_TEXT", 20)
+    text = '{"link": "1"}\n' * 3
+    with pytest.raises(InputError, match="more than 20 characters: .* or one object a line"):
+        read(tmp_path / "a.json", text)
+    assert len(read(tmp_path / "a.jsonl", text.replace("}\n", ', "name": "a"}\n')).entries) == 1
+
+
 def test_progress_counts_bytes(tmp_path: Path) -> None:
     """It rises to all there are, for every format that holds many links."""
     texts = {
