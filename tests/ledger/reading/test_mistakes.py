@@ -355,7 +355,7 @@ def test_files_that_are_read_as_a_whole_are_bounded(
     """A list in JSON is; the same objects on lines of their own are not."""
     monkeypatch.setattr("braidsearch.ledger.reading.catalogue_file.MAX_TEXT", 20)
     text = '{"link": "1"}\n' * 3
-    with pytest.raises(InputError, match="more than 20 characters: .* or one object a line"):
+    with pytest.raises(InputError, match=r"more than 20 characters: .* or one object a line"):
         read(tmp_path / "a.json", text)
     assert len(read(tmp_path / "a.jsonl", text.replace("}\n", ', "name": "a"}\n')).entries) == 1
 
