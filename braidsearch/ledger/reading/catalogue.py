@@ -92,7 +92,7 @@ def iter_rows(
     """
     file = CatalogueFile(
         Path(path),
-        check_label(Path(path).name if source is None else source.strip(), "source"),
+        check_label((source or "").strip() or Path(path).name, "source"),
         _checked_notation(notation),
         ignore_columns,
         progress,

@@ -68,6 +68,8 @@ class TestTables:
         assert [e.source for e in read(tmp_path / "a.csv", text).entries] == ["gel", "a.csv"]
         told = read(tmp_path / "a.csv", text, source=" plates ").entries
         assert [e.source for e in told] == ["gel", "plates"]
+        blank = read(tmp_path / "a.csv", text, source=" ").entries
+        assert [e.source for e in blank] == ["gel", "a.csv"]
 
     def test_other_columns_are_left_out_on_demand(self, tmp_path: Path) -> None:
         """Refused at once and all together, or ignored."""
