@@ -56,13 +56,15 @@ class ClassRows(Database):
 
     def count_agreeing(self, marks: Fingerprint) -> list[int]:
         """For each invariant, how many classes agree with the fingerprint in all up to it."""
-        counts = []
+        counted, values = [], []
         for depth in range(1, len(FIELDS) + 1):
-            agrees, values = _agreement(marks, depth)
-            statement = "SELECT count(*) FROM fingerprints JOIN classes "
-            statement += f"ON fingerprint = fingerprints.id WHERE {agrees}"
-            counts.append(int(self.one(statement, values)))
-        return counts
+            agrees, theirs = _agreement(marks, depth)
+            counted.append(f"count(CASE WHEN {agrees} THEN 1 END)")
+            values += theirs
+        first, its = _agreement(marks, 1)  # one pass, over the classes that agree in anything
+        statement = f"SELECT {', '.join(counted)} FROM fingerprints JOIN classes "
+        statement += f"ON fingerprint = fingerprints.id WHERE {first}"
+        return list(self.rows(statement, [*values, *its])[0])
 
     def nearest_classes(
         self, marks: Fingerprint, most: int

@@ -7,12 +7,14 @@ import os
 from collections.abc import Iterable
 from dataclasses import dataclass
 from functools import lru_cache
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
 from braidsearch.errors import InputError
 from braidsearch.ledger.database import Database
-from braidsearch.ledger.reading import Entry
 from braidsearch.words import MAX_STRANDS, Braid
+
+if TYPE_CHECKING:
+    from braidsearch.ledger.reading import Entry
 
 
 @dataclass(frozen=True, slots=True)
