@@ -43,17 +43,24 @@ class SerialExecutor(Executor):
 def open_executor(processes: int | None = None, scheduler: str | None = None) -> Iterator[Executor]:
     """The executor for so many processes (None: one for each core), or for a Dask cluster.
 
-    After an error or an interrupt nothing that was not begun is begun any more. Raises InputError
-    for a scheduler that does not answer, or without the library for one.
+    After an error or an interrupt nothing that was not begun is begun any more; to be told to
+    terminate is an interrupt too. Raises InputError for a scheduler that does not answer, without
+    the library for one, and when a process has ended before its work was done.
     """
-    if scheduler is not None:
-        with _dask_executor(scheduler) as executor:
-            yield executor
-        return
     count = processes or available_cores()
-    if count == 1:
-        yield SerialExecutor()
-        return
+    with _termination_interrupts():
+        if scheduler is not None:
+            with _dask_executor(scheduler) as executor:
+                yield executor
+        elif count == 1:
+            yield SerialExecutor()
+        else:
+            with _process_pool(count) as executor:
+                yield executor
+
+
+@contextmanager
+def _process_pool(count: int) -> Iterator[Executor]:
     pool = ProcessPoolExecutor(count, mp_context=get_context("spawn"), initializer=_begin_worker)
     try:
         with _interrupts_held():
@@ -80,16 +87,54 @@ def available_cores() -> int:
 
 
 @contextmanager
+def _termination_interrupts() -> Iterator[None]:
+    """Take the signal to terminate as an interrupt, where nobody else minds it.
+
+    A process that is ended by it has no time to end its workers and to say what was kept.
+    """
+    is_main = threading.current_thread() is threading.main_thread()
+    if not is_main or signal.getsignal(signal.SIGTERM) is not signal.SIG_DFL:
+        yield
+        return
+    signal.signal(signal.SIGTERM, signal.default_int_handler)
+    try:
+        yield
+    finally:
+        signal.signal(signal.SIGTERM, signal.SIG_DFL)
+
+
+@contextmanager
 def _interrupts_held() -> Iterator[None]:
-    """Let interrupts wait; processes that are started meanwhile never receive any.
+    """Let interrupts wait; so does every process that is started meanwhile, until it begins.
 
     Ctrl-C goes to all processes of a terminal, and one that is only about to begin would answer it
-    with a traceback.
+    with a traceback; so would one whose parent ends while it is being started.
     """
+    if threading.current_thread() is not threading.main_thread():
+        yield  # no signal interrupts another thread
+        return
+    arrived: list[int] = []
+    handlers = {
+        number: signal.signal(number, lambda number, _: arrived.append(number))
+        for number in (signal.SIGINT, signal.SIGTERM)
+    }
+    try:
+        with _signals_blocked():
+            yield
+    finally:
+        for number, handler in handlers.items():
+            signal.signal(number, handler)
+    if arrived:
+        raise KeyboardInterrupt
+
+
+@contextmanager
+def _signals_blocked() -> Iterator[None]:
+    """Block what may interrupt, for this thread and for the processes that it starts."""
     if not hasattr(signal, "pthread_sigmask"):
         yield
         return
-    before = signal.pthread_sigmask(signal.SIG_BLOCK, {signal.SIGINT})
+    before = signal.pthread_sigmask(signal.SIG_BLOCK, {signal.SIGINT, signal.SIGTERM})
     try:
         yield
     finally:
@@ -99,6 +144,8 @@ def _interrupts_held() -> Iterator[None]:
 def _begin_worker() -> None:
     """Leave interrupts to the parent, and end when the parent ends, however it does."""
     signal.signal(signal.SIGINT, signal.SIG_IGN)
+    if hasattr(signal, "pthread_sigmask"):
+        signal.pthread_sigmask(signal.SIG_UNBLOCK, {signal.SIGINT, signal.SIGTERM})
     threading.Thread(target=_end_with_parent, daemon=True).start()
 
 
