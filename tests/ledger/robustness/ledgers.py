@@ -1,9 +1,10 @@
 """Small ledgers for tests of what may befall one, and their contents as text."""
 
+import csv
 import random
 import shutil
 import sqlite3
-from collections.abc import Callable, Mapping
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
 from pathlib import Path
 
@@ -131,3 +132,21 @@ def whole_file(path: Path) -> bytes:
     """The bytes of a ledger that nobody has open."""
     assert not path.with_name(path.name + "-wal").exists()
     return path.read_bytes()
+
+
+def write_table(path: Path, entries: Sequence[Entry]) -> Path:
+    """A file with these entries, as ``ledger add`` reads it."""
+    with path.open("w", encoding="utf-8", newline="") as file:
+        table = csv.writer(file, lineterminator="\n")
+        table.writerow(("name", "source", "note", "link"))
+        table.writerows((one.name, one.source, one.note, one.given) for one in entries)
+    return path
+
+
+def count_rows(path: Path, table: str) -> int:
+    """How many rows a table of a ledger has, while others may write in it."""
+    connection = sqlite3.connect(path)
+    try:
+        return int(connection.execute(f"SELECT count(*) FROM {table}").fetchone()[0])
+    finally:
+        connection.close()
