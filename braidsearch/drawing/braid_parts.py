@@ -157,7 +157,7 @@ def _piece_part(
 
 def _headed(part: Part, heading: str) -> Part:
     text = Text((MARGIN / 2, 16.0), heading, 10.0, colour=QUIET)
-    return overlay([Part(text.width + MARGIN, 18.0, texts=(text,)), part.moved(0.0, 14.0)])
+    return overlay([(Part(text.width + MARGIN, 18.0, texts=(text,)), 0.0, 0.0), (part, 0.0, 14.0)])
 
 
 def _placement(frame: Rectangle, options: Options) -> tuple[float, float, Callable[[Point], Point]]:

@@ -36,15 +36,11 @@ class Cubic:
         return x0 == x1 == x2 == x3 or y0 == y1 == y2 == y3
 
     def point_at(self, time: float) -> Point:
-        """The point at a time from 0 to 1."""
-        return self.split(time)[0].end
-
-    def direction_at(self, time: float) -> Point:
-        """The unit vector along the curve at a time strictly between 0 and 1."""
-        before, after = self.split(time)
-        (x0, y0), (x1, y1) = before.second_control, after.first_control
-        length = math.hypot(x1 - x0, y1 - y0)
-        return (x1 - x0) / length, (y1 - y0) / length
+        """The point at a time from 0 to 1, by the Bernstein polynomials."""
+        (x0, y0), (x1, y1), (x2, y2), (x3, y3) = self.points
+        rest = 1 - time
+        a, b, c, d = rest**3, 3 * rest**2 * time, 3 * rest * time**2, time**3
+        return a * x0 + b * x1 + c * x2 + d * x3, a * y0 + b * y1 + c * y2 + d * y3
 
     def split(self, time: float) -> tuple[Cubic, Cubic]:
         """The parts before and after a time from 0 to 1, by de Casteljau's construction."""

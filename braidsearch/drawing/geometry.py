@@ -7,7 +7,7 @@ x = (p - 1) ``STRAND_SPACING``, and strands begin at y = 0; ``mapped`` takes all
 from __future__ import annotations
 
 from collections.abc import Callable
-from dataclasses import dataclass, replace
+from dataclasses import dataclass
 
 from braidsearch.drawing.curves import Cubic, Point
 
@@ -119,14 +119,18 @@ def _cut_open(segment: Segment) -> tuple[Cubic, Cubic]:
 
 
 def _mapped_curve(curve: Curve, place: Callable[[Point], Point]) -> Curve:
-    segments = (replace(each, cubic=each.cubic.mapped(place)) for each in curve.segments)
-    return replace(curve, segments=tuple(segments))
+    segments = (
+        Segment(each.cubic.mapped(place), each.crossing, each.is_over, each.time)
+        for each in curve.segments
+    )
+    return Curve(curve.component, tuple(segments), curve.is_closed)
 
 
 def _mapped_place(crossing: CrossingPlace, place: Callable[[Point], Point]) -> CrossingPlace:
-    return replace(crossing, centre=place(crossing.centre), meeting=place(crossing.meeting))
+    centre, meeting = place(crossing.centre), place(crossing.meeting)
+    return CrossingPlace(crossing.number, crossing.letter, centre, meeting)
 
 
 def _mapped_arrow(arrow: Arrow, place: Callable[[Point], Point]) -> Arrow:
     (x0, y0), (x1, y1) = place((0.0, 0.0)), place(arrow.direction)
-    return replace(arrow, centre=place(arrow.centre), direction=(x1 - x0, y1 - y0))
+    return Arrow(arrow.component, place(arrow.centre), (x1 - x0, y1 - y0))

@@ -40,7 +40,7 @@ MOST_STAGES = 60
 MOST_CROSSINGS = 12_000
 """Crossings that all pictures of one sheet have together."""
 
-_NARROW = 200.0
+_NARROW = 170.0
 _SPACE = 12.0
 
 
@@ -150,7 +150,8 @@ class _SheetWriter:
         if picture is None:
             note = paragraph("(too large for this sheet, or not a braid)", width, colour=QUIET)
             return below([caption, note])
-        return below([caption, picture], 2.0)
+        column = Part(width if self._options.is_downwards else 0.0, 0.0)  # all equally wide
+        return below([caption, picture, column], 2.0)
 
     def _picture(self, stage: _Stage) -> Part | None:
         """The braid of the stage, None where it cannot be drawn."""

@@ -2,12 +2,13 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Sequence
-from dataclasses import dataclass, field, replace
+from collections.abc import Callable, Iterable, Iterator, Sequence
+from dataclasses import dataclass, replace
+from itertools import accumulate
 from textwrap import wrap
 
 from braidsearch.drawing.curves import Point
-from braidsearch.drawing.geometry import Arrow, Curve, Geometry
+from braidsearch.drawing.geometry import Geometry
 from braidsearch.drawing.palette import INK
 
 CHARACTER_WIDTH = 0.62
@@ -66,7 +67,10 @@ class Box:
 
 @dataclass(frozen=True)
 class Part:
-    """Things on a page of their own, whose top left corner is the origin."""
+    """Things on a page of their own, whose top left corner is the origin.
+
+    ``parts`` are further ones on it, each with how far it lies to the right and downwards.
+    """
 
     width: float
     height: float
@@ -74,30 +78,35 @@ class Part:
     boxes: tuple[Box, ...] = ()
     lines: tuple[Line, ...] = ()
     texts: tuple[Text, ...] = ()
+    parts: tuple[tuple[Part, float, float], ...] = ()
 
-    @property
-    def curves(self) -> tuple[Curve, ...]:
-        """All strands."""
-        return tuple(curve for geometry in self.geometries for curve in geometry.curves)
-
-    @property
-    def arrows(self) -> tuple[Arrow, ...]:
-        """All heads of arrows."""
-        return tuple(arrow for geometry in self.geometries for arrow in geometry.arrows)
-
-    def moved(self, right: float, down: float) -> Part:
-        """The same things on a page that is larger by so much on the left and at the top."""
+    def iter_placed(self, right: float = 0.0, down: float = 0.0) -> Iterator[Part]:
+        """The part and those on it, each without further ones and moved to its place."""
 
         def place(point: Point) -> Point:
             return point[0] + right, point[1] + down
 
-        return Part(
-            self.width + right,
-            self.height + down,
+        yield Part(
+            self.width,
+            self.height,
             tuple(geometry.mapped(place) for geometry in self.geometries),
             tuple(replace(box, bounds=map_rectangle(box.bounds, place)) for box in self.boxes),
             tuple(Line(place(each.start), place(each.end), each.is_dashed) for each in self.lines),
             tuple(replace(text, place=place(text.place)) for text in self.texts),
+        )
+        for part, further_right, further_down in self.parts:
+            yield from part.iter_placed(right + further_right, down + further_down)
+
+    def flattened(self) -> Part:
+        """The same page without parts on it."""
+        placed = list(self.iter_placed())
+        return Part(
+            self.width,
+            self.height,
+            tuple(each for part in placed for each in part.geometries),
+            tuple(each for part in placed for each in part.boxes),
+            tuple(each for part in placed for each in part.lines),
+            tuple(each for part in placed for each in part.texts),
         )
 
 
@@ -109,7 +118,7 @@ class Sheet:
     title: str
     description: str
     is_transparent: bool = False
-    identifier: str = field(default="")
+    identifier: str = ""
 
 
 def map_rectangle(bounds: Rectangle, place: Callable[[Point], Point]) -> Rectangle:
@@ -118,34 +127,24 @@ def map_rectangle(bounds: Rectangle, place: Callable[[Point], Point]) -> Rectang
     return min(x0, x1), min(y0, y1), max(x0, x1), max(y0, y1)
 
 
-def overlay(parts: Sequence[Part]) -> Part:
-    """All parts on one page."""
-    return Part(
-        max((part.width for part in parts), default=0.0),
-        max((part.height for part in parts), default=0.0),
-        tuple(each for part in parts for each in part.geometries),
-        tuple(each for part in parts for each in part.boxes),
-        tuple(each for part in parts for each in part.lines),
-        tuple(each for part in parts for each in part.texts),
-    )
+def overlay(placed: Iterable[tuple[Part, float, float]]) -> Part:
+    """Parts on one page, each so far to the right and downwards."""
+    parts = tuple(placed)
+    width = max((right + part.width for part, right, _ in parts), default=0.0)
+    height = max((down + part.height for part, _, down in parts), default=0.0)
+    return Part(width, height, parts=parts)
 
 
 def beside(parts: Sequence[Part]) -> Part:
     """The parts from left to right."""
-    placed, at = [], 0.0
-    for part in parts:
-        placed.append(part.moved(at, 0.0))
-        at += part.width
-    return overlay(placed)
+    starts = accumulate((part.width for part in parts), initial=0.0)
+    return overlay((part, start, 0.0) for part, start in zip(parts, starts, strict=False))
 
 
 def below(parts: Sequence[Part], space: float = 0.0) -> Part:
     """The parts one under the other, with so much space between them."""
-    placed, at = [], 0.0
-    for part in parts:
-        placed.append(part.moved(0.0, at))
-        at += part.height + space
-    return overlay(placed)
+    starts = accumulate((part.height + space for part in parts), initial=0.0)
+    return overlay((part, 0.0, start) for part, start in zip(parts, starts, strict=False))
 
 
 def in_lines(parts: Sequence[Part], width: float = COMFORTABLE_WIDTH) -> Part:

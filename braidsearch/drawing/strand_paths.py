@@ -198,8 +198,10 @@ def _meeting_time(first: Cubic, second: Cubic) -> float:
     a Bernstein polynomial is at most that of its coefficients).
     """
     a, b, c, d = (p[0] - q[0] for p, q in zip(first.points, second.points, strict=True))
+    if a + d == 0 == b + c:
+        return 0.5  # both strands are alike
     low, high = 0.0, 1.0
-    for _ in range(40):
+    for _ in range(32):
         middle = (low + high) / 2
         rest = 1 - middle
         value = (a * rest + 3 * b * middle) * rest**2 + (3 * c * rest + d * middle) * middle**2

@@ -58,7 +58,8 @@ def _digest(sheet: Sheet, body: str) -> str:
 
 
 def _iter_lines(sheet: Sheet) -> Iterator[str]:
-    part = sheet.part
+    part = sheet.part.flattened()
+    curves = [curve for geometry in part.geometries for curve in geometry.curves]
     if not sheet.is_transparent:
         yield f'<rect width="100%" height="100%" fill="{PAPER}"/>'
     yield from map(_format_box, part.boxes)
@@ -66,12 +67,13 @@ def _iter_lines(sheet: Sheet) -> Iterator[str]:
         yield f'<g fill="none" stroke="{HAIRLINE}" stroke-width="1">'
         yield from map(_format_line, part.lines)
         yield "</g>"
-    if part.curves:
+    if curves:
         yield f'<g fill="none" stroke-width="{format_number(STROKE)}" stroke-linejoin="round">'
-        yield from _iter_strands(part.curves)
+        yield from _iter_strands(curves)
         yield "</g>"
         yield '<g stroke="none">'
-        yield from map(_format_arrow, part.arrows)
+        for geometry in part.geometries:
+            yield from map(_format_arrow, geometry.arrows)
         yield "</g>"
     if part.texts:
         yield f'<g font-family="{FONT}">'
