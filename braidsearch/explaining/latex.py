@@ -43,7 +43,7 @@ _SPECIAL = {
     "Ö": r"\"O",
     "Ü": r"\"U",
 }
-_POWER = re.compile(r"(?<![A-Za-z])([A-Za-z])\^(\((-?\d+)/(\d+)\)|-?\w+)")
+_POWER = re.compile(r"(?<![A-Za-z])([A-Za-z])\^(\(-?[0-9]+/[0-9]+\)|-?[0-9]+)")
 _POLYNOMIAL = re.compile(r"-?(\d+|(\d+ )?[tvz](\^\S+)?( z(\^\S+)?)?)( [+-] .*)?")
 _TERMS_A_LINE = 6
 

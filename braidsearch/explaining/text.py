@@ -19,6 +19,7 @@ from braidsearch.explaining.theorems import Theorem
 from braidsearch.explaining.values import Polynomials, Table
 from braidsearch.words import Braid
 
+_ARROW = "<- differs"
 NARROWEST = 40
 """Lines are never asked to be narrower than this."""
 
@@ -123,19 +124,21 @@ def _distinction_lines(distinction: ExplainedDistinction, width: int) -> Iterato
 
 
 def _table_lines(table: Table, names: Sequence[str], width: int) -> Iterator[str]:
-    """A row for each entry, with an arrow behind those that differ."""
+    """A row for each entry, with an arrow behind those that differ; three lines where it is wide."""
     rows = [(table.heading, *names)]
     rows += [(entry.label, entry.left, entry.right) for entry in table.entries]
-    marks = ["", *("<- differs" if entry.differs else "" for entry in table.entries)]
+    marks = ["", *(_ARROW if entry.differs else "" for entry in table.entries)]
     sizes = [max(len(row[column]) for row in rows) for column in range(3)]
-    room = width - 4 - sum(sizes[1:]) - 4 - len("  <- differs")
-    for row, mark in zip(rows, marks, strict=True):
-        cells = "  ".join(f"{row[k]:>{sizes[k]}}" for k in (1, 2))
-        if sizes[0] <= room:
-            yield f"    {row[0]:<{sizes[0]}}  {cells}  {mark}".rstrip()
-        else:
-            yield from _wrap(row[0] + ":", "    ", width)
-            yield f"      {cells}  {mark}".rstrip()
+    if 4 + sum(sizes) + 6 + len(_ARROW) <= width:
+        for (label, left, right), mark in zip(rows, marks, strict=True):
+            cells = f"{left:>{sizes[1]}}  {right:>{sizes[2]}}  {mark}"
+            yield f"    {label:<{sizes[0]}}  {cells}".rstrip()
+        return
+    for (label, *values), mark in zip(rows[1:], marks[1:], strict=True):
+        head = f"{table.heading} {label}".strip()
+        yield from _wrap(f"{head}: {mark}".rstrip(), "    ", width)
+        for name, value in zip(names, values, strict=True):
+            yield from _wrap(f"{name}: {value}", "      ", width)
 
 
 def _theorem_lines(theorem: Theorem, width: int) -> Iterator[str]:

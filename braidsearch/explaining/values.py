@@ -57,7 +57,7 @@ def compare_values(
     """
     if invariant in VARIABLES:
         return _compare_polynomials(VARIABLES[invariant], left, right)
-    if invariant == "colouring":
+    if invariant == "colouring" and _are_colourings((*left, *right), parameters):
         return _compare_colourings(left, right, parameters)
     if invariant == "levine-tristram":
         names = ("signature", "nullity")
@@ -70,7 +70,7 @@ def compare_values(
         heading, inner = "value for a sublink", str(parameters["invariant"])
         return _compare_counts(heading, inner, left, right, parameters, is_whole=True)
     if isinstance(left, tuple):
-        heading = "linking number" if invariant == "linking-numbers" else "sum"
+        heading = "linking number" if invariant == "linking-numbers" else "entry"
         return _compare_counts(heading, invariant, left, right, parameters)
     return _table("", [("value", str(left), str(right))])
 
@@ -87,6 +87,22 @@ def _compare_polynomials(
     one, other = ({tuple(exponents): c for *exponents, c in value} for value in (left, right))
     terms = [(key, one.get(key, 0), other.get(key, 0)) for key in sorted({*one, *other})]
     return Polynomials(variables, tuple(terms))
+
+
+def _are_colourings(value: Sequence[Sequence[int]], parameters: Mapping[str, Any]) -> bool:
+    """Whether each entry holds a label and images for each component, and a count at its end.
+
+    A verified value does; what was only read may not, and is shown as it stands.
+    """
+    size = len(parameters["meridians"][0]) + 1
+    points = list(range(1, size))
+    return all(
+        len(entry) % size == 1
+        and all(
+            sorted(entry[at + 1 : at + size]) == points for at in range(0, len(entry) - 1, size)
+        )
+        for entry in value
+    )
 
 
 def _compare_colourings(

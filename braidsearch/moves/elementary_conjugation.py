@@ -24,7 +24,13 @@ _LETTER_COST = 2
 """How many relations it may cost to make the word one letter shorter, in the middle of the way."""
 
 _MOST_RELATIONS = 120
+"""The most relations that are tried to make the word shorter, far commutations included."""
+
 _MOST_LETTERS_FOR_BOTH = 120
+_LONG = 300
+"""Beyond so many letters in a word and its conjugator, letters go as they stand."""
+
+_MOST_STRANDS_TO_TWIST = 12
 
 Part = Relation | int
 """A relation, or the letter a by which the whole word is conjugated: a^-1 in front, a behind."""
@@ -94,16 +100,20 @@ def _short_conjugator(word: Letters, by: Letters, strands: int) -> Letters:
 
     What commutes with the braid may stand in front: its own powers, and full twists.
     """
-    twist = tuple(range(1, strands)) * strands
+    if len(word) + len(by) > _LONG:
+        return by
+    twist = tuple(range(1, strands)) * strands if strands <= _MOST_STRANDS_TO_TWIST else ()
     candidates = [by]
     for front in ((), word, _inverse(word)):
-        for turns in ((), twist, _inverse(twist)):
+        for turns in dict.fromkeys(((), twist, _inverse(twist))):
             candidates.append(reduce_handles(Braid.trusted(front + turns + by, strands)).word)
     return min(candidates, key=len)
 
 
 def _best_letter(word: Letters, waiting: Letters) -> tuple[int, list[Relation]]:
     """The letter of the conjugator to go first, of those that can, and what then cancels."""
+    if len(word) + len(waiting) > _LONG:
+        return 0, _cancel_ends(word, waiting[0])
     best: tuple[int, int, list[Relation]] | None = None
     for place in _iter_front(waiting):
         letter = waiting[place]
@@ -115,6 +125,18 @@ def _best_letter(word: Letters, waiting: Letters) -> tuple[int, list[Relation]]:
     if best is None:
         raise InputError("the empty conjugator: expected a letter")
     return best[1], best[2]
+
+
+def _cancel_ends(word: Letters, letter: int) -> list[Relation]:
+    """What cancels at once when the word is conjugated by the letter."""
+    relations = []
+    length = len(word) + 2
+    if word and word[0] == letter:
+        relations.append(Relation(0, (-letter, letter), ()))
+        length -= 2
+    if len(word) > len(relations) and word[-1] == -letter:
+        relations.append(Relation(length - 2, (-letter, letter), ()))
+    return relations
 
 
 def _iter_front(word: Letters) -> Iterator[int]:

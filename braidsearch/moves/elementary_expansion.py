@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Iterable, Iterator
 
-from braidsearch.errors import CapacityError
+from braidsearch.errors import CapacityError, InputError
 from braidsearch.moves.elementary_conjugation import Part, conjugate_parts
 from braidsearch.moves.elementary_relations import MAX_RELATIONS, Letters, apply_relation
 from braidsearch.moves.elementary_rewriting import rewrite_relations
@@ -17,6 +17,9 @@ from braidsearch.moves.elementary_steps import (
 )
 from braidsearch.moves.markov import Conjugate, Move, Rewrite, Stabilize, stated_result
 from braidsearch.words import MAX_LETTERS, Braid
+
+_MOST_LETTERS_IN_ALL = 16_000_000 // 3
+"""A certificate file has 16,000,000 bytes at most, and a letter takes three or more."""
 
 Stage = tuple[ElementaryStep, Move]
 """An elementary step, and the same step as a move, which states its result."""
@@ -31,27 +34,33 @@ def expand_moves(start: Braid, moves: Iterable[Move]) -> list[Stage]:
     certificate can hold, or longer words.
     """
     stages: list[Stage] = []
-    braid = start
+    braid, letters = start, 0
     for number, move in enumerate(moves, 1):
-        stages += _expand_move(braid, move, number)
-        if len(stages) > 2 * MAX_RELATIONS:
-            break
+        added = _expand_move(braid, move, number)
+        stages += added
+        letters += sum(len(reached.word) for _, reached in added)
+        _check_capacity(len(stages), letters)
         braid = stated_result(braid, move)
-    stages = _without_detours(start, stages)
-    if len(stages) > MAX_RELATIONS:
-        raise CapacityError(
-            f"more than {MAX_RELATIONS} elementary steps: expected no more than a certificate holds"
-        )
-    return stages
+    return _without_detours(start, stages)
+
+
+def _check_capacity(steps: int, letters: int) -> None:
+    """Raise CapacityError for more steps, or letters in all, than a certificate can hold."""
+    for count, most, name in (
+        (steps, MAX_RELATIONS, "elementary steps"),
+        (letters, _MOST_LETTERS_IN_ALL, "letters in all elementary steps"),
+    ):
+        if count > most:
+            raise CapacityError(f"{count} {name}: expected at most {most}, as a certificate holds")
 
 
 def _expand_move(braid: Braid, move: Move, number: int) -> list[Stage]:
     word = braid.word
     if isinstance(move, Rewrite):
-        return _stages(word, list(rewrite_relations(word, move.word)), number)
+        return _stages(word, move.word, rewrite_relations(word, move.word), number)
     if isinstance(move, Conjugate):
         parts = conjugate_parts(word, move.by, move.word, braid.strands)
-        return _stages(word, parts, number)
+        return _stages(word, move.word, parts, number)
     if isinstance(move, Stabilize):
         step = ElementaryStep(STABILIZATION, len(word) + 1, (), move.word[-1:], number)
     else:
@@ -59,7 +68,7 @@ def _expand_move(braid: Braid, move: Move, number: int) -> list[Stage]:
     return [(step, move)]
 
 
-def _stages(word: Letters, parts: Iterable[Part], number: int) -> list[Stage]:
+def _stages(word: Letters, target: Letters, parts: Iterable[Part], number: int) -> list[Stage]:
     stages: list[Stage] = []
     for part in parts:
         move: Move
@@ -73,6 +82,8 @@ def _stages(word: Letters, parts: Iterable[Part], number: int) -> list[Stage]:
         if len(word) > MAX_LETTERS:
             raise CapacityError(f"a word of {len(word)} letters: expected {MAX_LETTERS} at most")
         stages.append((step, move))
+    if word != target:
+        raise InputError(f"steps to {list(word)}: expected them to lead to {list(target)}")
     return stages
 
 

@@ -21,6 +21,9 @@ from braidsearch.moves.elementary_vertices import iter_blocks
 _MOST_WORDS = 60
 """How many words the direct search sees before handles are reduced instead."""
 
+_LONG = 200
+"""Beyond so many letters in both words together, one route has to do."""
+
 _SHORT = 40
 """The most relations of a chain in whose neighbourhood a shorter one is looked for."""
 
@@ -53,7 +56,9 @@ def _join_blocks(blocks: Sequence[tuple[Letters, Letters]]) -> list[Relation]:
 
 
 def _join(word: Letters, target: Letters) -> list[Relation]:
-    found = search_relations(word, target, _MOST_WORDS)
+    found = None
+    if len(word) + len(target) <= _LONG:
+        found = search_relations(word, target, _MOST_WORDS)
     if found is None:
         routes = list(_iter_routes(word, target))
         if not routes:
@@ -66,6 +71,11 @@ def _join(word: Letters, target: Letters) -> list[Relation]:
 
 def _iter_routes(word: Letters, target: Letters) -> Iterator[list[Relation]]:
     """Ways by handle reduction, with generators and with words read from either end."""
+    if len(word) + len(target) > _LONG:
+        relations = _through_quotient(word, target, 1)
+        if relations is not None:
+            yield relations
+        return
     backwards, target_backwards = word[::-1], target[::-1]
     for direction in (1, -1):
         yield from _iter_reductions(word, target, direction)

@@ -15,8 +15,8 @@ def iter_blocks(word: Letters, target: Letters) -> Iterator[tuple[Letters, Lette
     """Pieces of both words, in order, that begin and end at the same elements, as far as is seen.
 
     Elements are compared by their unreduced Burau matrices (Burau, Ueber Zopfgruppen und
-    gleichsinnig verdrillte Verkettungen, 1936) at one number modulo a prime, applied to one
-    vector. Equal elements look equal; others hardly ever, which whoever joins the pieces sees.
+    gleichsinnig verdrillte Verkettungen, 1936) at one number modulo a prime, between a row and a
+    column. Equal elements look equal; others hardly ever, and whoever joins the pieces sees it.
     """
     strands = max(map(abs, word + target), default=0) + 1
     seen = {name: place for place, name in enumerate(_iter_names(word, strands))}
@@ -31,17 +31,20 @@ def iter_blocks(word: Letters, target: Letters) -> Iterator[tuple[Letters, Lette
         yield word[start:], target[other_start:]
 
 
-def _iter_names(word: Letters, strands: int) -> Iterator[tuple[int, ...]]:
-    """A name for each prefix of the word: the image of a vector under its Burau matrix."""
-    vector = [pow(3, strand + 1, _PRIME) for strand in range(strands)]
-    yield tuple(vector)
+def _iter_names(word: Letters, strands: int) -> Iterator[int]:
+    """A name for each prefix of the word: its Burau matrix between a row and a column."""
+    column = [pow(3, strand + 1, _PRIME) for strand in range(strands)]
+    row = [pow(5, strand + 1, _PRIME) for strand in range(strands)]
+    name = sum(one * other for one, other in zip(row, column, strict=True)) % _PRIME
+    yield name
     for letter in word:
         place = abs(letter) - 1
-        one, other = vector[place], vector[place + 1]
+        one, other = column[place], column[place + 1]
         if letter > 0:
-            vector[place] = other
-            vector[place + 1] = (_VARIABLE * one + (1 - _VARIABLE) * other) % _PRIME
+            new_one, new_other = other, _VARIABLE * one + (1 - _VARIABLE) * other
         else:
-            vector[place + 1] = one
-            vector[place] = (_INVERSE * (other - (1 - _VARIABLE) * one)) % _PRIME
-        yield tuple(vector)
+            new_one, new_other = _INVERSE * (other - (1 - _VARIABLE) * one), one
+        column[place], column[place + 1] = new_one % _PRIME, new_other % _PRIME
+        change = row[place] * (new_one - one) + row[place + 1] * (new_other - other)
+        name = (name + change) % _PRIME
+        yield name
