@@ -61,12 +61,25 @@ def iter_finer(components: int, is_small: bool = True) -> Iterator[Invariant]:
     """
     own = [*map(_levine_tristram, ROOTS_OF_UNITY), *map(_alexander_module, PRIMES)]
     colourings = list(map(_colouring, _group_ladder()))
-    plain = [step for step in INVARIANTS if step.certifies and step.name != "components"]
-    yield from _on_sublinks(plain, components)
+    yield from _plain_on_sublinks(components)
     yield from own
     yield from colourings
     if is_small:
         yield from _on_sublinks([*own, *colourings], components)
+
+
+def sublink_ladder(left: Braid, right: Braid) -> list[Invariant]:
+    """The first part of the finer ladder: plain invariants of sublinks, none of them for knots."""
+    return [
+        step
+        for step in _plain_on_sublinks(len(left.component_cycles))
+        if step.is_applicable(left) and step.is_applicable(right)
+    ]
+
+
+def _plain_on_sublinks(components: int) -> Iterator[Invariant]:
+    plain = [step for step in INVARIANTS if step.certifies and step.name != "components"]
+    return _on_sublinks(plain, components)
 
 
 def _on_sublinks(steps: list[Invariant], components: int) -> Iterator[Invariant]:

@@ -8,10 +8,10 @@ from functools import partial
 
 from braidsearch.certificates import Certificate, format_certificate
 from braidsearch.errors import CapacityError
-from braidsearch.invariants.finer import finer_ladder
+from braidsearch.invariants.finer import finer_ladder, sublink_ladder
 from braidsearch.ledger.fingerprints import Fingerprint
 from braidsearch.search.closed_three_braids import is_classified, three_braid_ladder
-from braidsearch.search.distinguish import Distinguisher
+from braidsearch.search.distinguish import Distinguisher, Ladder, Values
 from braidsearch.search.explorer import Pace
 from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending, SearchLimits
@@ -21,10 +21,11 @@ from braidsearch.search.query import Query
 from braidsearch.search.route import Route
 from braidsearch.words import Braid
 
-_STEPS: tuple[tuple[int, float], ...] = ((60, 0.01), (1_000, 0.1))
-"""Nodes up to which a search for sameness goes, and then the dearest invariants' seconds."""
+_SHORT, _LONG = 60, 1_000  # nodes up to which a search for sameness goes, before and after
+_SUBLINK_SECONDS = 0.05  # the invariants of sublinks are asked, by estimate of each,
+_FINER_SECONDS = 0.1  # and before the finer ones are
 
-_PACE = Pace(expansions_first=2, turns_an_expansion=12)
+_PACE = Pace(expansions_first=1, turns_an_expansion=12, walks_a_turn=20)
 _ROUNDS = ((0.1, 0.1), (0.2, 0.5), (0.4, 5.0), (0.6, 20.0))
 """As of a query, for searches that are short beside the dearer invariants."""
 
@@ -113,10 +114,10 @@ def place(form: Braid, candidates: Sequence[Braid], effort: Effort) -> tuple[Fin
 
 
 def _iter_steps(effort: Effort) -> Iterator[Callable[[_Question], Finding | None]]:
-    for nodes, seconds in _STEPS:
-        if nodes < effort.nodes:
-            yield partial(_Question.search, nodes=nodes)
-            yield partial(_Question.tell_apart, seconds=seconds)
+    yield partial(_Question.search, nodes=min(_SHORT, effort.nodes))
+    yield _Question.tell_apart
+    yield partial(_Question.search, nodes=min(_LONG, effort.nodes))
+    yield _Question.tell_apart_finer
     yield partial(_Question.search, nodes=effort.nodes)
     yield _Question.ask
 
@@ -144,12 +145,20 @@ class _Question:
         # Canonical forms up to 3 strands are equal, or the links differ: no search is needed.
         self.is_classified = is_classified(form) and is_classified(candidate)
         self.meeting: Meeting | None = None
+        self.values = Values()
 
-    def tell_apart(self, seconds: float) -> Finding | None:
-        """Finer invariants that cost up to so many seconds each, by estimate."""
+    def tell_apart(self) -> Finding | None:
+        """What is cheap and decides most: sublinks, or the classification of closed 3-braids."""
+        steps = three_braid_ladder if self.is_classified else sublink_ladder
+        return self._distinguish(steps, _SUBLINK_SECONDS)
+
+    def tell_apart_finer(self) -> Finding | None:
+        """Finer invariants, the cheaper ones."""
+        return self._distinguish(finer_ladder, _FINER_SECONDS)
+
+    def _distinguish(self, steps: Ladder, seconds: float) -> Finding | None:
         plain = Route(self.left), Route(self.right)
-        distinguisher = Distinguisher(self.left, self.right, "identity")
-        steps = three_braid_ladder if self.is_classified else finer_ladder
+        distinguisher = Distinguisher(self.left, self.right, "identity", self.values)
         found = distinguisher.find(*plain, seconds, self.budget, steps)
         if found is None or distinguisher.found_by is None:
             return None

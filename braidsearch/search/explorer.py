@@ -25,7 +25,6 @@ if TYPE_CHECKING:
     from braidsearch.search.walks import PresentationKey, Walker
 
 _EXTRA_STRANDS = 2
-_WALKS_A_TURN = 60
 _WALKS_A_NODE = 20  # fruitless walks that count as one node
 _WALK_COST, _EXPANSION_COST = 8, 3
 
@@ -34,11 +33,14 @@ _WALK_COST, _EXPANSION_COST = 8, 3
 class Pace:
     """How a side divides its turns: classes expanded before its first walk, and turns for one more.
 
+    ``walks_a_turn`` is what a turn is that expands nothing.
+
     Walks cost little and stay on the fewest strands; expansions reach every neighbour.
     """
 
     expansions_first: int = 6
     turns_an_expansion: int = 3
+    walks_a_turn: int = 60
 
 
 @dataclass
@@ -158,7 +160,7 @@ class Explorer:
         """Walk from classes on the fewest strands, chosen by the seed of the turn."""
         from braidsearch.arc_walk import mixed_seed  # noqa: PLC0415 - loads a compiler
 
-        for number in range(_WALKS_A_TURN):
+        for number in range(self._pace.walks_a_turn):
             key = side.fewest[mixed_seed(side.turns, number) % len(side.fewest)]
             stretch = self._walker(side, key).propose(side.fewest_strands)
             if stretch is not None:
