@@ -21,9 +21,7 @@ const cellsOf = (word, layout) => word.map((letter, number) => ({
   letter, number, rows: 1, y: M.lead + M.levelHeight * layout.rows[number],
 }));
 
-const returnSpacingOf = (strands) => (
-  strands <= M.mostWideReturns ? M.strandSpacing : M.narrowReturn
-);
+const returnSpacingOf = (strands) => M.returnSpacings[strands];
 
 /* The word after a part, without its marks. */
 function applyPart(state, part) {

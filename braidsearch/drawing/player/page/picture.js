@@ -2,6 +2,15 @@
 
 const SVG = "http://www.w3.org/2000/svg";
 
+/* The light line inside a strand; room for the numbers of strands; the head of an arrow. */
+const INLAY = 1.3, NUMBER_ROOM = 22, ARROW_WIDTH = 10, ARROW_NOTCH = 2.8;
+const ARROW = [
+  [M.arrowLength / 2, 0],
+  [-M.arrowLength / 2, ARROW_WIDTH / 2],
+  [ARROW_NOTCH - M.arrowLength / 2, 0],
+  [-M.arrowLength / 2, -ARROW_WIDTH / 2],
+].map((point) => point.join(" ")).join("L");
+
 function makeElement(name, attributes = {}, parent = null) {
   const element = document.createElementNS(SVG, name);
   for (const [key, value] of Object.entries(attributes)) element.setAttribute(key, value);
@@ -102,14 +111,14 @@ class Picture {
       const dashes = M.dashes[component % M.dashes.length];
       const stroke = M.colours[component % M.colours.length];
       pool.next({ d, stroke, "stroke-width": M.stroke, "stroke-dasharray": "none" });
-      if (dashes) pool.next({ d, stroke: M.paper, "stroke-width": M.inlay, "stroke-dasharray": dashes });
+      if (dashes) pool.next({ d, stroke: M.paper, "stroke-width": INLAY, "stroke-dasharray": dashes });
     }
     pool.end();
     if (layer) return drawn;
     for (const { component, x, y, down } of drawn.arrows) {
       const at = place(x, y), angle = view.isRight ? 90 - 90 * down : 90 * down;
       this.arrows.next({
-        d: M.arrowPath,
+        d: `M${ARROW}Z`,
         fill: M.colours[component % M.colours.length],
         transform: `translate(${rounded(at[0])} ${rounded(at[1])}) rotate(${angle})`,
       });
@@ -212,9 +221,9 @@ function centreOf(item, frame, annulus) {
 function boxOf(frame, { isClosed, isRight }) {
   const outwards = frame.last * frame.returnSpacing;
   const rise = isClosed ? M.closingGap / 2 + outwards : 0;
-  const reach = isClosed ? M.closingGap + outwards + M.margin : M.numberRoom;
-  const left = isClosed ? -M.numberRoom : -M.margin;
-  const top = -(isClosed ? rise + M.margin : M.numberRoom);
+  const reach = isClosed ? M.closingGap + outwards + M.margin : NUMBER_ROOM;
+  const left = isClosed ? -NUMBER_ROOM : -M.margin;
+  const top = -(isClosed ? rise + M.margin : NUMBER_ROOM);
   const right = frame.last * M.strandSpacing + reach, bottom = frame.height + rise + M.margin;
   return isRight ? [top, -right, bottom, -left] : [left, top, right, bottom];
 }

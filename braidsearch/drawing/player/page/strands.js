@@ -7,6 +7,9 @@
 
 const SAMPLES = 10;
 
+/* To the control points, in levels; and how far a strand slants between two levels. */
+const STEEPNESS = 0.4, SLANT = 1.15;
+
 /* How two or three strands run through the rows of a small word: for each, its crossings. */
 function walkRows(letters, low, count) {
   const strands = Array.from({ length: count }, () => []);
@@ -99,9 +102,9 @@ function setSlants(strand) {
 
 /* The curve through a crossing, upright at its ends, or slanting there. */
 function crossingCubic(start, end, top, slantIn, slantOut) {
-  const bend = M.steepness * M.levelHeight, bottom = top + M.levelHeight;
+  const bend = STEEPNESS * M.levelHeight, bottom = top + M.levelHeight;
   const x0 = start * M.strandSpacing, x1 = end * M.strandSpacing;
-  const slant = M.slant * M.steepness * (x1 - x0);
+  const slant = SLANT * STEEPNESS * (x1 - x0);
   return [x0, top, x0 + slant * slantIn, top + bend, x1 - slant * slantOut, bottom - bend, x1, bottom];
 }
 
@@ -141,7 +144,7 @@ function samplesOfWalk(bundle, word, passage) {
 
 /* The heights of the samples, from the top of a bundle or of a cell. */
 function sampleHeights(rows) {
-  const bend = M.steepness * M.levelHeight, found = [];
+  const bend = STEEPNESS * M.levelHeight, found = [];
   for (let k = 0; k <= rows * SAMPLES; k += 1) {
     const row = Math.min(Math.floor(k / SAMPLES), rows - 1);
     const inside = bernstein(0, bend, M.levelHeight - bend, M.levelHeight, k / SAMPLES - row);
