@@ -61,9 +61,11 @@ def open_executor(processes: int | None = None, scheduler: str | None = None) ->
 
 @contextmanager
 def _process_pool(count: int) -> Iterator[Executor]:
-    pool = ProcessPoolExecutor(count, mp_context=get_context("spawn"), initializer=_begin_worker)
+    with _interrupts_held():
+        context = get_context("spawn")
+        pool = ProcessPoolExecutor(count, mp_context=context, initializer=_begin_worker)
     try:
-        with _interrupts_held():
+        with _interrupts_held(), _signals_blocked():
             for _ in range(count):
                 pool.submit(available_cores)  # anything: a process is started for each
         yield pool
@@ -105,11 +107,7 @@ def _termination_interrupts() -> Iterator[None]:
 
 @contextmanager
 def _interrupts_held() -> Iterator[None]:
-    """Let interrupts wait; so does every process that is started meanwhile, until it begins.
-
-    Ctrl-C goes to all processes of a terminal, and one that is only about to begin would answer it
-    with a traceback; so would one whose parent ends while it is being started.
-    """
+    """Let interrupts wait: a process whose parent ends while it is started has a traceback."""
     if threading.current_thread() is not threading.main_thread():
         yield  # no signal interrupts another thread
         return
@@ -119,8 +117,7 @@ def _interrupts_held() -> Iterator[None]:
         for number in (signal.SIGINT, signal.SIGTERM)
     }
     try:
-        with _signals_blocked():
-            yield
+        yield
     finally:
         for number, handler in handlers.items():
             signal.signal(number, handler)
@@ -130,7 +127,11 @@ def _interrupts_held() -> Iterator[None]:
 
 @contextmanager
 def _signals_blocked() -> Iterator[None]:
-    """Block what may interrupt, for this thread and for the processes that it starts."""
+    """Block what may interrupt, for this thread and for the processes that it starts.
+
+    Ctrl-C goes to all processes of a terminal, and one that is only about to begin would answer it
+    with a traceback.
+    """
     if not hasattr(signal, "pthread_sigmask"):
         yield
         return
