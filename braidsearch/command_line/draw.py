@@ -1,4 +1,4 @@
-"""braidsearch draw LINK: the picture of a braid, of its closure, or of a proof."""
+"""braidsearch draw LINK: the picture of a braid, of its closure, or of a proof; its page."""
 
 from __future__ import annotations
 
@@ -21,12 +21,14 @@ if TYPE_CHECKING:
 _DESCRIPTION = f"""Print a picture as SVG: of a braid, of its closure, or of all stages of the
 proof in a certificate, which is known by its content. Strands run downwards, or to the right;
 components differ in colour and in the pattern inside them; the word is kept as description.
+With --page a proof becomes one HTML page, which moves the strands from step to step.
 
 {INPUTS}"""
 
 _EXAMPLES = """  braidsearch draw "1 -2 1 -2" --closure -o figure-eight.svg
   braidsearch draw "4: 1 2 -1 2 3 2" --direction right --letters > braid.svg
   braidsearch draw proof.json -o proof.svg
+  braidsearch draw proof.json --page -o proof.html
   braidsearch compare "1 1 1" "1 2 1 2" -o - | braidsearch draw --proof - -o proof.svg"""
 
 _LONGEST_INPUT = 100_000_000
@@ -43,7 +45,7 @@ def answer(arguments: Sequence[str]) -> Answer:
     if given.output in (None, "-"):
         return Answer(SUCCESS, picture)
     _write_picture(picture, given.output)
-    return Answer(SUCCESS, f"picture: {given.output}")
+    return Answer(SUCCESS, f"{'page' if given.page else 'picture'}: {given.output}")
 
 
 def _parser() -> CommandParser:
@@ -52,6 +54,7 @@ def _parser() -> CommandParser:
     for flag, explanation in (
         ("--closure", "draw the closure of the braid"),
         ("--proof", "LINK is a certificate (a file, or - for standard input)"),
+        ("--page", "one HTML page that plays the proof, with the steps in words"),
         ("--letters", "write each letter beside its crossing (proofs have them always)"),
         ("--transparent", "without the white paper behind the picture"),
     ):
@@ -71,9 +74,18 @@ def _parser() -> CommandParser:
 def _check_choices(given: Namespace) -> None:
     if given.closure and given.proof:
         raise InputError("--closure: expected no --proof beside it")
+    if given.page:
+        _check_choices_of_page(given)
     if given.direction not in (None, "down", "right"):
         raise InputError(f"--direction: {given.direction!r}: expected down or right")
     _read_stages(given.stages)
+
+
+def _check_choices_of_page(given: Namespace) -> None:
+    """A page has choices of its own, which whoever looks at it makes there."""
+    for name in ("closure", "letters", "transparent", "direction", "stages"):
+        if getattr(given, name) not in (None, False):
+            raise InputError(f"--{name}: expected no --page beside it")
 
 
 def _read_stages(text: str | None) -> int | None:
@@ -95,12 +107,16 @@ def _picture(given: Namespace) -> str:
     if certificate is not None:
         if given.closure:
             raise InputError("--closure: expected a braid, since LINK is a certificate")
+        if given.page:
+            return _page(certificate)
         return drawing.draw_proof(
             certificate,
             direction=given.direction or "right",
             most_stages=_read_stages(given.stages),
             is_transparent=given.transparent,
         )
+    if given.page:
+        raise InputError("--page: expected a certificate, since it plays a proof")
     if given.stages is not None:
         raise InputError("--stages: expected a certificate, since it counts those of a proof")
     braid = read_link_argument("LINK", given.link)
@@ -114,6 +130,15 @@ def _picture(given: Namespace) -> str:
         )
     except CapacityError as error:
         raise CapacityError(f"LINK: {error}") from None
+
+
+def _page(certificate: Certificate) -> str:
+    from braidsearch.drawing.player import draw_proof_page  # noqa: PLC0415 - not for pictures
+
+    try:
+        return draw_proof_page(certificate).rstrip("\n")
+    except InputError as error:
+        raise InputError(f"LINK: {error}") from None
 
 
 def _read_certificate(given: Namespace) -> Certificate | None:

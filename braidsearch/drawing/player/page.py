@@ -48,7 +48,8 @@ def draw_proof_page(certificate: Certificate) -> str:
     Nothing is fetched: styles, script and the proof itself stand inside, and the page's own policy
     forbids everything else. With scripts off there are the claim, all steps in words, and a still
     sheet of the proof. Whether the claim holds is not checked here. Raises InputError where a
-    move of the certificate states what is no braid.
+    move of the certificate states what is no braid. The text is ASCII, so that it means the same in
+    every encoding.
     """
     proof = {"scenes": page_scenes(certificate), "reasons": REASONS}
     style, script = _resource("page.css"), _script()
@@ -79,7 +80,8 @@ def draw_proof_page(certificate: Certificate) -> str:
         "</body>",
         "</html>",
     ]
-    return "\n".join(parts) + "\n"
+    text = "\n".join(parts) + "\n"
+    return text.encode("ascii", "xmlcharrefreplace").decode("ascii")
 
 
 def _resource(name: str) -> str:
@@ -129,7 +131,8 @@ def _evidence(certificate: Certificate) -> Iterator[str]:
     for distinction in certificate.distinctions:
         of = "" if distinction.symmetry == "identity" else f"{distinction.symmetry} of "
         rows = "\n".join(
-            f'<tr><th scope="row">{name}</th><td class="value">{_value(distinction, value)}</td></tr>'
+            f'<tr><th scope="row">{name}</th>'
+            f'<td class="value">{_value(distinction, value)}</td></tr>'
             for name, value in (("LEFT", distinction.left), (f"{of}RIGHT", distinction.right))
         )
         yield (

@@ -1,4 +1,4 @@
-"""Chromium without a window, driven over the pipe of its DevTools protocol: no network, no driver."""
+"""Chromium without a window, driven over the pipe of its DevTools protocol."""
 
 from __future__ import annotations
 
@@ -165,10 +165,11 @@ class DrivenBrowser:
             )
 
     def mistakes(self) -> list[str]:
-        """What went wrong in the page since it was opened: exceptions, and what its policy stopped."""
+        """What went wrong since the page was opened: exceptions, and what its policy stopped."""
         self.run("1")
         found = []
         for event in self.events:
+            entry = event["params"].get("entry", {})
             if event["method"] == "Runtime.exceptionThrown":
                 details = event["params"]["exceptionDetails"]
                 found.append(details.get("exception", details).get("description", str(details)))

@@ -30,7 +30,7 @@ class LaneView {
       this.lane.states.forEach((state, boundary) => {
         if (!isDrawn(state)) return;
         const { count } = arrangeRows(state.word, new Set());
-        const box = boxOf(frameOf(state, [], heightOf(count + 2)), view);
+        const box = boxOf(frameOf(state, [], heightOf(count + 1)), view);
         const size = [box[2] - box[0], box[3] - box[1]];
         most = most ? [Math.max(most[0], size[0]), Math.max(most[1], size[1])] : size;
       });

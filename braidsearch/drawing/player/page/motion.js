@@ -67,7 +67,7 @@ function relationMovements(before, part, after) {
   }));
   const items = [...around.slice(0, at), bundle, ...around.slice(at + taken.length)];
   for (const cell of items.slice(0, at)) cell.becomes = cell.was;
-  const change = movement(0.75, (time) => ({
+  const change = movement(0.95, (time) => ({
     ...frameOf(before, items.map((item) => ({ ...item })), window.height),
     progress: smooth(time),
   }));

@@ -129,9 +129,9 @@ class Picture {
   /* A soft band, or a dashed outline, around the letters of each mark. */
   drawBoxes(frame, centres, view, place) {
     const side = M.strandSpacing / 2 + 7, end = M.levelHeight / 2 - 1.5;
-    for (const { has, isFrame, opacity } of frame.marks || []) {
-      const found = frame.items.filter(has).map((item) => [item, centres.get(item)]);
-      if (!found.length || opacity <= 0 || found.some(([, centre]) => centre.isAway)) continue;
+    for (const { items, isFrame, opacity } of groupsOf(frame)) {
+      const found = items.map((item) => [item, centres.get(item)]);
+      if (opacity <= 0 || found.some(([, centre]) => centre.isAway)) continue;
       let [left, top, right, bottom] = [Infinity, Infinity, -Infinity, -Infinity];
       for (const [item, { x, y }] of found) {
         const wide = item.walks ? ((item.count - 2) * M.strandSpacing) / 2 : 0;
@@ -195,6 +195,20 @@ class Picture {
     })) this.clipBox.setAttribute(key, value);
     this.body.setAttribute("clip-path", this.clipName);
   }
+}
+
+/* The items of each mark; letters that do not follow each other are marked one by one. */
+function groupsOf(frame) {
+  const groups = [];
+  for (const { has, isFrame, opacity } of frame.marks || []) {
+    let items = null;
+    for (const item of frame.items) {
+      if (!has(item)) items = null;
+      else if (items) items.push(item);
+      else groups.push({ items: (items = [item]), isFrame, opacity });
+    }
+  }
+  return groups;
 }
 
 /* Where an item stands on the page, and where its strands meet; it `isAway` on the way back. */
