@@ -80,6 +80,15 @@ def wait_until(is_so: Callable[[], bool], otherwise: str, patience: float = PATI
         time.sleep(0.02)
 
 
+def message_of(outcome: Outcome) -> str:
+    """The one line that a command has printed, which is all that it has printed."""
+    assert outcome.output == ""
+    lines = outcome.errors.splitlines()
+    assert len(lines) == 1, outcome.errors
+    assert lines[0].isprintable()
+    return lines[0]
+
+
 def is_root() -> bool:
     """Whether this process may do everything, so that no file is closed to it."""
     return hasattr(os, "geteuid") and os.geteuid() == 0
