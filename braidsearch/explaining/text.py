@@ -124,7 +124,7 @@ def _distinction_lines(distinction: ExplainedDistinction, width: int) -> Iterato
 
 
 def _table_lines(table: Table, names: Sequence[str], width: int) -> Iterator[str]:
-    """A row for each entry, with an arrow behind those that differ; three lines where it is wide."""
+    """A row for each entry, an arrow behind those that differ; three lines where it is wide."""
     rows = [(table.heading, *names)]
     rows += [(entry.label, entry.left, entry.right) for entry in table.entries]
     marks = ["", *(_ARROW if entry.differs else "" for entry in table.entries)]

@@ -87,7 +87,7 @@ def test_json_is_one_object(run: Runner) -> None:
 
 @pytest.mark.parametrize("name", [*expected("rejected")])
 def test_nothing_false_is_explained(run: Runner, name: str) -> None:
-    """A certificate that the verifier rejects ends with status 1 and one line, whatever is asked."""
+    """What the verifier rejects ends with status 1 and one line, whatever is asked."""
     file = str(path_of("rejected", name))
     for options in ([], ["--steps", "elementary"], ["--format", "latex"]):
         outcome = run("explain", file, *options)
@@ -101,7 +101,7 @@ def test_nothing_false_is_explained(run: Runner, name: str) -> None:
 
 @pytest.mark.parametrize("name", [*expected("malformed")])
 def test_what_is_no_certificate_is_unreadable(run: Runner, name: str) -> None:
-    """One line on standard error and status 2, for every file that the verifier calls unreadable."""
+    """One line on standard error and status 2, for every file that is unreadable."""
     assert run.fail("explain", str(path_of("malformed", name))).startswith("braidsearch explain: ")
 
 

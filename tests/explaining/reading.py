@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from dataclasses import replace
 from functools import cache
-from pathlib import Path
 
 from braidsearch.certificates import Certificate, read_certificate
 from braidsearch.explaining import Expansion
@@ -43,7 +42,7 @@ def chains(certificate: Certificate) -> list[tuple[Braid, tuple[Move, ...]]]:
 
 
 def without_moves(certificate: Certificate) -> Certificate:
-    """The same claim and the same values, with no move: only what is verified has moves to explain."""
+    """The same claim and values without moves: of these only what is verified is explained."""
     kept = [
         replace(distinction, left_moves=(), right_moves=())
         for distinction in certificate.distinctions

