@@ -130,8 +130,8 @@ INVARIANCE: dict[str, Theorem] = {
         (MURASUGI,),
     ),
     "levine-tristram": Theorem(
-        "Signature and nullity of (1 - w) V + (1 - 1/w) V^T, for a Seifert matrix V and a root of "
-        "unity w, depend on the oriented link alone.",
+        "Signature and nullity of (1 - w) V + (1 - 1/w) V^T, for a Seifert matrix V of a connected "
+        "surface and a root of unity w, depend on the oriented link alone.",
         (LEVINE, TRISTRAM),
     ),
     "colouring": Theorem(

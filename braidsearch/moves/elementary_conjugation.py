@@ -10,6 +10,7 @@ from braidsearch.moves.elementary_relations import (
     Letters,
     Relation,
     RelationChain,
+    check_capacity,
     count_essential,
     is_far,
 )
@@ -56,7 +57,10 @@ def conjugate_parts(word: Letters, by: Letters, target: Letters, strands: int) -
 def _conjugate_by_letters(word: Letters, waiting: Letters, target: Letters) -> list[Part]:
     """Conjugate by one letter after the other, taking away between them what cancels cheaply."""
     parts: list[Part] = []
+    letters = 0
     while waiting:
+        letters += len(word)
+        check_capacity(len(parts), letters)
         place, reduced = _best_letter(word, waiting)
         letter = waiting[place]
         waiting = waiting[:place] + waiting[place + 1 :]

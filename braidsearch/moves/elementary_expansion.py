@@ -6,7 +6,7 @@ from collections.abc import Iterable, Iterator
 
 from braidsearch.errors import CapacityError, InputError
 from braidsearch.moves.elementary_conjugation import Part, conjugate_parts
-from braidsearch.moves.elementary_relations import MAX_RELATIONS, Letters, apply_relation
+from braidsearch.moves.elementary_relations import Letters, apply_relation, check_capacity
 from braidsearch.moves.elementary_rewriting import rewrite_relations
 from braidsearch.moves.elementary_steps import (
     CONJUGATION,
@@ -17,9 +17,6 @@ from braidsearch.moves.elementary_steps import (
 )
 from braidsearch.moves.markov import Conjugate, Move, Rewrite, Stabilize, stated_result
 from braidsearch.words import MAX_LETTERS, Braid
-
-_MOST_LETTERS_IN_ALL = 16_000_000 // 3
-"""A certificate file has 16,000,000 bytes at most, and a letter takes three or more."""
 
 Stage = tuple[ElementaryStep, Move]
 """An elementary step, and the same step as a move, which states its result."""
@@ -39,19 +36,9 @@ def expand_moves(start: Braid, moves: Iterable[Move]) -> list[Stage]:
         added = _expand_move(braid, move, number)
         stages += added
         letters += sum(len(reached.word) for _, reached in added)
-        _check_capacity(len(stages), letters)
+        check_capacity(len(stages), letters)
         braid = stated_result(braid, move)
     return _without_detours(start, stages)
-
-
-def _check_capacity(steps: int, letters: int) -> None:
-    """Raise CapacityError for more steps, or letters in all, than a certificate can hold."""
-    for count, most, name in (
-        (steps, MAX_RELATIONS, "elementary steps"),
-        (letters, _MOST_LETTERS_IN_ALL, "letters in all elementary steps"),
-    ):
-        if count > most:
-            raise CapacityError(f"{count} {name}: expected at most {most}, as a certificate holds")
 
 
 def _expand_move(braid: Braid, move: Move, number: int) -> list[Stage]:
@@ -70,6 +57,7 @@ def _expand_move(braid: Braid, move: Move, number: int) -> list[Stage]:
 
 def _stages(word: Letters, target: Letters, parts: Iterable[Part], number: int) -> list[Stage]:
     stages: list[Stage] = []
+    letters = 0
     for part in parts:
         move: Move
         if isinstance(part, int):
@@ -81,6 +69,8 @@ def _stages(word: Letters, target: Letters, parts: Iterable[Part], number: int) 
             step, move = step_of_relation(part, number), Rewrite(word)
         if len(word) > MAX_LETTERS:
             raise CapacityError(f"a word of {len(word)} letters: expected {MAX_LETTERS} at most")
+        letters += len(word)
+        check_capacity(len(stages) + 1, letters)
         stages.append((step, move))
     if word != target:
         raise InputError(f"steps to {list(word)}: expected them to lead to {list(target)}")

@@ -13,6 +13,13 @@ MAX_RELATIONS = 100_000
 """The longest chain of relations: a certificate holds no more moves."""
 
 
+MAX_LETTERS_IN_ALL = 16_000_000 // 3
+"""The most letters of all words of a chain together.
+
+A certificate file has 16,000,000 bytes at most, and each letter takes three or more of them.
+"""
+
+
 class Relation(NamedTuple):
     """One relation where it acts: from index ``at`` (from 0), ``before`` becomes ``after``.
 
@@ -55,6 +62,18 @@ def braid_relation(first: int, middle: int, last: int) -> Letters | None:
     )
 
 
+def check_capacity(steps: int, letters: int) -> None:
+    """Raise CapacityError for more steps, or letters in all, than a certificate can hold."""
+    for count, most, name in (
+        (steps, MAX_RELATIONS, "elementary steps"),
+        (letters, MAX_LETTERS_IN_ALL, "letters in all elementary steps"),
+    ):
+        if count > most:
+            raise CapacityError(
+                f"more than {most} {name}: expected no more than a certificate holds"
+            )
+
+
 def is_relation(relation: Relation) -> bool:
     """Whether the letters before and after are those of a single relation."""
     _, before, after = relation
@@ -94,6 +113,15 @@ def count_essential(relations: Iterable[Relation]) -> int:
     return sum(len(before) != 2 or not after for _, before, after in relations)
 
 
+def count_letters(word: Letters, relations: Iterable[Relation]) -> int:
+    """How many letters all words have together that the relations lead to."""
+    letters, length = 0, len(word)
+    for _, before, after in relations:
+        length += len(after) - len(before)
+        letters += length
+    return letters
+
+
 def reversed_chain(relations: Sequence[Relation]) -> list[Relation]:
     """The relations that lead back, last one first."""
     return [relation.reversed() for relation in reversed(relations)]
@@ -123,8 +151,7 @@ class RelationChain:
         self.relations: list[Relation] = []
 
     def _replace(self, at: int, length: int, after: Letters) -> None:
-        if len(self.relations) >= MAX_RELATIONS:
-            raise CapacityError(f"more than {MAX_RELATIONS} relations: expected at most so many")
+        check_capacity(len(self.relations) + 1, 0)
         before = tuple(self.letters[at : at + length])
         self.relations.append(Relation(at, before, after))
         self.letters[at : at + length] = after

@@ -13,6 +13,8 @@ from braidsearch.moves.elementary_relations import (
     Relation,
     RelationChain,
     backwards_chain,
+    check_capacity,
+    count_letters,
     reversed_chain,
 )
 from braidsearch.moves.elementary_search import search_relations, shorten_chain
@@ -63,7 +65,10 @@ def _join(word: Letters, target: Letters) -> list[Relation]:
         routes = list(_iter_routes(word, target))
         if not routes:
             raise InputError(f"{list(word)} and {list(target)}: expected words for one braid")
-        found = postpone_commutations(word, min(routes, key=len), target)
+        found = min(routes, key=len)
+        # Commutations that are put off make the chain shorter, hardly to less than a half.
+        check_capacity(0, count_letters(word, found) // 2)
+        found = postpone_commutations(word, found, target)
         if len(found) <= _SHORT:
             found = shorten_chain(word, found, 1)
     return postpone_commutations(word, found, target)

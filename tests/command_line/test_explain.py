@@ -8,6 +8,7 @@ from pathlib import Path
 import pytest
 
 from braidsearch.certificates import read_certificate
+from braidsearch.moves import elementary_relations
 from tests.command_line.running import Runner
 from tests.explaining.latex_checking import check_latex
 from tests.verifier.cases import expected, path_of
@@ -123,6 +124,16 @@ def test_what_is_no_certificate_is_unreadable(run: Runner, name: str) -> None:
 def test_mistakes_are_one_line(run: Runner, arguments: list[str], message: str) -> None:
     """The offending text and what was expected."""
     assert message in run.fail("explain", *arguments) or not arguments
+
+
+def test_too_many_elementary_steps_are_refused(
+    run: Runner, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    """What no certificate can hold ends with one line; the moves are explained all the same."""
+    monkeypatch.setattr(elementary_relations, "MAX_RELATIONS", 30)
+    message = run.fail("explain", EXCHANGE, "--steps", "elementary")
+    assert "more than 30 elementary steps" in message
+    assert run("explain", EXCHANGE).status == 0
 
 
 def test_standard_input_is_read(run: Runner, monkeypatch: pytest.MonkeyPatch) -> None:

@@ -2,6 +2,7 @@
 
 import random
 from dataclasses import replace
+from functools import cache
 
 import pytest
 from hypothesis import given, settings
@@ -11,7 +12,7 @@ from braidsearch import SearchLimits, compare, verify
 from braidsearch.certificates import Certificate, format_certificate, parse_certificate
 from braidsearch.errors import CapacityError, InputError
 from braidsearch.explaining import expand_certificate
-from braidsearch.moves import Conjugate, MoveChain, Rewrite, elementary_expansion, exchange
+from braidsearch.moves import Conjugate, Move, MoveChain, Rewrite, elementary_relations, exchange
 from braidsearch.words import Braid
 from tests.explaining.reading import ACCEPTED, accepted, chains, check_steps, last_braid
 from tests.knot_tables import iter_knots, iter_links
@@ -86,12 +87,24 @@ def test_false_moves_are_refused() -> None:
 def test_more_steps_than_a_certificate_holds_are_refused(monkeypatch: pytest.MonkeyPatch) -> None:
     """The bounds on steps and on letters in all each end in one line."""
     certificate = accepted("same-exchange-written-out.json")
-    for name, bound in (("MAX_RELATIONS", 20), ("_MOST_LETTERS_IN_ALL", 100)):
+    for name, bound in (("MAX_RELATIONS", 20), ("MAX_LETTERS_IN_ALL", 100)):
         with monkeypatch.context() as changed:
-            changed.setattr(elementary_expansion, name, bound)
-            with pytest.raises(CapacityError, match="expected at most") as refused:
+            changed.setattr(elementary_relations, name, bound)
+            with pytest.raises(CapacityError, match="expected no more") as refused:
                 expand_certificate(certificate)
         assert "\n" not in str(refused.value)
+
+
+@pytest.mark.parametrize("length", [3_000, 50_000])
+def test_long_rewritings_end_soon(length: int) -> None:
+    """Words of tens of thousands of letters are written anew, or refused, within seconds."""
+    generator = random.Random(9)
+    word = [generator.choice([1, -1]) * generator.randrange(1, 9) for _ in range(length)]
+    other = [1, *word, -1] if length < 10_000 else [*word[::-1], 3]
+    moves = [Rewrite(tuple(other))]
+    certificate = Certificate.same(Braid(word), Braid(other), "identity", moves)
+    with pytest.raises((CapacityError, InputError)):
+        expand_certificate(certificate)
 
 
 def test_a_long_way_around_does_not_fit() -> None:
@@ -103,13 +116,19 @@ def test_a_long_way_around_does_not_fit() -> None:
         expand_certificate(certificate)
 
 
+@cache
+def expanded_moves(name: str) -> tuple[Move, ...]:
+    """The elementary moves of an accepted certificate."""
+    return expand_certificate(accepted(name)).certificate.moves
+
+
 @settings(max_examples=25)
 @given(st.integers(0, 10**6))
 def test_damaged_expansions_are_rejected(seed: int) -> None:
     """A letter changed in one step, or a step left out that changes the word, is noticed."""
     generator = random.Random(seed)
     certificate = accepted("same-morton-unknot.json")
-    moves = list(expand_certificate(certificate).certificate.moves)
+    moves = list(expanded_moves("same-morton-unknot.json"))
     place = generator.randrange(len(moves))
     word = list(moves[place].word)
     if word and generator.random() < 0.5:
