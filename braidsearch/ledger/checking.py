@@ -249,7 +249,8 @@ def _contradictions(store: Store) -> Iterator[str]:
     )
     for number, verdict, one, other in rows:
         if number not in known and verdict == "same":
-            yield f"proof {number}: it joins classes {one} and {other}, which are kept apart"
+            first, second = sorted((one, other))
+            yield f"proof {number}: it joins classes {first} and {second}, which are kept apart"
         elif number not in known:
             yield f"proof {number}: it tells braids apart that are both in class {one}"
 
