@@ -116,6 +116,19 @@ def connect(path: str | os.PathLike[str], *, create: bool) -> sqlite3.Connection
     return connection
 
 
+def _check_length(connection: sqlite3.Connection, name: str) -> None:
+    """Raise InputError for a file of which the last page is not whole.
+
+    SQLite finds out by itself when pages are missing, but would fill up the last one with zeros.
+    While there is a log beside the file, pages may be about to come from it.
+    """
+    page_size = connection.execute("PRAGMA page_size").fetchone()[0]
+    log = f"{name}-wal"
+    has_log = os.path.exists(log) and os.path.getsize(log) > 0
+    if os.path.getsize(name) % page_size and not has_log:
+        raise InputError(f"{name}: damaged (its end is missing): {EXPECTED_INTACT}")
+
+
 def _set_up(connection: sqlite3.Connection, name: str, create: bool) -> None:
     connection.execute("PRAGMA foreign_keys = ON")
     if create and _is_empty(connection):
@@ -132,6 +145,7 @@ def _set_up(connection: sqlite3.Connection, name: str, create: bool) -> None:
             f"{name}: a ledger of version {version}, made by {maker} braidsearch: "
             f"expected version {VERSION}"
         )
+    _check_length(connection, name)
     connection.execute("PRAGMA synchronous = FULL")
 
 
