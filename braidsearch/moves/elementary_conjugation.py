@@ -24,10 +24,10 @@ from braidsearch.words.reduction import find_rotation
 _LETTER_COST = 2
 """How many relations it may cost to make the word one letter shorter, in the middle of the way."""
 
-_MOST_RELATIONS = 120
+_MOST_RELATIONS = 60
 """The most relations that are tried to make the word shorter, far commutations included."""
 
-_MOST_LETTERS_FOR_BOTH = 120
+_MOST_LETTERS_FOR_BOTH = 60
 _LONG = 300
 """Beyond so many letters in a word and its conjugator, letters go as they stand."""
 

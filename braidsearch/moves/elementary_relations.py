@@ -151,7 +151,8 @@ class RelationChain:
         self.relations: list[Relation] = []
 
     def _replace(self, at: int, length: int, after: Letters) -> None:
-        check_capacity(len(self.relations) + 1, 0)
+        if len(self.relations) >= MAX_RELATIONS:
+            check_capacity(len(self.relations) + 1, 0)
         before = tuple(self.letters[at : at + length])
         self.relations.append(Relation(at, before, after))
         self.letters[at : at + length] = after

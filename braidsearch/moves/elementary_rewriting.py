@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Sequence
+from itertools import product
 
 from braidsearch.errors import InputError
 from braidsearch.moves.elementary_handles import reduce_chain_handles
@@ -62,10 +63,9 @@ def _join(word: Letters, target: Letters) -> list[Relation]:
     if len(word) + len(target) <= _LONG:
         found = search_relations(word, target, _MOST_WORDS)
     if found is None:
-        routes = list(_iter_routes(word, target))
-        if not routes:
+        found = _shortest_route(word, target)
+        if found is None:
             raise InputError(f"{list(word)} and {list(target)}: expected words for one braid")
-        found = min(routes, key=len)
         # Commutations that are put off make the chain shorter, hardly to less than a half.
         check_capacity(0, count_letters(word, found) // 2)
         found = postpone_commutations(word, found, target)
@@ -74,47 +74,64 @@ def _join(word: Letters, target: Letters) -> list[Relation]:
     return postpone_commutations(word, found, target)
 
 
-def _iter_routes(word: Letters, target: Letters) -> Iterator[list[Relation]]:
-    """Ways by handle reduction, with generators and with words read from either end."""
+def _shortest_route(word: Letters, target: Letters) -> list[Relation] | None:
+    """The best way by handle reduction, with generators and words read from either end.
+
+    None where the words are two elements. A route is given up when it is longer than the best.
+    """
     if len(word) + len(target) > _LONG:
-        relations = _through_quotient(word, target, 1)
-        if relations is not None:
-            yield relations
-        return
-    backwards, target_backwards = word[::-1], target[::-1]
-    for direction in (1, -1):
-        yield from _iter_reductions(word, target, direction)
-        for route in _iter_reductions(backwards, target_backwards, direction):
-            yield backwards_chain(backwards, route)
+        return _reduce_quotient(word, target, 1, MAX_RELATIONS)
+    best: list[Relation] | None = None
+    for route, direction, is_backwards in product(_ROUTES, (1, -1), (False, True)):
+        most = MAX_RELATIONS if best is None else len(best) - 1
+        if is_backwards:
+            found = route(word[::-1], target[::-1], direction, most)
+            found = None if found is None else backwards_chain(word[::-1], found)
+        else:
+            found = route(word, target, direction, most)
+        if best is None and found is None:
+            return None
+        if found is not None and (best is None or len(found) < len(best)):
+            best = found
+    return best
 
 
-def _iter_reductions(word: Letters, target: Letters, direction: int) -> Iterator[list[Relation]]:
-    """Reduce both words, and what then parts them; or what parts them from the start."""
-    there, back = RelationChain(word), RelationChain(target)
-    for chain in (there, back):
-        reduce_chain_handles(chain, direction, MAX_RELATIONS)
-    middle: list[Relation] | None = []
-    if there.letters != back.letters:
-        middle = _through_quotient(tuple(there.letters), tuple(back.letters), direction)
-    if middle is None:
-        return
-    yield there.relations + middle + reversed_chain(back.relations)
-    forth = _through_quotient(word, target, direction)
-    if forth is not None:
-        yield forth
-    back_again = _through_quotient(target, word, direction)
-    if back_again is not None:
-        yield reversed_chain(back_again)
-
-
-def _through_quotient(word: Letters, target: Letters, direction: int) -> list[Relation] | None:
+def _reduce_quotient(
+    word: Letters, target: Letters, direction: int, most: int
+) -> list[Relation] | None:
     """Insert target^-1 target behind the word, then reduce word target^-1, which is trivial.
 
-    None when it is not: the words are two elements.
+    None when it is not, since the words are two elements; and beyond ``most`` relations.
     """
     inserted = RelationChain(word)
     for place, letter in enumerate(reversed(target)):
         inserted.insert(len(word) + place, -letter)
     quotient = RelationChain(inserted.letters[: len(word) + len(target)])
-    reduce_chain_handles(quotient, direction, MAX_RELATIONS, len(word))
+    reduce_chain_handles(quotient, direction, most - len(target), len(word))
     return None if quotient.letters else inserted.relations + quotient.relations
+
+
+def _reduce_other_quotient(
+    word: Letters, target: Letters, direction: int, most: int
+) -> list[Relation] | None:
+    """The same from the target, read back."""
+    back = _reduce_quotient(target, word, direction, most)
+    return None if back is None else reversed_chain(back)
+
+
+def _reduce_both(
+    word: Letters, target: Letters, direction: int, most: int
+) -> list[Relation] | None:
+    """Reduce the handles of both words first, then what still parts them."""
+    there, back = RelationChain(word), RelationChain(target)
+    for chain in (there, back):
+        if not reduce_chain_handles(chain, direction, most):
+            return None
+    middle: list[Relation] | None = []
+    if there.letters != back.letters:
+        room = most - len(there.relations) - len(back.relations)
+        middle = _reduce_quotient(tuple(there.letters), tuple(back.letters), direction, room)
+    return None if middle is None else there.relations + middle + reversed_chain(back.relations)
+
+
+_ROUTES = (_reduce_quotient, _reduce_other_quotient, _reduce_both)
