@@ -62,9 +62,9 @@ class _Contents:
 
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read or written."""
+    given = _parser().read(arguments)
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - help comes faster
 
-    given = _parser().read(arguments)
     processes = read_processes(given)
     _check_ledger(given.ledger)
     contents = _read_files(given, processes)

@@ -28,13 +28,13 @@ _FEW = 1_000  # proofs and classes that are checked before other processes have 
 
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read."""
-    from braidsearch.ledger.executors import open_executor  # noqa: PLC0415 - help comes faster
-    from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - the same
-
     parser = ledger_parser("check", _DESCRIPTION, _EXAMPLES)
     parser.add_json()
     add_workers(parser)
     given = parser.read(arguments)
+    from braidsearch.ledger.executors import open_executor  # noqa: PLC0415 - help comes faster
+    from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - the same
+
     processes = read_processes(given)
     with Ledger(given.ledger) as ledger:
         size = ledger.store.count("evidence") + ledger.store.count("classes")

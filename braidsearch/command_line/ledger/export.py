@@ -27,10 +27,10 @@ _TEXTS = ("csv", "json_lines")
 
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read or written."""
+    given = _parser().read(arguments)
     from braidsearch.ledger import exporting  # noqa: PLC0415 - help comes faster
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - the same
 
-    given = _parser().read(arguments)
     _check_choices(given)
     for path in (given.csv, given.json_lines):
         if path not in (None, "-"):

@@ -17,6 +17,7 @@ from braidsearch.command_line.ledger.showing import (
     answer_with_certificate,
     check_output,
     entry_to_json,
+    more_nodes,
     plural,
     quoted,
     show_entries,
@@ -42,8 +43,6 @@ _EXAMPLES = """  braidsearch ledger find rings.ledger "1 2 1 2"
 
 exit status: 0 the link of a class, 1 different from all, 3 undecided, 2 for a mistake in the
 input."""
-
-_MORE_NODES = 10
 
 
 def answer(arguments: Sequence[str]) -> Answer:
@@ -138,7 +137,7 @@ def _report_undecided(given: Namespace, found: Found, entries: Sequence[StoredEn
         if one.outcome == "different"
     ]
     ledger, link = quoted(given.ledger), quoted(given.link)
-    more = _MORE_NODES * max(read_nodes(given), 1)
+    more = more_nodes(read_nodes(given))
     lines.append(f"to go on: braidsearch ledger find {ledger} {link} --nodes {more}")
     word = quoted(_typed(open_ones[0].entry))
     return [*lines, f"  or: braidsearch compare {link} {word} --seconds 600 --nodes none"]

@@ -38,9 +38,9 @@ exit status: 0 same, 1 different, 3 undecided, 2 for a mistake in the input."""
 
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read or written."""
+    given = _parser().read(arguments)
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - help comes faster
 
-    given = _parser().read(arguments)
     check_output(given)
     up_to = read_symmetries(given.up_to)
     with Ledger(given.ledger) as ledger:

@@ -48,9 +48,9 @@ exit status: 0, 1 with contradictions, 2 for a mistake in the input."""
 
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read."""
+    given = _parser().read(arguments)
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - help comes faster
 
-    given = _parser().read(arguments)
     asked = read_symmetries(given.up_to)
     with Ledger(given.ledger) as ledger:
         report = ledger.report(asked or SYMMETRIES[1:])

@@ -89,7 +89,14 @@ def show_tried(question: OpenQuestion) -> str:
 def retry_command(ledger: str, questions: Sequence[OpenQuestion]) -> str:
     """The command that tries the open questions with more."""
     nodes = max(question.tried.nodes for question in questions)
-    return f"braidsearch ledger sort {quoted(ledger)} --nodes {max(nodes, 1) * _MORE_NODES}"
+    return f"braidsearch ledger sort {quoted(ledger)} --nodes {more_nodes(nodes)}"
+
+
+def more_nodes(nodes: int) -> int:
+    """The nodes to go on with, after so many did not do."""
+    from braidsearch.ledger.ledger import DEFAULT_NODES  # noqa: PLC0415 - help comes faster
+
+    return max(nodes * _MORE_NODES, DEFAULT_NODES)
 
 
 def quoted(text: str) -> str:

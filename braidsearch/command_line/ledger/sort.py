@@ -19,7 +19,7 @@ from braidsearch.command_line.ledger.options import (
     read_symmetries,
 )
 from braidsearch.command_line.ledger.progress import shown_progress
-from braidsearch.command_line.ledger.showing import CONTRADICTED, OPEN, plural, quoted
+from braidsearch.command_line.ledger.showing import CONTRADICTED, OPEN, more_nodes, plural, quoted
 from braidsearch.errors import InputError
 
 if TYPE_CHECKING:
@@ -47,9 +47,9 @@ _FEW = 100  # braids that are sorted before other processes have started
 
 def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read or written."""
+    given = _parser().read(arguments)
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - help comes faster
 
-    given = _parser().read(arguments)
     limits = {"nodes": read_nodes(given), "max_strands": getattr(given, "max_strands", None)}
     processes, up_to = read_processes(given), read_symmetries(given.up_to)
     with Ledger(given.ledger) as ledger:
@@ -170,7 +170,7 @@ def _report(
     lines.append(f"open questions: {counts['open_questions'] or 'none'}")
     lines.append(f"contradictions: {counts['contradictions'] or 'none'}")
     if counts["open_questions"]:
-        more = 5 * read_nodes(given)
+        more = more_nodes(read_nodes(given))
         lines.append(f"to go on: braidsearch ledger sort {ledger} --nodes {more}")
     lines.append(f"next: braidsearch ledger report {ledger}")
     return lines
