@@ -73,7 +73,7 @@ def _chain_lines(chain: ExplainedChain, width: int, title: str) -> Iterator[str]
     goal = f" to {chain.goal}" if chain.goal else " to a braid that is handier to compute with"
     verb = "leads" if len(chain.steps) == 1 else "lead"
     text = f"{title}: {count_of(len(chain.steps), 'step')} {verb} from {chain.start}{goal}"
-    yield from _wrap(text, "", width)
+    yield from _wrap(text, "" if chain.goal else "  ", width)
     size = len(str(len(chain.steps)))
     for step in chain.steps:
         yield from _step_lines(step, size, width)

@@ -28,10 +28,13 @@ _MOST_RELATIONS = 60
 """The most relations that are tried to make the word shorter, far commutations included."""
 
 _MOST_LETTERS_FOR_BOTH = 60
+"""Up to so many letters in both words and the conjugator, both directions are tried."""
+
 _LONG = 300
 """Beyond so many letters in a word and its conjugator, letters go as they stand."""
 
 _MOST_STRANDS_TO_TWIST = 12
+"""A full twist on n strands has n (n - 1) letters: on more strands it makes nothing shorter."""
 
 Part = Relation | int
 """A relation, or the letter a by which the whole word is conjugated: a^-1 in front, a behind."""
@@ -40,8 +43,8 @@ Part = Relation | int
 def conjugate_parts(word: Letters, by: Letters, target: Letters, strands: int) -> list[Part]:
     """Relations and conjugations by letters that lead from ``word`` to ``target``.
 
-    The caller knows that target = by^-1 word by; any conjugator that does the same will do. Both
-    directions are tried, since the words between may be longer in one of them.
+    The caller knows that target = by^-1 word by; any conjugator that does the same will do. For
+    small words both directions are tried, since the words between may be longer in one of them.
     """
     rotation = find_rotation(Braid.trusted(word, strands), Braid.trusted(target, strands))
     if rotation is not None:
