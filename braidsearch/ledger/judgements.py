@@ -147,9 +147,18 @@ class Judgements:
             f"AND left IN {inside} AND right IN {inside}",
             [number, number],
         )
-        if found is None:
-            raise ValueError(f"class {number} holds no proof of sameness")
-        return int(found)
+        return self._evidence_of_itself(number) if found is None else int(found)
+
+    def _evidence_of_itself(self, number: int) -> int:
+        """The proof that a form is the link that it is, kept where a class has no other form."""
+        from braidsearch.ledger.placing import Finding  # noqa: PLC0415 - loads the search, which look-ups do without
+
+        form = self.store.form_of_class(number)
+        braid = self.store.braid(form)
+        text = format_certificate(Certificate.same(braid, braid, "identity", ()))
+        return self.store.add_evidence(
+            form, form, Finding(braid, braid, "identity", "same", text, "the same braid")
+        )
 
 
 def fingerprint_certificate(
