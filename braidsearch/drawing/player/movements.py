@@ -7,7 +7,7 @@ from dataclasses import dataclass
 from typing import Any
 
 from braidsearch.errors import BraidsearchError
-from braidsearch.moves import Conjugate, Destabilize, Move, Rewrite, Stabilize
+from braidsearch.moves import Conjugate, Destabilize, Move, Stabilize
 from braidsearch.moves.elementary_expansion import expand_moves
 from braidsearch.moves.elementary_steps import CANCELLATION, CONJUGATION, ElementaryStep
 from braidsearch.words import Braid
@@ -43,8 +43,8 @@ def movement_parts(
         return [["stabilization", move.word[-1]]]
     if isinstance(move, Destabilize):
         return [["destabilization", braid.word[-1]]]
-    if move.word == braid.word and isinstance(move, Rewrite):
-        return []
+    if move.word == braid.word:
+        return [["stay", list(components)]]
     parts = _turn(braid, move) or _written_out(braid, move, budget)
     if parts is None:
         parts = [["rewriting", list(move.word), list(components)]]

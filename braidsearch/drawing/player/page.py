@@ -38,8 +38,8 @@ SCRIPTS = (
 )
 """The parts of the page's one script, in the order in which they need each other."""
 
-STILL_STAGES = 24
-"""Stages of the sheet for those who look without scripts."""
+STILL_STAGES, STILL_CROSSINGS = 24, 1_500
+"""About how much the sheet shows those who look without scripts: the page is to stay small."""
 
 
 def draw_proof_page(certificate: Certificate) -> str:
@@ -168,7 +168,9 @@ def _step_text(move: Move) -> str:
 
 
 def _still_sheet(certificate: Certificate) -> str:
-    sheet = draw_proof(certificate, most_stages=STILL_STAGES)
+    longest = max(len(certificate.left), *(len(move.word) for move in certificate.moves), 1)
+    stages = min(STILL_STAGES, max(2, STILL_CROSSINGS // longest))
+    sheet = draw_proof(certificate, most_stages=stages)
     return sheet.replace(' style="max-width:100%;height:auto"', "", 1)  # the page's style has it
 
 

@@ -7,6 +7,7 @@ import json
 import os
 import select
 import subprocess
+import sys
 import time
 from pathlib import Path
 from types import TracebackType
@@ -15,6 +16,15 @@ from typing import Any
 from tests.drawing.browser import CHROMIUM
 
 _PATIENCE = 60.0
+
+_WITH_PIPES = """
+import fcntl, os, sys
+ends = [fcntl.fcntl(int(number), fcntl.F_DUPFD, 10) for number in sys.argv[1:3]]
+for end, number in zip(ends, (3, 4)):
+    os.dup2(end, number)
+os.execv(sys.argv[3], sys.argv[3:])
+"""
+"""Chromium reads commands from file descriptor 3 and answers on 4."""
 
 
 class DrivenBrowser:
@@ -37,7 +47,7 @@ class DrivenBrowser:
             "about:blank",
         ]
         self._process = subprocess.Popen(
-            ["sh", "-c", f'exec "$@" 3<&{to_child} 4>&{from_child}', "sh", *arguments],
+            [sys.executable, "-c", _WITH_PIPES, str(to_child), str(from_child), *arguments],
             pass_fds=(to_child, from_child),
             stdout=subprocess.DEVNULL,
             stderr=subprocess.DEVNULL,

@@ -1,6 +1,7 @@
 /* A lane on the page: its picture, fitted to its paper. */
 
-const SMALLEST_SCALE = 0.62, LARGEST_SCALE = 1.7;
+/* A picture that would be smaller than the smallest is scrolled instead. */
+const SMALLEST_SCALE = 0.62, SCROLLED_SCALE = 1, LARGEST_SCALE = 1.7;
 
 /* One lane on the page: its picture, its scrolling paper, the caption. */
 class LaneView {
@@ -67,8 +68,9 @@ class LaneView {
     const most = this.largest(view), fitting = ([w, h]) => Math.min(room.width / w, room.height / h);
     let scale = Math.min(LARGEST_SCALE, fitting(most));
     if (scale < SMALLEST_SCALE) {
-      scale = Math.max(SMALLEST_SCALE, Math.min(LARGEST_SCALE, fitting([width, height])));
-      if (view.isClosed) scale = Math.min(LARGEST_SCALE, Math.max(0.45, fitting([width, height])));
+      const across = view.isRight ? room.height / height : room.width / width;
+      scale = Math.min(LARGEST_SCALE, fitting([width, height]));
+      scale = Math.max(scale, Math.min(SCROLLED_SCALE, Math.max(SMALLEST_SCALE, across)));
     }
     const shown = [Math.max(room.width, width * scale), Math.max(room.height, height * scale)];
     const { svg } = this.picture, [w, h] = shown.map((value) => value / scale);

@@ -56,8 +56,10 @@ function applyPart(state, part) {
       return {
         word: word.slice(0, -1), strands: strands - 1, components: components.slice(0, -1),
       };
-    default: // "rewriting" or "other word": the whole word anew
-      return { ...state, word: part[1], components: part[2] || components };
+    case "stay":
+      return { ...state, components: part[1] };
+    default: // "rewriting": the whole word anew
+      return { ...state, word: part[1], components: part[2] };
   }
 }
 

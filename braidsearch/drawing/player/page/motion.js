@@ -265,6 +265,10 @@ const rewritingMovements = (before, part, after) => [movement(0.9, (time) => ({
 function movementsOf(before, part, after) {
   const make = {
     relation: relationMovements,
+    stay: (from, _, to) => [
+      movement(0.3, () => frameOfStage(from)),
+      ...shiftLetters(from, from, to, samePairs(from.word.length)),
+    ],
     turn: turnMovements,
     conjugation: conjugationMovements,
     stabilization: stabilizationMovements,

@@ -21,6 +21,7 @@ class Player {
     this.speed = 1;
     this.view = { isClosed: false, isRight: false, hasLetters: true };
     this.stops = stopsOf(this.scenes, false);
+    this.elements.telling.append(...document.querySelectorAll(".evidence"));
     this.connect();
     this.settle();
     window.addEventListener("resize", () => this.measure());

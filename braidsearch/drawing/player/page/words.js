@@ -41,6 +41,7 @@ function partText(part) {
     case "conjugation": return `conjugation by ${part[1]}: its inverse in front, itself behind.`;
     case "stabilization": return `a new strand with the letter ${part[1]}.`;
     case "destabilization": return `the last strand goes with the letter ${part[1]}.`;
+    case "stay": return "the word stays as it is.";
     default: return "rewritten by braid relations.";
   }
 }

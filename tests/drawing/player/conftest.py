@@ -1,0 +1,17 @@
+"""One browser for all tests of the page, since it takes a while to start."""
+
+from collections.abc import Iterator
+
+import pytest
+
+from tests.drawing.browser import CHROMIUM
+from tests.drawing.player.driven_browser import DrivenBrowser
+
+
+@pytest.fixture(scope="session")
+def browser(tmp_path_factory: pytest.TempPathFactory) -> Iterator[DrivenBrowser]:
+    """A running browser; where there is none, the test is skipped."""
+    if CHROMIUM is None:
+        pytest.skip("there is no chromium here to look with")
+    with DrivenBrowser(tmp_path_factory.mktemp("profile")) as driven:
+        yield driven
