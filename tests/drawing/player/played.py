@@ -50,6 +50,13 @@ class PlayedPage:
             f"if (box.checked !== {json.dumps(is_chosen)}) box.click(); }})()"
         )
 
+    def select(self, name: str, value: str) -> None:
+        """Choose a value of a list."""
+        self.browser.run(
+            f"(() => {{ const list = document.getElementById({json.dumps(name)});"
+            f"list.value = {json.dumps(value)}; list.dispatchEvent(new Event('change')); }})()"
+        )
+
     def slide(self, stop: int) -> None:
         """Move the slider."""
         self.browser.run(

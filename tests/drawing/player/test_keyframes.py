@@ -27,7 +27,7 @@ from tests.drawing.player.proofs import RELATIONS, accepted, random_proof
 PROOFS = {
     "relations": RELATIONS,
     "exchange": accepted("same-exchange-written-out"),
-    "random": random_proof(4, 24),
+    "random": random_proof(4, 14),
 }
 HALF_A_HUNDREDTH = 0.0101
 """Both round to hundredths, one to the even neighbour where two are equally near."""
