@@ -92,6 +92,10 @@ class Ledger:
         added = known = 0
         with blaming_damage(self.store), self.store.writing():
             for entry in entries:
+                if not entry.name:
+                    raise InputError(
+                        f"{entry.given or entry.braid!r}: expected an entry with a name"
+                    )
                 check_label(entry.name, "name")
                 check_label(entry.source, "source")
                 if self.store.add_entry(entry):

@@ -12,6 +12,7 @@ from hypothesis import strategies as st
 from braidsearch import verify
 from braidsearch.certificates import Certificate
 from braidsearch.errors import InputError
+from braidsearch.ledger.executors import open_executor
 from braidsearch.ledger.ledger import AddSummary, Ledger
 from braidsearch.ledger.reading import Entry
 from braidsearch.search.driver import compare
@@ -78,6 +79,9 @@ def test_names_that_cannot_be_shown_are_refused(tmp_path: Path, name: str) -> No
             ledger.add([entry(name, "", TREFOIL)])
         with pytest.raises(InputError, match="source"):
             ledger.add([entry("a", name, TREFOIL)])
+        with pytest.raises(InputError, match="expected an entry with a name"):
+            ledger.add([entry("", "", TREFOIL)])
+        assert ledger.store.count("entries") == 0
 
 
 def test_entries_are_named_in_three_ways(sorted_once: Path) -> None:
@@ -177,17 +181,18 @@ def test_any_executor_makes_the_same_ledger(tmp_path: Path) -> None:
     """Tasks that end in any order leave the same rows, the proofs to the letter."""
     entries = random_entries(7, 40)
     dumps = []
-    for name, workers in (("serial", None), ("threads", 3)):
-        with Ledger(tmp_path / name, create=True) as ledger:
+    executors = {
+        "serial": lambda: open_executor(1),
+        "threads": lambda: ThreadPoolExecutor(3),
+        "processes": lambda: open_executor(2),
+    }
+    for name, make in executors.items():
+        with make() as executor, Ledger(tmp_path / name, create=True) as ledger:
             ledger.add(entries)
-            if workers is None:
-                ledger.sort(up_to=("mirror",))
-            else:
-                with ThreadPoolExecutor(workers) as executor:
-                    ledger.sort(up_to=("mirror",), executor=executor)
+            ledger.sort(up_to=("mirror",), executor=executor)
             assert ledger.check().valid
         dumps.append(dump(tmp_path / name))
-    assert dumps[0] == dumps[1]
+    assert dumps[0] == dumps[1] == dumps[2]
 
 
 def test_a_ledger_may_grow(tmp_path: Path) -> None:

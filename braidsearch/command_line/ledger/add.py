@@ -165,11 +165,12 @@ def _read_links(file: str, given: Namespace, processes: int | None, display: Dis
         )
     )
     drawings = sum(not isinstance(row, Problem) and row.notation != WORD for row in rows)
-    if drawings < _MANY_DRAWINGS and given.scheduler is None:
-        processes = 1
+    scheduler = given.scheduler
+    if drawings < _MANY_DRAWINGS:
+        processes, scheduler = 1, None
     from braidsearch.ledger.executors import open_executor  # noqa: PLC0415 - help comes faster
 
-    with open_executor(processes, given.scheduler) as executor:
+    with open_executor(processes, scheduler) as executor:
         outcomes = _iter_outcomes(
             rows, executor, lambda done: display.tell("reading", done, len(rows))
         )
