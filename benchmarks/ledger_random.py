@@ -62,6 +62,7 @@ class Tenths:
         self.rates: list[float] = []
 
     def __call__(self, progress: SortProgress) -> None:
+        """Take note of how far the sorting is."""
         if progress.doing != "sorting" or progress.done == 0:
             return
         if progress.done - self.done < self.total // 10 and progress.done < progress.total:
@@ -117,7 +118,9 @@ def main() -> int:
                 ledger.sort(executor=executor, progress=tenths)
             print(f"sorted in {time.perf_counter() - start:.0f} s")
         memory = peak_memory()
-        print(f"memory at most {memory / 2**20:.0f} MiB, file {Path(path).stat().st_size >> 20} MiB")
+        print(
+            f"memory at most {memory / 2**20:.0f} MiB, file {Path(path).stat().st_size >> 20} MiB"
+        )
         decided, others = time_finds(path, options.finds)
     for title, seconds in (("by invariants", decided), ("same, or searched for", others)):
         if seconds:
