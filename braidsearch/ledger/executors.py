@@ -6,7 +6,7 @@ import os
 import signal
 import threading
 from collections.abc import Callable, Iterator
-from concurrent.futures import BrokenExecutor, Executor, Future, ProcessPoolExecutor
+from concurrent.futures import BrokenExecutor, CancelledError, Executor, Future, ProcessPoolExecutor
 from contextlib import contextmanager
 from multiprocessing import get_context, parent_process
 from typing import Any
@@ -168,7 +168,7 @@ def _end_now(pool: ProcessPoolExecutor) -> None:
 @contextmanager
 def _dask_executor(address: str) -> Iterator[Executor]:
     try:
-        from distributed import Client  # noqa: PLC0415 - an extra that few install
+        from distributed import Client, KilledWorker  # noqa: PLC0415 - an extra that few install
     except ImportError:
         raise InputError(
             f"--scheduler {address}: the library of Dask clusters is missing: "
@@ -183,5 +183,12 @@ def _dask_executor(address: str) -> Iterator[Executor]:
             f"--scheduler {address}: {reason}: expected the address of a running Dask "
             "scheduler, such as tcp://127.0.0.1:8786"
         ) from None
-    with client:
-        yield client.get_executor(pure=False)
+    try:
+        with client:
+            yield client.get_executor(pure=False)
+    except (CancelledError, KilledWorker):
+        raise InputError(
+            f"--scheduler {address}: the cluster has ended, or its workers have, before their work "
+            "was done: what was kept before is not lost: expected a cluster that stays; run the "
+            "command again to go on"
+        ) from None
