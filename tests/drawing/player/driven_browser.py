@@ -183,10 +183,8 @@ class DrivenBrowser:
             if event["method"] == "Runtime.exceptionThrown":
                 details = event["params"]["exceptionDetails"]
                 found.append(details.get("exception", details).get("description", str(details)))
-            elif (
-                event["method"] == "Log.entryAdded" and event["params"]["entry"]["level"] == "error"
-            ):
-                found.append(event["params"]["entry"]["text"])
+            elif entry.get("level") == "error":
+                found.append(entry["text"])
         return found
 
     def requests(self) -> list[str]:

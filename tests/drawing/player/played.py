@@ -27,6 +27,12 @@ _LOOK = """
     [path.getAttribute("stroke"), path.getAttribute("d")]))
 """
 
+SLIDE = """(() => {
+  const slider = document.getElementById("slider");
+  slider.value = %d;
+  slider.dispatchEvent(new Event("input"));
+})()"""
+
 Strands = list[tuple[str, str]]
 """The colour and the path data of each component."""
 
@@ -59,10 +65,7 @@ class PlayedPage:
 
     def slide(self, stop: int) -> None:
         """Move the slider."""
-        self.browser.run(
-            f"(() => {{ const slider = document.getElementById('slider'); slider.value = {stop};"
-            "slider.dispatchEvent(new Event('input')); })()"
-        )
+        self.browser.run(SLIDE % stop)
 
     @property
     def last_stop(self) -> int:
@@ -89,6 +92,5 @@ class PlayedPage:
 def picture_of(strands: Strands) -> Picture:
     """The strands, read back as from a file."""
     paths = "".join(f'<path stroke="{colour}" d="{data}"/>' for colour, data in strands)
-    return read_picture(
-        f'<svg xmlns="http://www.w3.org/2000/svg"><g fill="none" stroke-width="3.6">{paths}</g></svg>'
-    )
+    group = f'<g fill="none" stroke-width="3.6">{paths}</g>'
+    return read_picture(f'<svg xmlns="http://www.w3.org/2000/svg">{group}</svg>')

@@ -1,7 +1,7 @@
 /* A lane on the page: its picture, fitted to its paper. */
 
 /* A picture that would be smaller than the smallest is scrolled instead. */
-const SMALLEST_SCALE = 0.62, SCROLLED_SCALE = 1, LARGEST_SCALE = 1.7;
+const SMALLEST_SCALE = 0.5, SCROLLED_SCALE = 1, LARGEST_SCALE = 1.7;
 
 /* One lane on the page: its picture, its scrolling paper, the caption. */
 class LaneView {
