@@ -184,6 +184,17 @@ class Ledger:
             )
         return Proof(certificate.verdict, certificate.symmetry, certificate)
 
+    def joined(
+        self, entry: StoredEntry, other: StoredEntry, up_to: Sequence[str] = ()
+    ) -> Certificate | None:
+        """The evidence that two sorted entries are one link, joined as it is stored.
+
+        Unlike that of ``proof`` it was not verified again. None where nothing joins them.
+        """
+        asked = tuple(dict.fromkeys(("identity", *up_to)))
+        with blaming_damage(self.store):
+            return Proofs(self.store).same(entry.braid_number, other.braid_number, asked)
+
     def _sorted_entry(self, reference: str) -> StoredEntry:
         entry = self.entry(reference)
         if entry.class_number is None:

@@ -115,6 +115,37 @@ def test_mistakes_get_one_line(run: Runner, arguments: Sequence[str], said: str)
     assert dump(Path("a.ledger")) == before
 
 
+@pytest.mark.parametrize(
+    "statement",
+    [
+        "UPDATE braids SET word = '1 x' WHERE id = 2",
+        "UPDATE evidence SET certificate = '{'",
+        "DELETE FROM evidence",
+        "UPDATE entries SET remarks = '['",
+        "UPDATE fingerprints SET alexander = '['",
+        "DELETE FROM forms",
+    ],
+)
+def test_damage_is_said_to_be_damage(run: Runner, statement: str) -> None:
+    """Whatever the action, a ledger with forged rows ends in a line or an answer, no defect."""
+    damage(Path("a.ledger"), statement)
+    for arguments in (
+        ["sort", "a.ledger"],
+        ["find", "a.ledger", "1 2 1 2"],
+        ["find", "a.ledger", "1 1 1 1 1"],
+        ["proof", "a.ledger", "teasel", "dock"],
+        ["proof", "a.ledger", "burdock", "bench/thistle"],
+        ["report", "a.ledger", "--all"],
+        ["report", "a.ledger", "--class", "burdock"],
+        ["export", "a.ledger", "--csv", "all.csv", "--certificates", "proofs"],
+        ["check", "a.ledger"],
+    ):
+        outcome = run("ledger", *arguments)
+        assert "internal error" not in outcome.errors, arguments
+        assert outcome.status != 2 or outcome.errors.count("\n") == 1
+    assert outcome.status == 1
+
+
 def test_entries_of_odd_names(run: Runner) -> None:
     """Names with blanks, quotes and other letters are found as they stand."""
     outcome = run("ledger", "proof", "a.ledger", 'Mädesüß "high"', "sorrel, common")

@@ -9,7 +9,7 @@ from pathlib import Path
 import pytest
 
 from braidsearch import verify
-from braidsearch.command_line.ledger import showing
+from braidsearch.command_line.ledger import listing, showing
 from braidsearch.ledger.ledger import Ledger
 from tests.command_line.running import Runner
 from tests.ledger.ledgers import TWINS, damage, entry, make_ledger, partition
@@ -42,7 +42,7 @@ def test_the_report_lists_what_was_merged(run: Runner, ledger: str) -> None:
     assert lines[:3] == [
         "entries: 8",
         "classes: 5 oriented links, 2 with more than one entry",
-        "groups: 4 up to mirror images and reverses, as far as asked",
+        "groups: 4 up to mirror images and reverses",
     ]
     assert "open questions: none" in lines
     assert "contradictions: none" in lines
@@ -59,6 +59,20 @@ def test_the_report_lists_what_was_merged(run: Runner, ledger: str) -> None:
     ]
 
 
+def test_groups_are_only_so_far_where_not_all_was_asked(run: Runner, tmp_path: Path) -> None:
+    """Classes that nobody has asked for images are counted, with the command that asks."""
+    path = str(make_ledger(tmp_path / "plants.ledger"))
+    command = f"braidsearch ledger sort {path} --up-to"
+    said = f"up to mirror images and reverses, so far; 5 classes not asked for all: {command} any"
+    assert f"groups: 5 {said}" in run("ledger", "report", path).output
+    with Ledger(path) as ledger:
+        ledger.sort(up_to=("mirror",))
+    mirrored = run("ledger", "report", path, "--up-to", "mirror").output
+    assert "groups: 4 up to mirror\n" in mirrored
+    both = run("ledger", "report", path, "--up-to", "mirror,reverse").output
+    assert f"so far; 5 classes not asked for all: {command} mirror,reverse" in both
+
+
 def test_single_entries_are_listed_when_asked(run: Runner, ledger: str) -> None:
     """--all leaves nothing out."""
     output = run("ledger", "report", ledger, "--all").output
@@ -73,6 +87,11 @@ def test_long_listings_are_cut(run: Runner, ledger: str, monkeypatch: pytest.Mon
     monkeypatch.setattr(showing, "MOST_LINES", 3)
     cut = run("ledger", "report", ledger).output.splitlines()
     assert "  ... 5 more lines (--all shows them)" in cut
+    monkeypatch.setattr(listing, "MOST_ENTRIES", 2)
+    lines = run("ledger", "report", ledger, "--up-to", "any").output.splitlines()
+    assert lines[-1] == "  ... 1 more line (--all shows them)"
+    monkeypatch.setattr(showing, "MOST_LINES", 30)
+    assert "  ... 1 more (--class 3 lists them)" in run("ledger", "report", ledger).output
     assert run("ledger", "report", ledger, "--all").output.splitlines() == whole
 
 

@@ -30,6 +30,7 @@ def answer(arguments: Sequence[str]) -> Answer:
     given = _parser().read(arguments)
     from braidsearch.ledger import exporting  # noqa: PLC0415 - help comes faster
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - the same
+    from braidsearch.ledger.soundness import blaming_damage  # noqa: PLC0415 - the same
 
     _check_choices(given)
     for path in (given.csv, given.json_lines):
@@ -37,7 +38,7 @@ def answer(arguments: Sequence[str]) -> Answer:
             exporting.check_output(path)
     if given.certificates is not None:
         exporting.check_proofs_folder(given.certificates)
-    with Ledger(given.ledger) as ledger, ledger.store.reading():
+    with Ledger(given.ledger) as ledger, blaming_damage(ledger.store), ledger.store.reading():
         entries = list(exporting.iter_exported(ledger.store))
         makers = {"csv": exporting.iter_table_lines, "json_lines": exporting.iter_json_lines}
         text, written = _write_texts(given, {name: make(entries) for name, make in makers.items()})

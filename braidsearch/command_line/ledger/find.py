@@ -51,8 +51,9 @@ def answer(arguments: Sequence[str]) -> Answer:
     check_output(given)
     nodes = read_nodes(given)
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - help comes faster
+    from braidsearch.ledger.soundness import blaming_damage  # noqa: PLC0415 - the same
 
-    with Ledger(given.ledger) as ledger:
+    with Ledger(given.ledger) as ledger, blaming_damage(ledger.store):
         _check_sorted(ledger, given.ledger)
         found = ledger.find(read_link_argument("LINK", given.link), nodes=nodes)
         entries = _entries_of(ledger, found)

@@ -40,10 +40,11 @@ def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read or written."""
     given = _parser().read(arguments)
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - help comes faster
+    from braidsearch.ledger.soundness import blaming_damage  # noqa: PLC0415 - the same
 
     check_output(given)
     up_to = read_symmetries(given.up_to)
-    with Ledger(given.ledger) as ledger:
+    with Ledger(given.ledger) as ledger, blaming_damage(ledger.store):
         one, other = ledger.entry(given.left), ledger.entry(given.right)
         proof = ledger.proof(f"#{one.number}", f"#{other.number}", up_to=up_to)
     write_output(given, proof.certificate)

@@ -7,29 +7,25 @@ from collections.abc import Sequence
 from dataclasses import replace
 from typing import TYPE_CHECKING, Any
 
-from braidsearch.certificates.display import show_value
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
+from braidsearch.command_line.ledger.listing import list_classes, list_groups, list_one_class
 from braidsearch.command_line.ledger.options import add_symmetries, ledger_parser, read_symmetries
 from braidsearch.command_line.ledger.showing import (
     CONTRADICTED,
-    MOST_LINES,
     cut,
     entry_to_json,
     plural,
     quoted,
     retry_command,
     show_contradictions,
-    show_entry,
     show_question,
 )
 from braidsearch.errors import InputError
-from braidsearch.words import SYMMETRIES, format_word
+from braidsearch.words import SYMMETRIES
 
 if TYPE_CHECKING:
-    from braidsearch.certificates import Certificate
     from braidsearch.ledger.ledger import Ledger
-    from braidsearch.ledger.reporting import LedgerReport, LinkClass, OpenQuestion
-    from braidsearch.ledger.store import StoredEntry
+    from braidsearch.ledger.reporting import LedgerReport, OpenQuestion
 
 _DESCRIPTION = """Show what a ledger holds: how many classes; those with more than one entry, with
 the moves by which each entry is joined to the first; what is open, with the limits tried; and
@@ -50,9 +46,10 @@ def answer(arguments: Sequence[str]) -> Answer:
     """Carry out the command. Raises InputError for what cannot be read."""
     given = _parser().read(arguments)
     from braidsearch.ledger.ledger import Ledger  # noqa: PLC0415 - help comes faster
+    from braidsearch.ledger.soundness import blaming_damage  # noqa: PLC0415 - the same
 
     asked = read_symmetries(given.up_to)
-    with Ledger(given.ledger) as ledger:
+    with Ledger(given.ledger) as ledger, blaming_damage(ledger.store):
         report = ledger.report(asked or SYMMETRIES[1:])
         wanted = _asked_class(given)
         if wanted is not None:
@@ -115,11 +112,13 @@ def _lines(
     lines = show_contradictions(report.contradictions)
     is_one = _asked_class(given) is not None
     if not is_one:
-        lines += _totals(given, report, asked)
-    if is_one or not asked:
-        lines += cut(_classes(ledger, report, given.all, is_one), given.all)
+        lines += _totals(ledger, given, report, asked)
+    if is_one:
+        lines += cut(list_one_class(ledger, report.classes[0]), given.all)
+    elif not asked:
+        lines += cut(list_classes(ledger, report.classes, is_whole=given.all), given.all)
     if asked or any(len(group) > 1 for group in report.groups):
-        lines += cut(_groups(ledger, report, given.all), given.all)
+        lines += cut(list_groups(ledger, report.groups, is_whole=given.all), given.all)
     if report.open_questions:
         lines.append(f"open questions: {len(report.open_questions)}")
         questions = [f"  {show_question(question)}" for question in report.open_questions]
@@ -128,14 +127,15 @@ def _lines(
     return lines
 
 
-def _totals(given: Namespace, report: LedgerReport, asked: Sequence[str]) -> list[str]:
+def _totals(
+    ledger: Ledger, given: Namespace, report: LedgerReport, asked: Sequence[str]
+) -> list[str]:
     entries = sum(len(one.entries) for one in report.classes)
     many = sum(len(one.entries) > 1 for one in report.classes)
-    up_to = f"up to {', '.join(asked)}" if asked else "up to mirror images and reverses"
     lines = [
         f"entries: {entries + report.unsorted}",
         f"classes: {plural(len(report.classes), 'oriented link')}, {many} with more than one entry",
-        f"groups: {len(report.groups)} {up_to}, as far as asked",
+        f"groups: {_groups(ledger, given, report, asked)}",
         f"proofs: {report.proofs}",
     ]
     if report.unsorted:
@@ -146,106 +146,25 @@ def _totals(given: Namespace, report: LedgerReport, asked: Sequence[str]) -> lis
     return lines
 
 
+def _groups(ledger: Ledger, given: Namespace, report: LedgerReport, asked: Sequence[str]) -> str:
+    """How many groups there are, and how many classes were not asked for all these images."""
+    wanted = asked or SYMMETRIES[1:]
+    marks = ", ".join("?" * len(wanted))
+    waiting = ledger.store.one(
+        "SELECT count(*) FROM classes WHERE (SELECT count(*) FROM imaged "
+        f"WHERE imaged.form = classes.form AND symmetry IN ({marks})) < ?",
+        [*wanted, len(wanted)],
+    )
+    up_to = f"up to {', '.join(asked)}" if asked else "up to mirror images and reverses"
+    count = f"{len(report.groups)} {up_to}"
+    if not waiting:
+        return count
+    command = f"{_sort_command(given.ledger)} --up-to {','.join(asked) or 'any'}"
+    return f"{count}, so far; {plural(waiting, 'class')} not asked for all: {command}"
+
+
 def _sort_command(ledger: str) -> str:
     return f"braidsearch ledger sort {quoted(ledger)}"
-
-
-def _classes(ledger: Ledger, report: LedgerReport, is_whole: bool, has_values: bool) -> list[str]:
-    """The classes with more than one entry, and single ones where they are asked for."""
-    shown = [one for one in report.classes if len(one.entries) > 1 or is_whole or has_values]
-    lines: list[str] = []
-    for one in shown:
-        if len(lines) > MOST_LINES and not is_whole:  # a proof for each entry takes its time
-            lines += [""] * (1 + len(one.entries))
-        else:
-            lines += _class_lines(ledger, one, has_values, is_whole)
-    single = len(report.classes) - len(shown)
-    if single:
-        lines.append(f"classes with one entry: {single} (--all lists them)")
-    return lines
-
-
-def _class_lines(ledger: Ledger, one: LinkClass, has_values: bool, is_whole: bool) -> list[str]:
-    form = format_word(one.form)
-    lines = [f"class {one.number}: {plural(len(one.entries), 'entry')}, word {form}"]
-    if has_values:
-        lines += _value_lines(ledger, one.number)
-    first = one.entries[0] if one.entries else None
-    for place, entry in enumerate(one.entries):
-        if first is None or entry is first or (place > MOST_LINES and not is_whole):
-            lines.append(f"  {show_entry(entry)}")
-            continue
-        certificate = _proof(ledger, entry, first, ("identity",))
-        lines.append(f"  {show_entry(entry)}: {_joined(certificate)}")
-    return lines
-
-
-def _proof(
-    ledger: Ledger, entry: StoredEntry, first: StoredEntry, symmetries: Sequence[str]
-) -> Certificate | None:
-    from braidsearch.ledger.proofs import Proofs  # noqa: PLC0415 - help comes faster
-
-    return Proofs(ledger.store).same(entry.braid_number, first.braid_number, symmetries)
-
-
-def _joined(certificate: Certificate | None) -> str:
-    if certificate is None:
-        return "NO PROOF joins it: see braidsearch ledger check"
-    return f"{_moves(certificate)} to the first"
-
-
-def _value_lines(ledger: Ledger, number: int) -> list[str]:
-    from braidsearch.invariants import TITLES  # noqa: PLC0415 - help comes faster
-    from braidsearch.ledger.fingerprints import FIELDS  # noqa: PLC0415 - the same
-
-    marks = ledger.store.fingerprint_of_class(number)
-    lines = []
-    for name in FIELDS:
-        value = marks.value(name)
-        shown = "not computed" if value is None else show_value(name, value)
-        lines.append(f"  {TITLES[name]}: {shown}")
-    return lines
-
-
-def _groups(ledger: Ledger, report: LedgerReport, is_whole: bool) -> list[str]:
-    """Classes that are images of each other, and what each is of the first."""
-    lines: list[str] = []
-    single = 0
-    for group in report.groups:
-        if len(group) == 1:
-            single += 1
-        elif len(lines) > MOST_LINES and not is_whole:
-            lines += [""] * (1 + len(group))
-        else:
-            lines += _group_lines(ledger, group)
-    if single:
-        lines.append(f"classes in no group with others: {single}")
-    return lines
-
-
-def _group_lines(ledger: Ledger, group: Sequence[int]) -> list[str]:
-    from braidsearch.ledger.reporting import first_entry  # noqa: PLC0415 - help comes faster
-
-    first = first_entry(ledger.store, group[0])
-    lines = [f"group of {plural(len(group), 'class')}"]
-    for number in group:
-        entry = first_entry(ledger.store, number)
-        said = f"  class {number}, {show_entry(entry)}"
-        if number != group[0]:
-            certificate = _proof(ledger, entry, first, SYMMETRIES)
-            said += f": {_image(certificate)}"
-        lines.append(said)
-    return lines
-
-
-def _image(certificate: Certificate | None) -> str:
-    if certificate is None:
-        return "NO PROOF joins it: see braidsearch ledger check"
-    return f"{certificate.symmetry} of the first, by {_moves(certificate)}"
-
-
-def _moves(certificate: Certificate) -> str:
-    return plural(len(certificate.moves), "move") if certificate.moves else "no move"
 
 
 def _to_json(report: LedgerReport) -> dict[str, Any]:

@@ -56,7 +56,10 @@ def cut(lines: Sequence[str], is_whole: bool) -> list[str]:
     """The lines; of a long listing the first ones, and how many were left out."""
     if is_whole or len(lines) <= MOST_LINES:
         return list(lines)
-    return [*lines[:MOST_LINES], f"  ... {len(lines) - MOST_LINES} more lines (--all shows them)"]
+    return [
+        *lines[:MOST_LINES],
+        f"  ... {plural(len(lines) - MOST_LINES, 'more line')} (--all shows them)",
+    ]
 
 
 def show_contradictions(contradictions: Iterable[Contradiction]) -> list[str]:
