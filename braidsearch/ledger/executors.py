@@ -169,6 +169,7 @@ def _end_now(pool: ProcessPoolExecutor) -> None:
 def _dask_executor(address: str) -> Iterator[Executor]:
     try:
         from distributed import Client, KilledWorker  # noqa: PLC0415 - an extra that few install
+        from distributed.comm import get_address_host_port  # noqa: PLC0415 - the same
     except ImportError:
         raise InputError(
             f"--scheduler {address}: the library of Dask clusters is missing: "
@@ -176,6 +177,7 @@ def _dask_executor(address: str) -> Iterator[Executor]:
         ) from None
     open_client: Any = Client  # the library has no types
     try:
+        get_address_host_port(address)  # a client for what is no address does not close well
         client = open_client(address, timeout="10s", set_as_default=False)
     except (OSError, ValueError, TypeError) as error:
         reason = str(error).splitlines()[0] if str(error) else type(error).__name__

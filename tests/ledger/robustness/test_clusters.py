@@ -96,13 +96,21 @@ def test_a_scheduler_that_does_not_answer_is_named_in_one_line(life: Life, tmp_p
     assert ledger_text(path) == life.text_after["add"]
 
 
-@pytest.mark.parametrize("address", ["nowhere", "http://127.0.0.1:9", "tcp://127.0.0.1", ""])
+@pytest.mark.parametrize("address", ["nowhere", "http://127.0.0.1:9", "tcp://127.0.0.1:x", ""])
 def test_an_address_that_is_none_is_named_in_one_line(address: str):
     """What is no address of a scheduler is refused as such."""
     with pytest.raises(InputError) as refused, open_executor(scheduler=address):
         pass
     assert address in str(refused.value)
     assert str(refused.value).isprintable()
+
+
+def test_the_command_refuses_such_an_address_and_ends(life: Life, tmp_path: Path):
+    """Nothing of the library's own follows the one line."""
+    path = life.copy_before(SORT, tmp_path / "ledger")
+    outcome = run("sort", str(path), "--scheduler", "tcp://127.0.0.1")
+    assert outcome.status == 2
+    assert "tcp://127.0.0.1" in message_of(outcome)
 
 
 @pytest.mark.slow
