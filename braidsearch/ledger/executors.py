@@ -169,7 +169,7 @@ def _end_now(pool: ProcessPoolExecutor) -> None:
 def _dask_executor(address: str) -> Iterator[Executor]:
     try:
         from distributed import Client, KilledWorker  # noqa: PLC0415 - an extra that few install
-        from distributed.comm import get_address_host_port  # noqa: PLC0415 - the same
+        from distributed.comm.addressing import get_address_host_port  # noqa: PLC0415 - the same
     except ImportError:
         raise InputError(
             f"--scheduler {address}: the library of Dask clusters is missing: "
