@@ -94,8 +94,10 @@ class Player {
   }
 
   measure() {
-    const lanes = this.views.length, bounds = this.elements.stage.getBoundingClientRect();
-    const isBeside = lanes > 1 && bounds.width >= 520;
+    const half = this.elements.stage.clientWidth / 2;
+    const isBeside = this.views.length > 1 && (half > 260 || this.views.every((laneView) => (
+      laneView.largest({ isClosed: true, isRight: false })[0] * SMALLEST_SCALE < half
+    )));
     this.elements.stage.classList.toggle("is-beside", isBeside);
     const paper = this.views[0].paper;
     this.room = { width: paper.clientWidth, height: paper.clientHeight };
