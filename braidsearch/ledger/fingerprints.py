@@ -33,7 +33,8 @@ _REMEMBERED = 50_000
 
 @dataclass(frozen=True, slots=True)
 class Fingerprint:
-    """Values of the invariants in FIELDS, each as compact JSON, None where it costs too much.
+    """Values of the invariants in FIELDS, each as compact JSON, None where it costs too much
+    or is too large for the verifier.
 
     Every value was computed by two routes, the searcher's and the verifier's. Links whose
     fingerprints differ in a value that both have are different oriented links.
@@ -80,10 +81,12 @@ def _value(invariant: Invariant, braid: Braid) -> str | None:
         value = invariant.compute(braid)
     except CapacityError:
         return None
-    if not is_confirmed(invariant.name, braid, value):
-        raise ArithmeticError(
-            f"{invariant.name} of {braid!r}: the searcher and the verifier disagree"
-        )
+    is_right = is_confirmed(invariant.name, braid, value)
+    if is_right is None:
+        return None
+    if not is_right:
+        size = f"{braid.strands} strands, {len(braid)} letters: {braid.word[:20]}..."
+        raise ArithmeticError(f"{invariant.name} of {size}: the searcher and the verifier disagree")
     return json.dumps(value, separators=(",", ":"))
 
 

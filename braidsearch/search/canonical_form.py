@@ -66,7 +66,12 @@ def _one_pass(braid: Braid) -> Route:
 
 
 def _to_shortest_word(route: Route) -> Route:
-    """The route continued by a conjugation to the shortest word of the summit of its class."""
+    """The route continued by a conjugation to the shortest word of the summit of its class.
+
+    The summit of a large braid is out of reach, and its words are long: that one stays as it is.
+    """
+    if not summit_cap(route.current):
+        return route
     found = conjugacy_class(route.current, summit_cap(route.current))
     by, word = _shortest_member(found.representative)
     return route.conjugated(found.conjugator + by, Braid.trusted(word, route.current.strands))
@@ -75,7 +80,7 @@ def _to_shortest_word(route: Route) -> Route:
 @lru_cache(maxsize=_REMEMBERED)
 def _shortest_member(representative: Braid) -> tuple[Letters, Letters]:
     """The shortest word for a member of the summit, the least such, with its conjugator."""
-    words = iter_words(representative, summit_cap(representative) and SUMMIT_CAP)
+    words = iter_words(representative, SUMMIT_CAP)
     return min(words, key=lambda pair: (len(pair[1]), pair[1]))
 
 

@@ -25,6 +25,10 @@ def judge(certificate: Certificate) -> Report:
     )
 
 
-def is_confirmed(invariant: str, braid: Braid, value: Any) -> bool:
-    """Whether the verifier's own route gives the same value for the closure of the braid."""
-    return bool(recompute(invariant, braid.strands, braid.word) == value)
+def is_confirmed(invariant: str, braid: Braid, value: Any) -> bool | None:
+    """Whether the verifier's own route gives the same value for the closure of the braid.
+
+    None for a value that is too large for the verifier.
+    """
+    recomputed = recompute(invariant, braid.strands, braid.word)
+    return None if recomputed is None else bool(recomputed == value)

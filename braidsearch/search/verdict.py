@@ -28,3 +28,11 @@ class Verdict:
     explored: Mapping[str, Any] = field(hash=False)
     suggestions: tuple[str, ...] = ()
     image: Certificate | None = None
+
+    def _repr_html_(self) -> str:
+        """The outcome with what proves it, for a notebook."""
+        from braidsearch.drawing.notebook import (  # noqa: PLC0415 - upwards, see the test of imports
+            verdict_html,
+        )
+
+        return verdict_html(self)
