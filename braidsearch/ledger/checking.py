@@ -149,7 +149,7 @@ def _is_confirmed(name: str, form: Braid, marks: Fingerprint) -> bool:
         value = marks.value(name)
     except ValueError:  # no JSON
         return False
-    return value is None or is_confirmed(name, form, value)
+    return value is None or bool(is_confirmed(name, form, value))
 
 
 def _check_values(
