@@ -158,3 +158,26 @@ def test_the_command_tells_damage_in_one_line(sound: bytes, tmp_path: Path):
     message = message_of(outcome)
     assert str(path) in message
     assert "damaged" in message
+
+
+@pytest.mark.parametrize(
+    ("old", "new"),
+    [
+        (b"seen twice", b"seen twine"),  # a note
+        (b"canonical form of the mirror", b"canonical farm of the mirror"),  # how a proof was found
+        (b"node limit", b"note limit"),  # why a question is open
+        (b"drawn", b"drown"),  # a source
+    ],
+)
+def test_a_changed_text_that_no_proof_holds_is_found(
+    old: bytes, new: bytes, sound: bytes, tmp_path: Path
+):
+    """Each single text in the file, changed in one place to another of the same length, is told."""
+    path = tmp_path / "ledger"
+    places = [at for at in range(len(sound)) if sound.startswith(old, at)]
+    assert len(places) > 1  # in its table, and in an index
+    for at in (places[0], places[-1]):
+        remove(path)
+        path.write_bytes(sound[:at] + new + sound[at + len(old) :])
+        check = answer_of(path, lambda ledger: ledger.check())
+        assert isinstance(check, str) or not check.valid, at
