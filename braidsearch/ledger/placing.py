@@ -17,7 +17,7 @@ from braidsearch.search.gate import judge
 from braidsearch.search.limits import Budget, Ending, SearchLimits
 from braidsearch.search.meet import Meeting
 from braidsearch.search.proof import checked_chain
-from braidsearch.search.query import Query
+from braidsearch.search.query import Course, Query
 from braidsearch.search.route import Route
 from braidsearch.words import Braid
 
@@ -28,6 +28,11 @@ _FINER_SECONDS = 0.1  # and before the finer ones are
 _PACE = Pace(expansions_first=1, turns_an_expansion=12, walks_a_turn=20)
 _ROUNDS = ((0.1, 0.1), (0.2, 0.5), (0.4, 5.0), (0.6, 20.0))
 """As of a query, for searches that are short beside the dearer invariants."""
+
+_LEAST_NODES = (0, 200, 2_000, 20_000)
+"""So many nodes must be allowed for each of these rounds: whoever asks for little waits little."""
+
+_ALLOWANCE = 30.0
 
 Marked = tuple[Braid, Fingerprint]
 """A form with its fingerprint."""
@@ -128,12 +133,21 @@ def ask(left: Braid, right: Braid, symmetry: str, effort: Effort) -> Finding:
     Raises KeyboardInterrupt when it is interrupted: an answer that nothing but the user's
     impatience left open must not be kept.
     """
-    query = Query(left, right, (symmetry,), Budget(effort.limits), others=(), rounds=_ROUNDS)
+    query = Query(
+        left, right, (symmetry,), Budget(effort.limits), others=(), course=_course(effort)
+    )
     verdict = query.settled()
     if verdict.explored["ending"] == Ending.INTERRUPTED.value:
         raise KeyboardInterrupt
     text = None if verdict.certificate is None else format_certificate(verdict.certificate)
     return Finding(left, right, symmetry, verdict.outcome, text, verdict.reason)
+
+
+def _course(effort: Effort) -> Course:
+    rounds = (
+        turn for turn, least in zip(_ROUNDS, _LEAST_NODES, strict=True) if effort.nodes >= least
+    )
+    return Course(tuple(rounds), _ALLOWANCE)
 
 
 class _Question:
@@ -159,7 +173,8 @@ class _Question:
     def _distinguish(self, steps: Ladder, seconds: float) -> Finding | None:
         plain = Route(self.left), Route(self.right)
         distinguisher = Distinguisher(self.left, self.right, "identity", self.values)
-        found = distinguisher.find(*plain, seconds, self.budget, steps)
+        allowance = _ALLOWANCE * seconds
+        found = distinguisher.find(*plain, seconds, self.budget, steps, allowance)
         if found is None or distinguisher.found_by is None:
             return None
         certificate = Certificate.different(self.left, self.right, [found])

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable, Iterable
 from dataclasses import dataclass, field
 from typing import TypeAlias
@@ -55,15 +56,18 @@ class Distinguisher:
     agreed: dict[object, Invariant] = field(default_factory=dict)
     found_by: Invariant | None = None
 
-    def find(
+    def find(  # noqa: PLR0913, PLR0917 - what to compare, and three bounds
         self,
         left_route: Route,
         right_route: Route,
         dearest: float,
         budget: Budget,
         invariants: Ladder = ladder,
+        allowance: float = math.inf,
     ) -> Distinction | None:
         """The first invariant of estimated cost up to ``dearest`` seconds that differs.
+
+        ``allowance`` bounds what all of them may cost together, by estimate, in seconds.
 
         The routes lead from left and from right to the braids on which it is computed. Only a
         difference that the verifier confirms counts.
@@ -73,6 +77,9 @@ class Distinguisher:
         for cost, invariant in _with_verification(invariants(left, image), left, image, budget):
             if invariant.key in self.agreed or cost > min(dearest, budget.seconds_left):
                 continue
+            allowance -= cost
+            if allowance < 0:
+                return None
             budget.tell(left.strands, "computing invariants")
             found = self._compare(invariant, left_route, right_route, image)
             if found is not None:

@@ -2,8 +2,10 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable, Sequence
-from typing import TYPE_CHECKING, Any, TypeAlias
+from dataclasses import dataclass
+from typing import TYPE_CHECKING, Any
 
 from braidsearch.certificates import Certificate, Distinction
 from braidsearch.errors import CapacityError, OutOfTimeError
@@ -30,17 +32,31 @@ from braidsearch.words.reduction import find_rotation
 if TYPE_CHECKING:
     from braidsearch.search.meet import Meeting
 
-Rounds: TypeAlias = Sequence[tuple[float, float]]
-
 CHEAP_SECONDS = 0.05
 CHEAP_SECONDS_A_LETTER = 1e-4  # long words take as long to simplify
 FAIR_SECONDS = 1.0
 DEAR_SECONDS = 60.0
-ROUNDS: Rounds = ((0.005, 0.1), (0.03, 1.0), (0.1, 5.0), (0.3, 20.0))
+_ROUNDS = ((0.005, 0.1), (0.03, 1.0), (0.1, 5.0), (0.3, 20.0))
 """The share of the limits up to which each round searches, and its dearest invariants' seconds."""
 _LAST_SHARE = 0.85  # what is left after it looks for a symmetric image
 _LONGEST_GLANCE = 80  # letters up to which a glance at symmetric images takes no notable time
 _MOST_GLANCED = 12  # and strands
+
+
+@dataclass(frozen=True, slots=True)
+class Course:
+    """How searches and invariants take turns in a query.
+
+    ``rounds`` says of each up to which share of the limits it searches, and which invariants it
+    asks at most, in seconds each. Those of one round cost no more than ``allowance`` times that
+    together, by estimate: queries without a clock need such a bound.
+    """
+
+    rounds: tuple[tuple[float, float], ...] = _ROUNDS
+    allowance: float = math.inf
+
+
+DEFAULT_COURSE = Course()
 
 
 class Query:
@@ -57,9 +73,9 @@ class Query:
         asked: tuple[str, ...],
         budget: Budget,
         others: Sequence[str] | None = None,
-        rounds: Rounds = ROUNDS,
+        course: Course = DEFAULT_COURSE,
     ) -> None:
-        self.rounds = rounds
+        self.course = course
         self.left, self.right, self.asked, self.budget = left, right, asked, budget
         self.others = [
             name for name in (SYMMETRIES if others is None else others) if name not in asked
@@ -132,7 +148,9 @@ class Query:
         for symmetry in self.open_symmetries():
             self.budget.tell(left.current.strands, "computing invariants")
             distinguisher = self.distinguishers[symmetry]
-            found = distinguisher.find(left, right, dearest, self.budget, invariants)
+            found = distinguisher.find(
+                left, right, dearest, self.budget, invariants, self.course.allowance * dearest
+            )
             if found is not None:
                 self.distinctions[symmetry] = found
         return not self.open_symmetries()
@@ -159,7 +177,7 @@ class Query:
         """Searches and invariants in turn, each round with more of both than the one before."""
         handy = self._route(None), self._route("identity")
         share = 0.0
-        for until, dearest in self.rounds:
+        for until, dearest in self.course.rounds:
             met = self._search(share, until)
             if met is not None:
                 return met
