@@ -8,7 +8,6 @@ from dataclasses import dataclass
 from os import PathLike
 from typing import TypeAlias
 
-from braidsearch.certificates.explanation import explain_certificate
 from braidsearch.certificates.writing import write_certificate
 from braidsearch.errors import InputError
 from braidsearch.moves import Move
@@ -58,6 +57,14 @@ class Distinction:
         object.__setattr__(self, "right_moves", tuple(right_moves))
         object.__setattr__(self, "left", freeze_value(left))
         object.__setattr__(self, "right", freeze_value(right))
+
+    def _repr_latex_(self) -> str | None:
+        """Both polynomials, for a notebook; None for an invariant that is none."""
+        from braidsearch.drawing.notebook import (  # noqa: PLC0415 - upwards, see the test of imports
+            distinction_latex,
+        )
+
+        return distinction_latex(self)
 
 
 @dataclass(frozen=True, slots=True)
@@ -110,10 +117,12 @@ class Certificate:
         write_certificate(self, path)
 
     def _repr_html_(self) -> str:
-        """The explanation in words, for a notebook."""
-        from html import escape  # noqa: PLC0415 - only notebooks need it
+        """The claim with its pictures, and the proof in words, for a notebook."""
+        from braidsearch.drawing.notebook import (  # noqa: PLC0415 - upwards, see the test of imports
+            certificate_html,
+        )
 
-        return f"<pre>{escape(explain_certificate(self, most_moves=20))}</pre>"
+        return certificate_html(self)
 
 
 def freeze_value(value: object) -> Value:

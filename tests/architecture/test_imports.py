@@ -33,7 +33,11 @@ VERIFIER_IS_IMPORTED_BY = {
 }
 """The top-level ``verify``, the command, and the gate through which every verdict leaves."""
 
-NOTEBOOK_PICTURES = {"braidsearch.words.braid": {"braidsearch.drawing"}}
+NOTEBOOK_PICTURES = {
+    "braidsearch.words.braid": {"braidsearch.drawing"},
+    "braidsearch.certificates.values": {"braidsearch.drawing.notebook"},
+    "braidsearch.search.verdict": {"braidsearch.drawing.notebook"},
+}
 """The only imports upwards: a value that draws itself in a notebook asks for its picture.
 
 They stand inside methods named _repr_..._, which nothing but a notebook calls, so that nothing is

@@ -88,10 +88,12 @@ def test_shapes_that_claim_nothing_are_refused() -> None:
 
 
 def test_notebook_shows_the_explanation_with_its_signs_escaped() -> None:
-    """The HTML form holds the words of the explanation, and no markup that came from the data."""
+    """The HTML form holds the claim and both values, and no markup that came from the data."""
     certificate = Certificate.different(
         TREFOIL, MIRROR, [distinction(invariant="<script>", left=1, right=2)]
     )
     shown = certificate._repr_html_()
-    assert shown.startswith("<pre>claim: the closure of LEFT = &quot;1 1 1&quot;")
+    assert "Different links" in shown
+    assert "by the &lt;script&gt;" in shown
+    assert shown.count("<svg") == 2
     assert "<script>" not in shown
