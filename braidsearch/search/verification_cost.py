@@ -37,8 +37,8 @@ def _homfly(strands: int, letters: int) -> float:
     return 5e-9 * factorial(min(strands, 12)) * letters**3
 
 
-def _signature(_strands: int, letters: int) -> float:
-    return 5e-5 * letters
+def _signature(strands: int, letters: int) -> float:
+    return 5e-6 * letters * strands**2
 
 
 _ESTIMATES: dict[str, Callable[[int, int], float]] = {
