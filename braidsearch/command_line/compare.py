@@ -22,6 +22,7 @@ from braidsearch.command_line.link_input import (
 )
 from braidsearch.command_line.progress import progress_line
 from braidsearch.command_line.search_limits import add_limits, read_limits
+from braidsearch.command_line.terminal import read_terminal
 from braidsearch.errors import BraidsearchError, InputError
 from braidsearch.words import SYMMETRIES, Braid
 
@@ -36,7 +37,10 @@ _DESCRIPTION = """Say whether the closures of two braids are the same oriented l
 
 The answer is "same link" with the moves that prove it, "different links" with an invariant that
 differs, or "undecided" with what was tried: undecided is not different. A verdict is given only
-after the independent verifier has accepted its certificate."""
+after the independent verifier has accepted its certificate.
+
+On a terminal the report is short and set to its width, and braidsearch explain shows a proof in
+full; in a pipe or a file it is complete and plain. NO_COLOR takes the colour away."""
 
 _EXAMPLES = """  braidsearch compare "1 1 1" "1 2 1 2"
   braidsearch compare "1 1 1" "-1 -1 -1" --up-to mirror
@@ -56,7 +60,7 @@ def answer(arguments: Sequence[str]) -> Answer:
     if given.output not in (None, "-"):
         check_destination(given.output)
     verdict = _compare(left, right, up_to, limits)
-    return _answer_verdict(verdict, left, right, given)
+    return _answer_verdict(verdict, left, right, given, limits)
 
 
 def _parser() -> CommandParser:
@@ -118,7 +122,9 @@ def _broken_off(ending: str) -> Verdict:
     return Verdict("undecided", None, f"the search was broken off: {ending}", None, explored)
 
 
-def _answer_verdict(verdict: Verdict, left: Braid, right: Braid, given: Namespace) -> Answer:
+def _answer_verdict(
+    verdict: Verdict, left: Braid, right: Braid, given: Namespace, limits: SearchLimits
+) -> Answer:
     status, certificate = STATUS[verdict.outcome], verdict.certificate
     missing = ""
     if given.output is not None and certificate is None:
@@ -127,6 +133,13 @@ def _answer_verdict(verdict: Verdict, left: Braid, right: Braid, given: Namespac
         write_certificate(certificate, given.output)
     if given.json:
         return json_answer(status, verdict_to_json(verdict), missing)
+    terminal = None if given.output == "-" else read_terminal()
+    if terminal is not None:
+        from braidsearch.command_line.compare_steps import Question  # noqa: PLC0415 - not for pipes
+        from braidsearch.command_line.compare_summary import summarize_verdict  # noqa: PLC0415
+
+        question = Question(left, right, given, limits)
+        return Answer(status, summarize_verdict(verdict, question, terminal))
     report = report_verdict(verdict, left, right, given.output)
     if given.output != "-":
         return Answer(status, report)

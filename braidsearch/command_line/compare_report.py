@@ -17,7 +17,7 @@ _LONGEST_BOUND_WORD = 60
 
 def report_verdict(verdict: Verdict, left: Braid, right: Braid, output: str | None) -> str:
     """The report; ``output`` is where the certificate went (None: nowhere, "-": printed)."""
-    lines = [_headline(verdict), f"reason: {verdict.reason}"]
+    lines = [headline(verdict), f"reason: {verdict.reason}"]
     if verdict.certificate is None:
         return "\n".join(lines + _tell_tried(verdict) + _tell_missing(output))
     lines.append(explain_certificate(verdict.certificate, most_moves=_MOST_MOVES))
@@ -26,7 +26,8 @@ def report_verdict(verdict: Verdict, left: Braid, right: Braid, output: str | No
     return "\n".join(lines + _tell_check(left, right, output))
 
 
-def _headline(verdict: Verdict) -> str:
+def headline(verdict: Verdict) -> str:
+    """The verdict, a colon, and what it says of LEFT and RIGHT."""
     if verdict.outcome == "same":
         image = IMAGES[verdict.symmetry or "identity"]
         if verdict.symmetry in (None, "identity"):
@@ -62,7 +63,12 @@ def _tell_check(left: Braid, right: Braid, output: str | None) -> list[str]:
     if output is None:
         return ["certificate: not written (add -o FILE; then: braidsearch verify FILE)"]
     file = shlex.quote(output)
-    bound = f' --left "{format_word(left)}" --right "{format_word(right)}"'
-    if len(bound) > _LONGEST_BOUND_WORD:
-        bound = ""
+    bound = "".join(f' {flag} "{word}"' for flag, word in bound_words(left, right))
     return [f"certificate: {file}", f"check it: braidsearch verify {file}{bound}"]
+
+
+def bound_words(left: Braid, right: Braid) -> list[tuple[str, str]]:
+    """The options of verify that bind a claim to these braids; none where they would be long."""
+    options = [("--left", format_word(left)), ("--right", format_word(right))]
+    length = sum(len(flag) + len(word) + 4 for flag, word in options)
+    return options if length <= _LONGEST_BOUND_WORD else []

@@ -8,6 +8,7 @@ from collections.abc import Sequence
 
 from braidsearch.command_line.answer import Answer, json_answer, one_line
 from braidsearch.command_line.arguments import CommandParser, read_word_argument
+from braidsearch.command_line.terminal import read_terminal
 from braidsearch.errors import InputError
 from braidsearch.verifier import Report, verify_text
 from braidsearch.verifier.verify import MAX_FILE_BYTES
@@ -43,7 +44,11 @@ def answer(arguments: Sequence[str]) -> Answer:
         return json_answer(status, keys, hint)
     if unreadable:
         return Answer(status, "", hint)
-    return Answer(status, f"{report.status}\nclaim: {report.claim}\nreason: {report.reason}")
+    terminal = read_terminal()
+    if terminal is None:
+        return Answer(status, f"{report.status}\nclaim: {report.claim}\nreason: {report.reason}")
+    lines = terminal.headline(report.status, report.status, report.claim)
+    return Answer(status, "\n".join([*lines, "", *terminal.item("reason", report.reason)]))
 
 
 def _verify(given: Namespace) -> Report:
