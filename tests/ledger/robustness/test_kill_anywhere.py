@@ -17,9 +17,19 @@ import pytest
 
 from braidsearch.ledger import sorting
 from braidsearch.ledger.ledger import Ledger
-from tests.ledger.robustness.ledgers import STAGES, Life, Stage, is_intact, ledger_text
+from tests.ledger.robustness.ledgers import (
+    STAGES,
+    Life,
+    Stage,
+    count_rows,
+    is_intact,
+    ledger_text,
+    sample_entries,
+)
 
 pytestmark = pytest.mark.skipif(not hasattr(os, "fork"), reason="a process must be copied")
+
+ADD, SORT, *_ = STAGES
 
 GRAIN = 20
 """So many instructions of the virtual machine lie between two points at which a kill may come."""
@@ -92,15 +102,26 @@ def check_kills(
         path = life.copy_before(stage, folder / f"killed at {point}")
         die_at(point, stage, path)
         assert not path.exists() or is_intact(path), point
+        if stage is ADD:
+            assert count_entries(path) in {0, len(sample_entries())}, point
         carry_out(stage, path)
         assert ledger_text(path) == life.text_after[stage.name], point
+
+
+def count_entries(path: Path) -> int:
+    """How many links a ledger has, also one without its tables yet."""
+    is_made = path.exists() and count_rows(path, "sqlite_master") > 0
+    return count_rows(path, "entries") if is_made else 0
 
 
 @pytest.mark.parametrize("stage", STAGES, ids=lambda stage: stage.name)
 def test_a_killed_stage_begun_again_ends_in_the_same_ledger(
     stage: Stage, life: Life, tmp_path: Path, monkeypatch: pytest.MonkeyPatch
 ):
-    """Whatever is kept of a stage that is killed, the same stage completes it to the same rows."""
+    """Whatever is kept of a stage that is killed, the same stage completes it to the same rows.
+
+    Of links that are entered all are kept or none.
+    """
     check_kills(stage, life, tmp_path, monkeypatch, kills=4)
 
 
@@ -118,7 +139,7 @@ def test_a_stage_killed_twice_ends_in_the_same_ledger(
 ):
     """What goes on after a kill may be killed as well."""
     monkeypatch.setattr(sorting, "BLOCK", 8)
-    stage = STAGES[1]
+    stage = SORT
     points = count_points(stage, life.copy_before(stage, tmp_path / "whole"), monkeypatch)
     path = life.copy_before(stage, tmp_path / "killed")
     for point in (points // 2, points // 4):
