@@ -131,7 +131,7 @@ def cut_text(text: str, columns: int) -> str:
 def cut_pieces(pieces: Sequence[str], columns: int, start: int = 0) -> str:
     """The pieces from ``start`` on that fit, blanks between; dots where something is left out."""
     head = f"{_DOTS} " if start else ""
-    whole = head + " ".join(pieces[start:])
+    whole = (head + " ".join(pieces[start:])).rstrip()
     if column_count(whole) <= columns:
         return whole
     room = columns - len(_DOTS)
