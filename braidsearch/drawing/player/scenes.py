@@ -85,7 +85,11 @@ def page_scenes(certificate: Certificate) -> list[dict[str, Any]]:
     left, right = certificate.left, certificate.right
     if certificate.verdict == "same":
         lane = _lane("LEFT", left, certificate.moves, budget)
-        return [{"title": "LEFT", "opening": "The proof begins with this braid.", "lanes": [lane]}]
+        of = "" if certificate.symmetry == "identity" else f"{certificate.symmetry} of "
+        lane["goal"] = f"{of}RIGHT"
+        opening = "The proof begins with this braid."
+        closing = f"This is {'the ' if of else ''}{lane['goal']}, letter by letter."
+        return [{"title": "LEFT", "opening": opening, "closing": closing, "lanes": [lane]}]
     return [
         {
             "title": "Two different links",

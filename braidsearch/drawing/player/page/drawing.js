@@ -180,8 +180,9 @@ function drawKink(pen, item, cubic, slot, isUnder) {
   const axis = (Math.abs(item.letter) - 1) * M.strandSpacing;
   const squeeze = (x, y) => [axis + amplitude * (x - axis), y];
   const middle = squeeze(before[6], before[7]);
+  // Wider sooner than longer, so that its two sides are seen apart from early on.
   const shrink = (x, y) => [
-    middle[0] + size * (x - before[6]), middle[1] + size * (y - before[7]),
+    middle[0] + Math.sqrt(size) * (x - before[6]), middle[1] + size * (y - before[7]),
   ];
   const gap = M.gap * Math.min(1, 3 * size);
   const [first, second] = isUnder && gap > 0.2 ? cutOpen(cubic, item.time, gap) : [before, after];

@@ -1,7 +1,7 @@
 /* A lane on the page: its picture, fitted to its paper. */
 
 /* A picture that would be smaller than the smallest is scrolled instead. */
-const SMALLEST_SCALE = 0.5, SCROLLED_SCALE = 1, LARGEST_SCALE = 1.7;
+const SMALLEST_SCALE = 0.44, SCROLL_BAR = 16, SCROLLED_SCALE = 1, LARGEST_SCALE = 1.7;
 
 /* One lane on the page: its picture, its scrolling paper, the caption. */
 class LaneView {
@@ -68,7 +68,8 @@ class LaneView {
     const most = this.largest(view), fitting = ([w, h]) => Math.min(room.width / w, room.height / h);
     let scale = Math.min(LARGEST_SCALE, fitting(most));
     if (scale < SMALLEST_SCALE) {
-      const across = view.isRight ? room.height / height : room.width / width;
+      const across = view.isRight
+        ? (room.height - SCROLL_BAR) / height : (room.width - SCROLL_BAR) / width;
       scale = Math.min(LARGEST_SCALE, fitting([width, height]));
       scale = Math.max(scale, Math.min(SCROLLED_SCALE, Math.max(SMALLEST_SCALE, across)));
     }
@@ -91,8 +92,9 @@ class LaneView {
     this.paper.tabIndex = this.isScrolling ? 0 : -1;
   }
 
-  /* Scroll to what is marked, where the picture is larger than its paper. */
-  follow(frameMarks, view, isSmooth) {
+  /* Scroll to what is marked, where the picture is larger than its paper: a little with each frame
+     ("gliding"), or as a browser does it ("smooth", "instant"). */
+  follow(way) {
     if (!this.isScrolling) return;
     const box = this.picture.body.querySelector("rect:not([display])");
     if (!box) return;
@@ -101,9 +103,12 @@ class LaneView {
       (at("x", "width") - this.origin[0]) * this.scale - this.paper.clientWidth / 2,
       (at("y", "height") - this.origin[1]) * this.scale - this.paper.clientHeight / 2,
     ];
-    const share = isSmooth ? 0.08 : 1;
-    this.paper.scrollLeft += (goal[0] - this.paper.scrollLeft) * share;
-    this.paper.scrollTop += (goal[1] - this.paper.scrollTop) * share;
+    if (way === "gliding") {
+      this.paper.scrollLeft += (goal[0] - this.paper.scrollLeft) * 0.08;
+      this.paper.scrollTop += (goal[1] - this.paper.scrollTop) * 0.08;
+    } else {
+      this.paper.scrollTo({ left: goal[0], top: goal[1], behavior: way });
+    }
   }
 }
 

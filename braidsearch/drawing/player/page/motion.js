@@ -258,7 +258,6 @@ function stabilizationMovements(before, part, after) {
 const rewritingMovements = (before, part, after) => [movement(0.9, (time) => ({
   ...frameOfStage(time < 0.5 ? before : after),
   fading: { other: frameOfStage(time < 0.5 ? after : before), share: time < 0.5 ? time : 1 - time },
-  extent: smooth(time),
 }))];
 
 /* The movements of a part, with the whole time that they take. */

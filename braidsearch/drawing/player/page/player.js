@@ -119,16 +119,16 @@ class Player {
 
   jump(stop) {
     this.play(false);
-    this.arrive(Math.max(0, Math.min(this.stops.length - 1, stop)));
+    this.arrive(Math.max(0, Math.min(this.stops.length - 1, stop)), "instant");
   }
 
-  arrive(stop) {
+  arrive(stop, way = prefersStillness.matches ? "instant" : "smooth") {
     this.at = stop;
     this.goal = stop;
     this.time = 0;
     this.settle();
     this.redraw();
-    this.views.forEach((laneView) => laneView.follow(null, this.view, false));
+    this.views.forEach((laneView) => laneView.follow(way));
     this.tell();
   }
 
@@ -210,7 +210,7 @@ class Player {
       const [start, end] = [first.boundaries[which], second.boundaries[which]];
       if (isMoving && start === end) return;
       laneView.draw(start, end, time, this.view, this.room);
-      if (isMoving) laneView.follow(null, this.view, true);
+      if (isMoving) laneView.follow("gliding");
     });
   }
 
@@ -225,7 +225,9 @@ class Player {
       ? [...item.childNodes].map((node) => node.cloneNode(true)) : [scene.opening]));
     elements.relation.textContent = item ? this.relationText(stop) : "";
     const { kind } = item ? this.stepOf(stop) : {};
-    elements.reason.textContent = this.reasons[kind] || "";
+    const isLast = number === this.stops.length - 1;
+    elements.reason.textContent = [this.reasons[kind], isLast && scene.closing]
+      .filter(Boolean).join(" ");
     this.current?.removeAttribute("aria-current");
     if (item) item.setAttribute("aria-current", "step");
     this.current = item;
@@ -235,7 +237,7 @@ class Player {
     slider.setAttribute("aria-valuetext", `${heading}: ${elements.text.textContent}`);
     elements.place.textContent = `${number} / ${this.stops.length - 1}`;
     for (const [id, isAtEnd] of [["first", number === 0], ["back", number === 0],
-      ["forward", number === this.stops.length - 1], ["last", number === this.stops.length - 1]]) {
+      ["forward", isLast], ["last", isLast]]) {
       elements[id].setAttribute("aria-disabled", isAtEnd);
     }
     this.views.forEach((laneView, which) => this.describe(laneView, stop.boundaries[which]));
@@ -251,7 +253,7 @@ class Player {
     const lane = this.scenes[stop.scene].lanes[stop.lane];
     const parts = this.stepOf(stop).parts.length;
     if (!this.elements.single.checked) {
-      return parts > 1 ? `Shown as ${parts} movements.` : "";
+      return parts > 1 ? `Shown as ${parts} movements; single relations make each a stop.` : "";
     }
     const boundary = stop.boundaries[stop.lane];
     const number = boundary - lane.stepEnds[lane.stepOfPart[boundary - 1]];
@@ -262,12 +264,12 @@ class Player {
   describe({ lane, picture, heading }, boundary) {
     const { word, strands, acted, made } = lane.stage(boundary);
     const text = word.join(" ") || "no letters";
-    const marks = [["acts next on", acted], ["came from", made]];
+    const name = lane.nameAt(boundary);
     picture.title.textContent = `${this.view.isClosed ? "Closure of the braid" : "Braid"} `
-      + `${lane.name}: ${strands} ${strands === 1 ? "strand" : "strands"}, `
+      + `${name}: ${strands} ${strands === 1 ? "strand" : "strands"}, `
       + `${word.length} ${word.length === 1 ? "letter" : "letters"}`;
     picture.description.textContent = `Word: ${text.slice(0, 2000)}.`;
-    heading.replaceChildren(`${lane.name}  ${strands}: `, ...markedWord(word, acted, made));
+    heading.replaceChildren(`${name}  ${strands}: `, ...markedWord(word, acted, made));
   }
 }
 

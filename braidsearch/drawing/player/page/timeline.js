@@ -4,6 +4,7 @@
 class Lane {
   constructor(data) {
     this.name = data.name;
+    this.goal = data.goal;
     this.parts = [];
     this.stepOfPart = [];
     this.stepEnds = [0]; // the boundary at which each step begins, and then where the last ends
@@ -34,6 +35,12 @@ class Lane {
       this.stages.set(boundary, found);
     }
     return found;
+  }
+
+  /* What the braid at a boundary is called: the ends of a proof have names. */
+  nameAt(boundary) {
+    if (boundary === 0 || !this.goal) return this.name;
+    return boundary === this.parts.length ? this.goal : `from ${this.name}`;
   }
 
   isStepEnd(boundary) {
