@@ -53,7 +53,7 @@ def _check(file: str, question: Question, terminal: Terminal) -> list[str]:
 
 
 def _keep(question: Question, terminal: Terminal) -> list[str]:
-    options = [*_limit_options(question.limits), "-o", _file_name(question)]
+    options = [*_limit_options(question.limits, question.given), "-o", _file_name(question)]
     return _ask("keep it", question, _up_to(question), options, terminal)
 
 
@@ -64,7 +64,7 @@ def _offer_image(verdict: Verdict, question: Question, terminal: Terminal) -> li
     symmetry = str(verdict.image.symmetry)
     stem, ending = os.path.splitext(question.given.output or "proof.json")
     file = _free_name(f"{stem}.{symmetry}", ending)
-    options = [*_limit_options(question.limits), "-o", file]
+    options = [*_limit_options(question.limits, question.given), "-o", file]
     return _ask(f"prove the {symmetry}", question, [symmetry], options, terminal)
 
 
@@ -73,7 +73,7 @@ def _after_search(verdict: Verdict, question: Question, terminal: Terminal) -> l
     lines = _offer_image(verdict, question, terminal)
     limits = further_limits(question.limits, verdict.explored)
     if limits is not None:
-        options = [*_limit_options(limits), "-o", _file_name(question)]
+        options = [*_limit_options(limits, question.given), "-o", _file_name(question)]
         return lines + _ask("go on", question, _up_to(question), options, terminal)
     larger = "left" if len(question.left) >= len(question.right) else "right"
     typed = getattr(question.given, larger)
@@ -121,13 +121,13 @@ def _rounded_up(seconds: float) -> float:
     return math.ceil(seconds / unit) * unit
 
 
-def _limit_options(limits: SearchLimits) -> list[str]:
-    """The options that set these limits, those with their usual value left out."""
+def _limit_options(limits: SearchLimits, given: Namespace) -> list[str]:
+    """The options that set these limits; one at its usual value where another was typed before."""
     usual = type(limits)()
     options = []
     for name in ("seconds", "nodes", "max_strands"):
         value = getattr(limits, name)
-        if value != getattr(usual, name):
+        if value != getattr(usual, name) or hasattr(given, name):
             shown = "none" if value is None else f"{value:.12g}"
             options += [f"--{name.replace('_', '-')}", shown]
     return options

@@ -53,7 +53,7 @@ def _evidence(verdict: Verdict, terminal: Terminal) -> list[str]:
 def _iter_ends(certificate: Certificate, terminal: Terminal) -> Iterator[str]:
     """The first and the last move, a line each."""
     count = len(certificate.moves)
-    for number in sorted({1, count} - {0}):
+    for number in sorted({1, count}) if count else ():
         text = f"{number:>{len(str(count))}}. {explain_move(certificate.moves[number - 1])}"
         yield "    " + cut_text(text, terminal.columns - 4)
 

@@ -10,7 +10,6 @@ from __future__ import annotations
 import os
 import re
 import shlex
-import shutil
 import sys
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
@@ -94,6 +93,8 @@ def read_terminal() -> Terminal | None:
     stream, kind = sys.stdout, os.environ.get("TERM", "")
     if stream is None or not stream.isatty() or kind == "dumb":
         return None
+    import shutil  # noqa: PLC0415 - it loads compression libraries, which a pipe has no use for
+
     # Some terminals go to a new line by themselves when the last column is filled.
     columns = max(shutil.get_terminal_size().columns, NARROWEST) - 1
     is_coloured = bool(kind) and not os.environ.get("NO_COLOR")
