@@ -22,16 +22,28 @@ import subprocess
 import sys
 import tempfile
 from collections import Counter
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterable, Iterator, Sequence
+from concurrent.futures import ThreadPoolExecutor
 from dataclasses import asdict, dataclass, field
+from functools import partial
 from importlib.util import find_spec
 from pathlib import Path
 from typing import Any
 
 HERE = Path(__file__).parent
+AT_A_TIME = 2
+"""Processes at work."""
 CATALOGUES = {"Register": "register.csv", "Saltmarsh": "field_list.jsonl"}
 CLAIM = re.compile(r"same as (Q-[0-9]+)")
-"""What a note says of another entry."""
+"""What a note may say of another entry."""
+TITLES = {
+    "linking-numbers": "the linking numbers",
+    "alexander": "the Alexander polynomial",
+    "jones": "the Jones polynomial",
+    "three-braid": "the classification of closed 3-braids",
+    "colouring": "the colourings in a finite group",
+}
+"""The invariants that decide here, in words."""
 IMAGES = {
     "identity": "is",
     "mirror": "is the mirror image of",
@@ -78,12 +90,17 @@ class Finding:
         if self.outcome == "undecided":
             return f"{self.left}, {self.right}: OPEN: {self.reason}"
         relation = IMAGES[self.symmetry or ""] if self.outcome == "same" else "is not"
+        claim = f"{self.left} {relation} {self.right}"
+        return "\n    ".join((claim, self.why, f"proof: {self.certificate}"))
+
+    @property
+    def why(self) -> str:
+        """The evidence in words."""
+        if self.outcome == "different":
+            titles = (TITLES.get(name, f"the invariant {name}") for name in self.evidence)
+            return f"told apart by {' and '.join(titles)}"
         kinds = ", ".join(f"{count} {kind}" for kind, count in self.evidence.items())
-        why = f"told apart by: {', '.join(self.evidence)}"
-        if self.outcome == "same":
-            why = f"{self.reason}{': ' * bool(kinds)}{kinds}"
-        lines = (f"{self.left} {relation} {self.right}", why, f"proof: {self.certificate}")
-        return "\n    ".join(lines)
+        return f"{self.reason}: {kinds}" if kinds else "letter by letter"
 
 
 @dataclass
@@ -116,7 +133,7 @@ class Merge:
 
 
 class Command:
-    """Runs ``braidsearch ledger`` on the ledger in a folder, and writes down what was run."""
+    """Runs ``braidsearch ledger`` on the ledger in a folder; ``run`` is what was run, in order."""
 
     def __init__(self, folder: Path) -> None:
         self.folder = folder.resolve()
@@ -124,41 +141,57 @@ class Command:
 
     def __call__(self, action: str, *arguments: str) -> str:
         """What the action prints. Raises RuntimeError for a mistake in the input."""
-        line = ["ledger", action, str(self.folder / "links.ledger"), *arguments]
+        self.run.append(self._shown(action, *arguments))
+        return self._output(action, *arguments)
+
+    def json(self, action: str, *arguments: str) -> Any:
+        """The object that the action prints with --json."""
+        return json.loads(self(action, *arguments, "--json"))
+
+    def proofs(
+        self, relation: str, pairs: Iterable[tuple[Entry, Entry]], *arguments: str
+    ) -> list[Finding]:
+        """What the ledger has about each two entries, the certificates in files of their own."""
+        asked = []
+        for left, right in pairs:
+            name = f"{left.name}-{relation}-{right.name}.json".replace(" ", "-")
+            path = str(self.folder / "proofs" / name)
+            given = "proof", left.title, right.title, *arguments, "-o", path, "--json"
+            self.run.append(self._shown(*given))
+            asked.append((left, right, f"proofs/{name}", given))
+        with ThreadPoolExecutor(AT_A_TIME) as pool:
+            return list(pool.map(lambda one: self._proof(*one), asked))
+
+    def _proof(self, left: Entry, right: Entry, file: str, given: Sequence[str]) -> Finding:
+        said = json.loads(self._output(*given))
+        proof = said["certificate"] or {}
+        kinds = [move["move"] for move in proof.get("moves", ())]
+        kinds += [one["invariant"] for one in proof.get("distinctions", ())]
+        evidence = dict(Counter(kinds))
+        outcome, symmetry, reason = said["outcome"], said["symmetry"], said["reason"]
+        return Finding(left, right, outcome, symmetry, reason, evidence, file if proof else None)
+
+    def _line(self, action: str, *arguments: str) -> list[str]:
+        return ["ledger", action, str(self.folder / "links.ledger"), *arguments]
+
+    def _shown(self, action: str, *arguments: str) -> str:
+        """The command as it may be typed, with paths from the folder."""
+        line = self._line(action, *arguments)
         shown = [argument.removeprefix(f"{self.folder}/") for argument in line]
-        self.run.append(shlex.join(["braidsearch", *shown]))
+        return shlex.join(["braidsearch", *shown])
+
+    def _output(self, action: str, *arguments: str) -> str:
         finished = subprocess.run(
-            [sys.executable, "-m", "braidsearch", *line],
+            [sys.executable, "-m", "braidsearch", *self._line(action, *arguments)],
             cwd=HERE,
             capture_output=True,
             text=True,
             check=False,
         )
         if finished.returncode not in (0, 1, 3):
-            raise RuntimeError(f"{self.run[-1]}: {finished.stderr.strip()}")
+            line = self._shown(action, *arguments)
+            raise RuntimeError(f"{line}: {finished.stderr.strip()}")
         return finished.stdout
-
-    def json(self, action: str, *arguments: str) -> Any:
-        """The object that the action prints with --json."""
-        return json.loads(self(action, *arguments, "--json"))
-
-    def proof(self, left: Entry, right: Entry, relation: str, *arguments: str) -> Finding:
-        """What the ledger has about two entries, the certificate in a file of its own."""
-        name = f"{left.name}-{relation}-{right.name}.json".replace(" ", "-")
-        file = f"proofs/{name}"
-        path = str(self.folder / file)
-        said = self.json("proof", left.title, right.title, *arguments, "-o", path)
-        proof = said["certificate"] or {}
-        kinds = [move["move"] for move in proof.get("moves", ())]
-        kinds += [named(one) for one in proof.get("distinctions", ())]
-        evidence = dict(Counter(kinds))
-        outcome, symmetry, reason = said["outcome"], said["symmetry"], said["reason"]
-        return Finding(left, right, outcome, symmetry, reason, evidence, file if proof else None)
-
-
-def named(distinction: dict[str, Any]) -> str:
-    """The invariant of a distinction, with the meridians' order where it counts colourings."""
-    return str(distinction["invariant"])
 
 
 # what is asked of the ledger
@@ -194,19 +227,22 @@ def merge_catalogues(folder: Path) -> Merge:
 
 def ask_for_proofs(ledger: Command, merge: Merge, groups: list[list[list[Entry]]]) -> None:
     """Ask for each merge, for each image with its refusal, and for what the notes claim."""
-    for first, *others in merge.classes:
-        merge.merges += [ledger.proof(first, other, "is") for other in others]
-    for (first, *_), *images in groups:
-        for other, *_ in images:
-            up_to = ("--up-to", "any")
-            merge.images.append(ledger.proof(first, other, "is-image-of", *up_to))
-            merge.refusals.append(ledger.proof(first, other, "is-not"))
+    merges = [(first, other) for first, *others in merge.classes for other in others]
+    merge.merges = ledger.proofs("is", merges)
+    firsts = [[one[0] for one in group] for group in groups]
+    images = [(first, other) for first, *others in firsts for other in others]
+    merge.images = ledger.proofs("is-image-of", images, "--up-to", "any")
+    merge.refusals = ledger.proofs("is-not", images)
     entries = {entry.name: entry for one in merge.classes for entry in one}
-    for entry in entries.values():
-        claim = CLAIM.search(entry.note)
-        if claim is not None:
-            claimed = ledger.proof(entries[claim[1]], entry, "claimed")
-            merge.claims[entry.name] = claimed
+    claims = {
+        entry.name: (entries[claim[1]], entry)
+        for entry in entries.values()
+        if (claim := CLAIM.search(entry.note))
+    }
+    found = {(one.left, one.right): one for one in (*merge.merges, *merge.refusals)}
+    asked = [pair for pair in claims.values() if pair not in found]
+    found |= zip(asked, ledger.proofs("claimed-to-be", asked), strict=True)
+    merge.claims = {name: found[pair] for name, pair in claims.items()}
 
 
 def entry_of(value: dict[str, Any]) -> Entry:
@@ -226,32 +262,40 @@ def question_of(value: dict[str, Any]) -> str:
 
 
 def verify_all(merge: Merge) -> None:
-    """Verify each certificate by verify.py alone, those about entries bound to their words."""
+    """Verify each certificate by verify.py alone, bound to the words that it must be about."""
     package = find_spec("braidsearch")
     if package is None or package.origin is None:
         raise RuntimeError("braidsearch: expected it to be installed")
-    with tempfile.TemporaryDirectory() as empty:
+    with tempfile.TemporaryDirectory() as empty, ThreadPoolExecutor(AT_A_TIME) as pool:
         verifier = Path(empty) / "verify.py"
         shutil.copy(Path(package.origin).parent / "verifier" / "verify.py", verifier)
-        for file, left, right in iter_certificates(merge):
-            finished = subprocess.run(
-                [sys.executable, "-I", verifier, file, "--left", left, "--right", right],
-                cwd=empty,
-                capture_output=True,
-                text=True,
-                check=False,
-            )
+        for fault in pool.map(partial(fault_of, verifier), iter_certificates(merge)):
             merge.verified += 1
-            if finished.returncode != 0:
-                merge.faults.append(f"{file.name}: {finished.stdout}{finished.stderr}".strip())
+            merge.faults += [fault] if fault else []
+
+
+def fault_of(verifier: Path, written: tuple[Path, str, str]) -> str:
+    """What the verifier has against a certificate about two words; nothing where it holds."""
+    file, left, right = written
+    finished = subprocess.run(
+        [sys.executable, "-I", verifier, file, "--left", left, "--right", right],
+        cwd=verifier.parent,
+        capture_output=True,
+        text=True,
+        check=False,
+    )
+    if finished.returncode == 0:
+        return ""
+    return f"{file.name}: {finished.stdout}{finished.stderr}".strip()
 
 
 def iter_certificates(merge: Merge) -> Iterator[tuple[Path, str, str]]:
     """Every file that was written, with the two words that it must be about."""
     folder = merge.folder.resolve()
-    for one in (*merge.merges, *merge.images, *merge.refusals, *merge.claims.values()):
-        if one.certificate is not None:
-            yield folder / one.certificate, one.left.word, one.right.word
+    findings = (*merge.merges, *merge.images, *merge.refusals, *merge.claims.values())
+    files = {one.certificate: one for one in findings if one.certificate}
+    for file, one in files.items():
+        yield folder / file, one.left.word, one.right.word
     with open(folder / "evidence" / "index.csv", encoding="utf-8", newline="") as index:
         for row in csv.DictReader(index):
             yield folder / "evidence" / row["file"], row["left"], row["right"]
@@ -265,7 +309,7 @@ def report_of(merge: Merge) -> str:
     entries = sum(map(len, merge.classes))
     wrong = [one for one in merge.claims.values() if one.outcome == "different"]
     lines = [
-        f"{entries} links, {len(merge.left_out)} row left out: {len(merge.classes)} oriented links",
+        f"{entries} entries, {len(merge.left_out)} left out: {len(merge.classes)} oriented links",
         f"merges: {len(merge.merges)}, {len(merge.duplicates)} of them inside one catalogue",
         f"claims in notes: {len(merge.claims)}, {len(wrong)} of them refuted",
         f"open questions: {len(merge.open_questions) or 'none'}",
