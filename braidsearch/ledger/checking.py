@@ -56,9 +56,9 @@ def check_ledger(
     - every two classes differ in such a value, by a proof, or are listed as undecided;
     - no proofs contradict each other.
 
-    Where the file or a braid in it is damaged, that alone is reported: nothing else has a meaning.
+    Where the file, or then a braid, is damaged, that alone is reported: nothing else has a meaning.
     """
-    faults = [*_faults_of_file(store), *_faults_of_braids(store)]
+    faults = list(_faults_of_file(store)) or list(_faults_of_braids(store))
     if faults:
         return CheckReport(0, 0, 0, 0, tuple(faults))
     total = store.count("evidence") + store.count("classes")
