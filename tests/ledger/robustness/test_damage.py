@@ -1,7 +1,9 @@
 """A ledger of which bytes are overwritten or lost: it says so, and answers nothing wrong unseen."""
 
 import random
+import sqlite3
 from collections.abc import Callable
+from contextlib import closing
 from pathlib import Path
 from typing import Any
 
@@ -130,6 +132,30 @@ def test_overwritten_bytes_are_told_or_harmless(sound: bytes, tmp_path: Path):
     finds the damage."""
     results = check_many(sound, tmp_path / "ledger", range(20))
     assert results["told"] > 5
+
+
+def test_a_row_that_lost_a_value_is_told(sound: bytes, tmp_path: Path):
+    """Places at which a damaged row once ended in an error of the program."""
+    path = tmp_path / "ledger"
+    path.write_bytes(sound)
+    with closing(sqlite3.connect(path)) as connection:
+        connection.execute("PRAGMA writable_schema = ON")
+        connection.execute(
+            "UPDATE sqlite_master SET sql = replace(sql, 'word TEXT NOT NULL', 'word TEXT') "
+            "WHERE name = 'braids'"
+        )
+        connection.commit()
+    with closing(sqlite3.connect(path)) as connection:
+        connection.execute("UPDATE braids SET word = NULL WHERE id = 3")
+        connection.execute("PRAGMA writable_schema = ON")
+        connection.execute(
+            "UPDATE sqlite_master SET sql = replace(sql, 'word TEXT', 'word TEXT NOT NULL') "
+            "WHERE name = 'braids'"
+        )
+        connection.commit()
+    answers = ask_all(path)
+    assert not answers["check"].valid
+    assert "damaged" in answers["report"]
 
 
 @pytest.mark.slow
