@@ -5,23 +5,25 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 
-from braidsearch.normal_form.conjugation import conjugator_word, slide_to_circuit
+from braidsearch.normal_form.conjugation import slide_to_circuit
+from braidsearch.normal_form.found_summit import ClassKey, FoundSummit, PlainSummit
 from braidsearch.normal_form.left_normal_form import (
-    Element,
     ShouldStop,
     are_equal,
     element_of_word,
     element_word,
     never,
 )
-from braidsearch.normal_form.simple_elements import Permutation, SimpleElements, simple_elements
-from braidsearch.normal_form.summit import Summit, ultra_summit_set
+from braidsearch.normal_form.simple_elements import simple_elements
+from braidsearch.normal_form.summit import ultra_summit_set
 from braidsearch.words import Braid
+
+__all__ = ["ClassKey", "ConjugacyClass", "conjugacy_class", "find_conjugator", "iter_summit"]
 
 DEFAULT_SUMMIT_CAP = 2_000
 
-ClassKey = tuple[int, int, tuple[Permutation, ...]]
-"""Strands, infimum and factors of the canonical representative: equal for conjugate braids."""
+_MEMBERS_BEFORE_COMPILING = 20_000  # a process that meets so many has time to load the compiler
+_members = 0
 
 
 @dataclass(frozen=True)
@@ -57,29 +59,16 @@ def conjugacy_class(
     ``should_stop`` is asked on the way; once it says so, the class is returned as incomplete,
     or, where not even the normal form is found by then, OutOfTimeError is raised.
     """
-    elements = simple_elements(braid.strands)
-    to_summit, summit = _find_summit(elements, braid, cap, should_stop)
-    least = min(summit.parents, key=lambda member: _sort_key(elements, member))
-    conjugators = to_summit + summit.conjugators_to(least)
-    infimum, factors = _sort_key(elements, least)
-    return ConjugacyClass(
-        braid=braid,
-        key=(braid.strands, infimum, factors),
-        conjugator=conjugator_word(elements, conjugators),
-        is_complete=summit.is_complete,
-        summit_size=len(summit.parents),
-    )
+    summit = find_summit(braid, cap, should_stop)
+    key, conjugator = summit.least()
+    return ConjugacyClass(braid, key, conjugator, summit.is_complete, summit.size)
 
 
 def iter_summit(
     braid: Braid, cap: int = DEFAULT_SUMMIT_CAP, should_stop: ShouldStop = never
 ) -> Iterator[tuple[Braid, tuple[int, ...]]]:
     """The members of the ultra summit set, as words, each with a conjugator from ``braid``."""
-    elements = simple_elements(braid.strands)
-    to_summit, summit = _find_summit(elements, braid, cap, should_stop)
-    for member in summit.parents:
-        by = conjugator_word(elements, to_summit + summit.conjugators_to(member))
-        yield Braid.trusted(element_word(elements, member), braid.strands), by
+    yield from find_summit(braid, cap, should_stop).iter_members()
 
 
 def find_conjugator(
@@ -99,14 +88,23 @@ def find_conjugator(
     return one.conjugator + tuple(-letter for letter in reversed(other.conjugator))
 
 
-def _find_summit(
-    elements: SimpleElements, braid: Braid, cap: int, should_stop: ShouldStop
-) -> tuple[tuple[int, ...], Summit]:
+def find_summit(braid: Braid, cap: int, should_stop: ShouldStop = never) -> FoundSummit:
+    """The ultra summit set, up to ``cap`` members: compiled once that is worth its start."""
+    global _members  # noqa: PLW0603 - how many members this process has met
+    if _members > _MEMBERS_BEFORE_COMPILING:
+        from braidsearch.normal_form import compiled_summit  # noqa: PLC0415
+
+        if compiled_summit.is_small(braid.strands) and compiled_summit.is_ready():
+            return compiled_summit.compiled_summit(braid, cap, should_stop)
+    summit = plain_summit(braid, cap, should_stop)
+    _members += summit.size
+    return summit
+
+
+def plain_summit(braid: Braid, cap: int, should_stop: ShouldStop = never) -> PlainSummit:
+    """The ultra summit set by the plain path, which knows any number of strands."""
+    elements = simple_elements(braid.strands)
     element = element_of_word(elements, braid.word, should_stop)
     start, to_summit = slide_to_circuit(elements, element, should_stop)
-    return to_summit, ultra_summit_set(elements, start, cap, should_stop)
-
-
-def _sort_key(elements: SimpleElements, member: Element) -> tuple[int, tuple[Permutation, ...]]:
-    infimum, factors = member
-    return infimum, tuple(elements.permutations[factor] for factor in factors)
+    summit = ultra_summit_set(elements, start, cap, should_stop)
+    return PlainSummit(elements, to_summit, summit)

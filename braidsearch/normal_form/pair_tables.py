@@ -68,9 +68,9 @@ def pair_tables(strands: int) -> PairTables:
     size = len(table)
     one, other = np.divmod(np.arange(size * size), size)
     left, right = weigh_arrays(table[one], table[other])
-    flipped = _rank(strands - 1 - table[:, ::-1])
+    flipped = rank(strands - 1 - table[:, ::-1])
     inverse = np.argsort(table, axis=1)
-    left_complement = flipped[_rank(strands - 1 - inverse)]
+    left_complement = flipped[rank(strands - 1 - inverse)]
     next_state, emits = _cutting_automaton(table)
     straight = np.concatenate([np.arange(size), left_complement])
     factor_of_block = np.stack([straight, flipped[straight]], axis=1).reshape(-1)
@@ -82,8 +82,8 @@ def pair_tables(strands: int) -> PairTables:
         permutations=table,
         identity=0,
         delta=size - 1,
-        left=_rank(left),
-        right=_rank(right),
+        left=rank(left),
+        right=rank(right),
         next_state=next_state,
         emits=emits,
         is_negative=is_negative,
@@ -91,7 +91,7 @@ def pair_tables(strands: int) -> PairTables:
     )
 
 
-def _rank(table: IntegerArray) -> IntegerArray:
+def rank(table: IntegerArray) -> IntegerArray:
     """The places of permutations, shape (rows, n), in lexicographic order."""
     strands = table.shape[1]
     rank = np.zeros(len(table), dtype=np.int64)
@@ -116,7 +116,7 @@ def _cutting_automaton(table: IntegerArray) -> tuple[IntegerArray, IntegerArray]
             column = sign * index + strands - 1
             swapped = arrays.copy()
             swapped[:, [index - 1, index]] = arrays[:, [index, index - 1]]
-            longer = _rank(np.argsort(swapped, axis=1) if sign > 0 else swapped) + offset
+            longer = rank(np.argsort(swapped, axis=1) if sign > 0 else swapped) + offset
             fits = arrays[:, index - 1] < arrays[:, index]
             own, letter = slice(offset, offset + size), longer[0]
             opposite_letter = letter - offset + (size - offset)
