@@ -186,6 +186,8 @@ def readable(name: str) -> Iterator[None]:
         yield
     except sqlite3.Error as error:
         raise InputError(f"{name}: {_meaning(error)}") from error
+    except UnicodeDecodeError as error:  # the message of an error of SQLite, with damaged text
+        raise InputError(f"{name}: damaged (no text in UTF-8): {EXPECTED_INTACT}") from error
 
 
 def _meaning(error: sqlite3.Error) -> str:

@@ -134,6 +134,17 @@ def test_overwritten_bytes_are_told_or_harmless(sound: bytes, tmp_path: Path):
     assert results["told"] > 5
 
 
+def test_damaged_names_of_tables_are_told(sound: bytes, tmp_path: Path):
+    """A byte that is no text, in any of the statements that made the tables, is told at once."""
+    path = tmp_path / "ledger"
+    places = [at for at in range(len(sound)) if sound.startswith(b"CREATE ", at)]
+    assert len(places) > 10
+    for at in (place + shift for place in places for shift in (0, 8, 15, 25)):
+        remove(path)
+        path.write_bytes(sound[:at] + b"\xeb" + sound[at + 1 :])
+        assert "damaged" in answer_of(path, lambda ledger: ledger.report()), at
+
+
 def test_a_row_that_lost_a_value_is_told(sound: bytes, tmp_path: Path):
     """Places at which a damaged row once ended in an error of the program."""
     path = tmp_path / "ledger"
