@@ -17,8 +17,9 @@ from braidsearch.moves.elementary_relations import (
 from braidsearch.moves.elementary_rewriting import rewrite_relations
 from braidsearch.moves.elementary_search import words_of_chain
 from braidsearch.moves.elementary_traces import iter_links
+from braidsearch.normal_form import left_normal_form
 from braidsearch.words import Braid
-from braidsearch.words.handles import reduce_handles
+from braidsearch.words.handles import reduce_handles, reduce_handles_turned
 from braidsearch.words.reduction import find_rotation
 
 _LETTER_COST = 2
@@ -32,6 +33,12 @@ _MOST_LETTERS_FOR_BOTH = 60
 
 _LONG = 300
 """Beyond so many letters in a word and its conjugator, letters go as they stand."""
+
+_MOST_GROWTH = 60
+"""By so many letters a word may grow before a shorter one for the same element is looked for."""
+
+_WORTH_IT = 0.6
+"""The part of its length to which the other must come down to be taken."""
 
 _MOST_STRANDS_TO_TWIST = 12
 """A full twist on n strands has n (n - 1) letters: on more strands it makes nothing shorter."""
@@ -50,17 +57,24 @@ def conjugate_parts(word: Letters, by: Letters, target: Letters, strands: int) -
     if rotation is not None:
         return _rotate(word, rotation)
     waiting = _short_conjugator(word, by, strands)
-    there = _conjugate_by_letters(word, waiting, target)
+    there = _conjugate_by_letters(word, waiting, target, strands)
     if len(word) + len(waiting) + len(target) > _MOST_LETTERS_FOR_BOTH:
         return there
-    back = _conjugate_by_letters(target, _inverse(waiting), word)
+    back = _conjugate_by_letters(target, _inverse(waiting), word, strands)
     return there if len(there) <= len(back) else _reversed_parts(back, len(word))
 
 
-def _conjugate_by_letters(word: Letters, waiting: Letters, target: Letters) -> list[Part]:
-    """Conjugate by one letter after the other, taking away between them what cancels cheaply."""
+def _conjugate_by_letters(
+    word: Letters, waiting: Letters, target: Letters, strands: int
+) -> list[Part]:
+    """Conjugate by one letter after the other, taking away between them what cancels cheaply.
+
+    A word that has grown much is exchanged for the shortest that is seen for its element, since
+    every later step is one on all its letters.
+    """
     parts: list[Part] = []
     letters = 0
+    bound = max(len(word), len(target)) + _MOST_GROWTH
     while waiting:
         letters += len(word)
         check_capacity(len(parts), letters)
@@ -70,7 +84,22 @@ def _conjugate_by_letters(word: Letters, waiting: Letters, target: Letters) -> l
         parts.append(letter)
         parts += reduced
         word = words_of_chain((-letter, *word, letter), reduced)[-1]
+        if bound < len(word) <= _LONG:
+            shorter = _shorter_word(word, strands)
+            if len(shorter) < _WORTH_IT * len(word):
+                parts += rewrite_relations(word, shorter)
+                word = shorter
+            bound = len(word) + _MOST_GROWTH
     return parts + rewrite_relations(word, target)
+
+
+def _shorter_word(word: Letters, strands: int) -> Letters:
+    """The shortest word that is seen for the same element."""
+    braid = Braid.trusted(word, strands)
+    candidates = [reduce_handles(braid), reduce_handles_turned(braid)]
+    normal = left_normal_form(braid).to_braid()
+    candidates += [normal, reduce_handles(normal), reduce_handles_turned(normal)]
+    return min((candidate.word for candidate in candidates), key=len)
 
 
 def _reversed_parts(parts: list[Part], length: int) -> list[Part]:
