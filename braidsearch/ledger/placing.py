@@ -29,10 +29,10 @@ _PACE = Pace(expansions_first=1, turns_an_expansion=12, walks_a_turn=20)
 _ROUNDS = ((0.1, 0.1), (0.2, 0.5), (0.4, 5.0), (0.6, 20.0))
 """As of a query, for searches that are short beside the dearer invariants."""
 
-_LEAST_NODES = (0, 200, 2_000, 20_000)
+_LEAST_NODES = (0, 200, 5_000, 20_000)
 """So many nodes must be allowed for each of these rounds: whoever asks for little waits little."""
 
-_ALLOWANCE = 30.0
+_ALLOWANCE = 20.0
 
 Marked = tuple[Braid, Fingerprint]
 """A form with its fingerprint."""

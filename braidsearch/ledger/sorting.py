@@ -8,25 +8,20 @@ the same ledger.
 
 from __future__ import annotations
 
-from collections import deque
 from collections.abc import Callable, Iterator, Sequence
 from concurrent.futures import Executor, Future
 from contextlib import contextmanager
 from dataclasses import dataclass
 from typing import Any
 
-from braidsearch.ledger.executors import SerialExecutor
+from braidsearch.ledger.ahead import BLOCK, Ahead
 from braidsearch.ledger.fingerprints import Fingerprint
 from braidsearch.ledger.imaging import Imager
 from braidsearch.ledger.judgements import Judgements
 from braidsearch.ledger.placing import Effort, Finding, Marked, ask, place_all
-from braidsearch.ledger.preparing import Prepared, prepare_all
+from braidsearch.ledger.preparing import Prepared
 from braidsearch.ledger.store import Store
 from braidsearch.words import Braid
-
-BLOCK = 256
-_AHEAD = 16  # blocks whose braids are prepared before their turn
-_CHUNK = 16  # braids prepared in one task
 
 Report = Callable[["SortProgress"], None]
 
@@ -104,40 +99,11 @@ class Sorter:
     def _place_all(self) -> None:
         total = self.store.count_unsorted()
         self._tell("sorting", 0, total)
-        ahead: deque[tuple[list[int], list[Future[list[Prepared]]]]] = deque()
-        blocks = self._iter_blocks()
-        most = 1 if isinstance(self.executor, SerialExecutor) else _AHEAD
-        is_at_end = False
-        while True:
-            while len(ahead) < most and not is_at_end:
-                block = next(blocks, None)
-                is_at_end = block is None
-                if block is not None:
-                    ahead.append(self._begin(block))
-            if not ahead:
-                return
-            numbers, tasks = ahead.popleft()
-            prepared = [one for task in tasks for one in task.result()]
-            self._place_block(numbers, prepared)
-            self.placed += len(numbers)
+        self.ahead = Ahead(self.store, self.executor)
+        while (block := self.ahead.next_block()) is not None:
+            self._place_block(*block)
+            self.placed += len(block[0])
             self._tell("sorting", self.placed, total)
-
-    def _iter_blocks(self) -> Iterator[list[tuple[int, Braid]]]:
-        after = 0
-        while block := self.store.unsorted(BLOCK, after):
-            after = block[-1][0]
-            yield block
-
-    def _begin(
-        self, block: list[tuple[int, Braid]]
-    ) -> tuple[list[int], list[Future[list[Prepared]]]]:
-        numbers = [number for number, _ in block]
-        braids = [braid for _, braid in block]
-        tasks = [
-            self.executor.submit(prepare_all, braids[start : start + _CHUNK])
-            for start in range(0, len(braids), _CHUNK)
-        ]
-        return numbers, tasks
 
     def _place_block(self, numbers: Sequence[int], prepared: Sequence[Prepared]) -> None:
         findings = self._findings(prepared)
@@ -161,7 +127,8 @@ class Sorter:
                 task = self.executor.submit(place_all, bucket, candidates, self.effort)
                 tasks.append((bucket, task))
         for bucket, task in tasks:
-            for (form, _), found in zip(bucket, task.result(), strict=True):
+            results = self.ahead.result_of(task)
+            for (form, _), found in zip(bucket, results, strict=True):
                 findings[form] = tuple(found)
         return findings
 

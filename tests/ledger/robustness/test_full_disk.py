@@ -12,7 +12,6 @@ from typing import Any
 import pytest
 
 from braidsearch.errors import InputError
-from braidsearch.ledger import sorting
 from braidsearch.ledger.ledger import Ledger
 from tests.ledger.robustness.ledgers import (
     STAGES,
@@ -55,7 +54,7 @@ def test_a_stage_without_room_keeps_what_it_has_and_goes_on(
     stage: Stage, life: Life, tmp_path: Path, monkeypatch: pytest.MonkeyPatch
 ):
     """A full file ends a stage in one line; with more room each time it ends in the same rows."""
-    monkeypatch.setattr(sorting, "BLOCK", 8)
+    monkeypatch.setattr("braidsearch.ledger.ahead.BLOCK", 8)
     path = life.copy_before(stage, tmp_path / "ledger")
     messages = []
     for more_pages in (0, 8, 16, 1_000):

@@ -48,7 +48,7 @@ def test_an_interrupted_sort_leaves_a_ledger_that_can_be_used_at_once(
     stage: Stage, life: Life, tmp_path: Path, monkeypatch: pytest.MonkeyPatch
 ):
     """After Ctrl-C the same open ledger answers, and the same call completes it."""
-    monkeypatch.setattr(sorting, "BLOCK", 8)
+    monkeypatch.setattr("braidsearch.ledger.ahead.BLOCK", 8)
     path = life.copy_before(stage, tmp_path / "ledger")
     with Ledger(path) as ledger:
         carry_out_interrupted(stage, ledger, 3, monkeypatch)

@@ -15,7 +15,6 @@ from typing import Any, NoReturn
 
 import pytest
 
-from braidsearch.ledger import sorting
 from braidsearch.ledger.ledger import Ledger
 from tests.ledger.robustness.ledgers import (
     STAGES,
@@ -92,7 +91,7 @@ def check_kills(
     stage: Stage, life: Life, folder: Path, monkeypatch: pytest.MonkeyPatch, kills: int
 ) -> None:
     """Kill a stage at so many seeded points, each time in a ledger of its own, and go on."""
-    monkeypatch.setattr(sorting, "BLOCK", 8)
+    monkeypatch.setattr("braidsearch.ledger.ahead.BLOCK", 8)
     whole = life.copy_before(stage, folder / "whole")
     points = count_points(stage, whole, monkeypatch)
     assert ledger_text(whole) == life.text_after[stage.name]
@@ -138,7 +137,7 @@ def test_a_stage_killed_twice_ends_in_the_same_ledger(
     life: Life, tmp_path: Path, monkeypatch: pytest.MonkeyPatch
 ):
     """What goes on after a kill may be killed as well."""
-    monkeypatch.setattr(sorting, "BLOCK", 8)
+    monkeypatch.setattr("braidsearch.ledger.ahead.BLOCK", 8)
     stage = SORT
     points = count_points(stage, life.copy_before(stage, tmp_path / "whole"), monkeypatch)
     path = life.copy_before(stage, tmp_path / "killed")

@@ -46,7 +46,7 @@ def before_change(
         return begin(sorter)
 
     with monkeypatch.context() as patched:
-        patched.setattr(sorting, "BLOCK", 8)
+        patched.setattr("braidsearch.ledger.ahead.BLOCK", 8)
         patched.setattr(sorting.Sorter, "_changing", happen_and_begin)
         yield
     assert changes >= number
