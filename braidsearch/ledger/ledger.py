@@ -25,7 +25,7 @@ if TYPE_CHECKING:
     from braidsearch.ledger.reading import Entry
     from braidsearch.ledger.sorting import Report, SortSummary
 
-DEFAULT_NODES = 2_000
+DEFAULT_NODES = 1_000
 
 
 @dataclass(frozen=True, slots=True)

@@ -21,7 +21,7 @@ from braidsearch.search.query import Course, Query
 from braidsearch.search.route import Route
 from braidsearch.words import Braid
 
-_SHORT, _LONG = 60, 1_000  # nodes up to which a search for sameness goes, before and after
+_SHORT, _LONG = 60, 400  # nodes up to which a search for sameness goes, before and after
 _SUBLINK_SECONDS = 0.05  # the invariants of sublinks are asked, by estimate of each,
 _FINER_SECONDS = 0.1  # and before the finer ones are
 
@@ -46,7 +46,7 @@ class Effort:
     There is no limit in seconds, so that the same ledger comes out on every machine.
     """
 
-    nodes: int = 2_000
+    nodes: int = 1_000
     max_strands: int | None = None
 
     @property

@@ -31,6 +31,7 @@ if TYPE_CHECKING:
     from braidsearch.ledger.finding import Comparison, Found
     from braidsearch.ledger.ledger import Ledger
     from braidsearch.ledger.store import StoredEntry
+    from braidsearch.words import Braid
 
 _DESCRIPTION = f"""Say which class of a ledger a link belongs to, with the moves that lead to its
 first entry; or that it is none of them, with what it differs from and how. Nothing is entered.
@@ -55,7 +56,7 @@ def answer(arguments: Sequence[str]) -> Answer:
 
     with Ledger(given.ledger) as ledger, blaming_damage(ledger.store):
         _check_sorted(ledger, given.ledger)
-        found = ledger.find(read_link_argument("LINK", given.link), nodes=nodes)
+        found = ledger.find(_read_link(ledger, given.link), nodes=nodes)
         entries = _entries_of(ledger, found)
     return _answer(given, found, entries)
 
@@ -75,6 +76,19 @@ def _check_sorted(ledger: Ledger, path: str) -> None:
     if ledger.store.one("SELECT 1 FROM entries LIMIT 1") is None:
         raise InputError(f"{path}: it has no entries: expected ledger add before")
     raise InputError(f"{path}: nothing in it is sorted: expected ledger sort before")
+
+
+def _read_link(ledger: Ledger, text: str) -> Braid:
+    """The link that is meant. Raises InputError, which says so of the name of an entry."""
+    try:
+        return read_link_argument("LINK", text)
+    except InputError:
+        if not ledger.store.entries("name = ?", [text], 1):
+            raise
+    raise InputError(
+        f"LINK: {text!r}: an entry of the ledger: expected a braid word or a drawing; "
+        "of an entry, ledger report --class tells what is known"
+    )
 
 
 def _entries_of(ledger: Ledger, found: Found) -> list[StoredEntry]:

@@ -25,7 +25,7 @@ def add_nodes(parser: CommandParser) -> None:
         "--nodes",
         int,
         "a count",
-        "conjugacy classes that the search for one question enters (2000)",
+        "conjugacy classes that the search for one question enters (1000)",
     )
 
 
