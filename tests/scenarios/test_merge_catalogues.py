@@ -27,7 +27,7 @@ from braidsearch.invariants import homfly_polynomial
 from braidsearch.verifier import verify as verifier
 from braidsearch.words import apply_symmetry
 from tests.command_line.readme_examples import commands_of, console_blocks, run_blocks
-from tests.command_line.running import environment
+from tests.command_line.running import Runner, environment
 from tests.diagrams.polygons.curves import exact_determinant, gauss_linking_integral
 from tests.knot_tables import TableRow, iter_knots
 
@@ -373,6 +373,17 @@ def test_the_readme_lists_what_the_script_runs(merged: Merged) -> None:
     run = (merged.folder / "commands.txt").read_text(encoding="utf-8").splitlines()
     assert len(listing) >= 7
     assert set(listing) <= {line.removesuffix(" --json") for line in run}
+
+
+def test_the_name_of_an_entry_is_no_link(
+    merged: Merged, capsys: pytest.CaptureFixture[str]
+) -> None:
+    """Whoever looks for an entry by its name is told how; other mistakes are told as ever."""
+    run, ledger = Runner(capsys), str(merged.folder / "links.ledger")
+    said = run.fail("ledger", "find", ledger, "osprey")
+    assert "LINK: 'osprey': an entry of the ledger: expected a braid word or a drawing" in said
+    assert run("ledger", "report", ledger, "--class", "osprey").status == 0
+    assert "an entry of the ledger" not in run.fail("ledger", "find", ledger, "ospreys")
 
 
 def test_the_script_names_its_usage() -> None:
