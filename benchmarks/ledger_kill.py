@@ -29,7 +29,7 @@ from tests.ledger.robustness.ledgers import (
     random_braid,
     write_table,
 )
-from tests.ledger.robustness.processes import kill_after, run, start
+from tests.ledger.robustness.processes import finish, kill_after, start
 from tests.scrambles import scramble
 
 TITLES = "kill  processes  command  at second  braids placed  proofs  goes on for  result"
@@ -92,7 +92,7 @@ class Making:
         taken = []
         for arguments in (self.add, self.sort):
             begin = time.perf_counter()
-            outcome = run(*arguments)
+            outcome = finish(start(*arguments), patience=None)
             if outcome.status not in {0, 3}:
                 raise RuntimeError(f"{' '.join(arguments)}: {outcome.errors}")
             taken.append(time.perf_counter() - begin)
@@ -112,7 +112,7 @@ def kill_once(making: Making, times: list[float], moment: float, text: str) -> K
     if action == "add":
         kill_after(start(*making.add), moment)
     else:
-        run(*making.add)
+        finish(start(*making.add), patience=None)
         moment -= times[0]
         kill_after(start(*making.sort), moment)
     placed, proofs = making.rows()

@@ -27,9 +27,9 @@ def start(*arguments: str, **options: Any) -> subprocess.Popen[str]:
     )
 
 
-def finish(process: subprocess.Popen[str]) -> Outcome:
-    """Wait for the end of a process."""
-    output, errors = process.communicate(timeout=3 * PATIENCE)
+def finish(process: subprocess.Popen[str], patience: float | None = 3 * PATIENCE) -> Outcome:
+    """Wait for the end of a process; None waits for ever."""
+    output, errors = process.communicate(timeout=patience)
     return Outcome(process.returncode, output, errors)
 
 
