@@ -1,6 +1,7 @@
 """The examples of the README: run them, compare them, write them anew.
 
-``python -m tests.command_line.readme_examples`` puts what the commands print now into the README.
+``python -m tests.command_line.readme_examples`` puts what the commands print now into the README
+and into the guided tour.
 """
 
 import os
@@ -12,7 +13,9 @@ from pathlib import Path
 
 from tests.command_line.running import environment
 
-README = Path(__file__).parents[2] / "README.md"
+PROJECT = Path(__file__).parents[2]
+README = PROJECT / "README.md"
+TOUR = PROJECT / "scenarios" / "guided_tour" / "README.md"
 _CONSOLE = re.compile(r"```console\n(.*?)```", re.DOTALL)
 _PROMPT = "$ "
 
@@ -66,17 +69,18 @@ def output_of(command: str, folder: Path, shell: dict[str, str]) -> str:
     return finished.stdout
 
 
-def rewrite_readme() -> None:
-    """Put the output of now into the README."""
-    text = README.read_text(encoding="utf-8")
+def rewrite(page: Path) -> None:
+    """Put the output of now into the page."""
+    text = page.read_text(encoding="utf-8")
     with tempfile.TemporaryDirectory() as folder:
         outputs = run_blocks(console_blocks(text), Path(folder))
     if "internal error" in "".join(outputs):
         raise RuntimeError("an example ended in an internal error: nothing was written")
     made = iter(outputs)
     fresh = _CONSOLE.sub(lambda _: f"```console\n{next(made)}```", text)
-    README.write_text(fresh, encoding="utf-8")
+    page.write_text(fresh, encoding="utf-8")
 
 
 if __name__ == "__main__":
-    rewrite_readme()
+    for page in (README, TOUR):
+        rewrite(page)
