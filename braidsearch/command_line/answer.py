@@ -50,6 +50,15 @@ def deliver(answer: Answer) -> int:
     return answer.status
 
 
+def is_on_terminal() -> bool:
+    """Whether standard output is a terminal that a report may be set for.
+
+    A pipe, a file, a closed stream and a terminal that calls itself dumb get plain text.
+    """
+    is_dumb = os.environ.get("TERM") == "dumb"
+    return sys.stdout is not None and sys.stdout.isatty() and not is_dumb
+
+
 def print_error(message: str) -> None:
     """Print one message on standard error; one that cannot be printed there is lost."""
     try:

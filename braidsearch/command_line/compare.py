@@ -12,7 +12,7 @@ from braidsearch.certificates import (
     format_certificate,
     write_certificate,
 )
-from braidsearch.command_line.answer import Answer, json_answer
+from braidsearch.command_line.answer import Answer, is_on_terminal, json_answer
 from braidsearch.command_line.arguments import CommandParser
 from braidsearch.command_line.compare_report import report_verdict
 from braidsearch.command_line.link_input import (
@@ -22,7 +22,6 @@ from braidsearch.command_line.link_input import (
 )
 from braidsearch.command_line.progress import progress_line
 from braidsearch.command_line.search_limits import add_limits, read_limits
-from braidsearch.command_line.terminal import read_terminal
 from braidsearch.errors import BraidsearchError, InputError
 from braidsearch.words import SYMMETRIES, Braid
 
@@ -133,13 +132,11 @@ def _answer_verdict(
         write_certificate(certificate, given.output)
     if given.json:
         return json_answer(status, verdict_to_json(verdict), missing)
-    terminal = None if given.output == "-" else read_terminal()
-    if terminal is not None:
+    if given.output != "-" and is_on_terminal():
         from braidsearch.command_line.compare_steps import Question  # noqa: PLC0415 - not for pipes
         from braidsearch.command_line.compare_summary import summarize_verdict  # noqa: PLC0415
 
-        question = Question(left, right, given, limits)
-        return Answer(status, summarize_verdict(verdict, question, terminal))
+        return Answer(status, summarize_verdict(verdict, Question(left, right, given, limits)))
     report = report_verdict(verdict, left, right, given.output)
     if given.output != "-":
         return Answer(status, report)

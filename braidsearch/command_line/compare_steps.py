@@ -13,7 +13,7 @@ from typing import TYPE_CHECKING, Any
 from braidsearch.command_line.compare_report import bound_words
 from braidsearch.command_line.link_input import is_standard_input
 from braidsearch.command_line.terminal import Terminal, quote_argument
-from braidsearch.words import Braid
+from braidsearch.words import MAX_STRANDS, Braid
 
 if TYPE_CHECKING:
     from braidsearch.search.limits import SearchLimits
@@ -110,7 +110,9 @@ def further_limits(limits: SearchLimits, explored: Mapping[str, Any]) -> SearchL
     else:
         return None
     strands = limits.max_strands
-    return further if strands is None else replace(further, max_strands=strands + 2)
+    if strands is not None:
+        further = replace(further, max_strands=min(strands + 2, MAX_STRANDS))
+    return further
 
 
 def _rounded_up(seconds: float) -> float:

@@ -14,7 +14,13 @@ from braidsearch.certificates.display import VARIABLES, show_value
 from braidsearch.certificates.explanation import count_of, describe_invariant, explain_move
 from braidsearch.command_line.compare_report import headline
 from braidsearch.command_line.compare_steps import Question, next_steps
-from braidsearch.command_line.terminal import Terminal, cut_pieces, cut_text, wrap_text
+from braidsearch.command_line.terminal import (
+    Terminal,
+    cut_pieces,
+    cut_text,
+    read_terminal,
+    wrap_text,
+)
 
 if TYPE_CHECKING:
     from braidsearch.certificates import Certificate, Distinction
@@ -25,8 +31,11 @@ _LONGEST_TITLE = 60
 _TERMS = re.compile(r" (?=[+-] )")
 
 
-def summarize_verdict(verdict: Verdict, question: Question, terminal: Terminal) -> str:
-    """The report for a terminal, of lines that fit it."""
+def summarize_verdict(
+    verdict: Verdict, question: Question, terminal: Terminal | None = None
+) -> str:
+    """The report in lines that fit the terminal: by default the one that standard output is."""
+    terminal = terminal or read_terminal()
     title, _, sentence = headline(verdict).partition(": ")
     lines = terminal.headline(verdict.outcome, title, sentence)
     lines += ["", *wrap_text(verdict.reason, terminal.text_columns, "  ", "  ")]

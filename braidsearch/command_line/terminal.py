@@ -1,8 +1,8 @@
 """What a report needs to know of the terminal, and how text is set to its width.
 
-Commands ask ``read_terminal``: it gives None for a pipe or a file, where an answer is printed plain
-and complete. On a terminal lines are counted in columns, and colour is put on after they are set,
-so that no escape code is ever counted or broken.
+Loaded on a terminal only: in a pipe or a file an answer is printed plain and complete. Lines are
+counted in columns, and colour is put on after they are set, so that no escape code is ever counted
+or broken.
 """
 
 from __future__ import annotations
@@ -10,6 +10,7 @@ from __future__ import annotations
 import os
 import re
 import shlex
+import shutil
 import sys
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
@@ -84,21 +85,16 @@ class Terminal:
         return [f"  {name}:", *(f"    {line}" for line in painted)]
 
 
-def read_terminal() -> Terminal | None:
-    """The terminal on standard output; None for a pipe, a file, a closed stream or a dumb one.
+def read_terminal() -> Terminal:
+    """The terminal that standard output is.
 
     NO_COLOR, when it is not empty, takes the colour away (the convention of many programs). Without
     TERM nothing is known of a terminal, so it gets none either.
     """
-    stream, kind = sys.stdout, os.environ.get("TERM", "")
-    if stream is None or not stream.isatty() or kind == "dumb":
-        return None
-    import shutil  # noqa: PLC0415 - it loads compression libraries, which a pipe has no use for
-
     # Some terminals go to a new line by themselves when the last column is filled.
     columns = max(shutil.get_terminal_size().columns, NARROWEST) - 1
-    is_coloured = bool(kind) and not os.environ.get("NO_COLOR")
-    return Terminal(columns, is_coloured, stream.encoding or "utf-8")
+    is_coloured = bool(os.environ.get("TERM")) and not os.environ.get("NO_COLOR")
+    return Terminal(columns, is_coloured, sys.stdout.encoding or "utf-8")
 
 
 def column_count(text: str) -> int:

@@ -6,9 +6,8 @@ import sys
 from argparse import Namespace
 from collections.abc import Sequence
 
-from braidsearch.command_line.answer import Answer, json_answer, one_line
+from braidsearch.command_line.answer import Answer, is_on_terminal, json_answer, one_line
 from braidsearch.command_line.arguments import CommandParser, read_word_argument
-from braidsearch.command_line.terminal import read_terminal
 from braidsearch.errors import InputError
 from braidsearch.verifier import Report, verify_text
 from braidsearch.verifier.verify import MAX_FILE_BYTES
@@ -44,11 +43,17 @@ def answer(arguments: Sequence[str]) -> Answer:
         return json_answer(status, keys, hint)
     if unreadable:
         return Answer(status, "", hint)
+    if is_on_terminal():
+        return Answer(status, _set_out(report))
+    return Answer(status, f"{report.status}\nclaim: {report.claim}\nreason: {report.reason}")
+
+
+def _set_out(report: Report) -> str:
+    from braidsearch.command_line.terminal import read_terminal  # noqa: PLC0415 - not for pipes
+
     terminal = read_terminal()
-    if terminal is None:
-        return Answer(status, f"{report.status}\nclaim: {report.claim}\nreason: {report.reason}")
     lines = terminal.headline(report.status, report.status, report.claim)
-    return Answer(status, "\n".join([*lines, "", *terminal.item("reason", report.reason)]))
+    return "\n".join([*lines, "", *terminal.item("reason", report.reason)])
 
 
 def _verify(given: Namespace) -> Report:

@@ -216,6 +216,7 @@ def test_links_that_cannot_be_typed_again_are_told_in_words(typed: str) -> None:
         ({"seconds": 1}, "time limit", (10, 1.0), {}),
         ({"seconds": 0}, "time limit", (0, 0.0), {}),
         ({"max_strands": 5}, "time limit", (10, 60.0), {"seconds": 600, "max_strands": 7}),
+        ({"max_strands": 999, "seconds": 6}, "time limit", (1, 6.0), {"max_strands": 1000}),
         ({"seconds": 7}, "interrupted", (10, 3.0), {"seconds": 7}),
     ],
 )

@@ -31,12 +31,19 @@ unknot (Morton, An irreducible 4-string braid with unknotted closure, 1983; from
 def run_on_screen(
     *arguments: str, columns: int = 80, folder: Path | None = None, **variables: str
 ) -> tuple[int, str]:
+    """Exit status of ``braidsearch ARGUMENTS`` and what it wrote on a terminal."""
+    return read_screen(command(*arguments), columns, folder, **variables)
+
+
+def read_screen(
+    started: list[str], columns: int = 80, folder: Path | None = None, **variables: str
+) -> tuple[int, str]:
     """Exit status, and what a process wrote on a terminal of so many columns, lines by newline."""
     leader, follower = pty.openpty()
     fcntl.ioctl(follower, termios.TIOCSWINSZ, struct.pack("HHHH", 24, columns, 0, 0))
     inherited = {k: v for k, v in environment().items() if k not in ("COLUMNS", "NO_COLOR")}
     process = subprocess.Popen(
-        command(*arguments),
+        started,
         stdout=follower,
         stderr=subprocess.PIPE,
         cwd=folder,
@@ -152,3 +159,23 @@ def test_verify_on_a_terminal_has_a_mark(tmp_path: Path) -> None:
         assert lines[0].startswith(label)
         assert "reason: " in report
         assert max(map(cell_len, lines)) < 50
+
+
+def test_a_pipe_loads_nothing_of_terminals(tmp_path: Path) -> None:
+    """Piped, neither the layout for terminals nor the library rich is loaded; on one, no rich."""
+    script = tmp_path / "loaded.py"
+    script.write_text(
+        "import sys\n"
+        "from braidsearch.command_line.main import main\n"
+        "main(['compare', '1 1 1', '-1 -1 -1'])\n"
+        "print('\\nMODULES', *sys.modules)\n"
+    )
+    run = [command()[0], str(script)]
+    piped = subprocess.run(run, capture_output=True, check=True, text=True, env=environment())
+    modules = set(piped.stdout.split("MODULES ")[1].split())
+    assert "braidsearch.command_line.compare_report" in modules
+    names = ("terminal", "compare_summary", "compare_steps")
+    assert modules.isdisjoint({"rich", *(f"braidsearch.command_line.{name}" for name in names)})
+    shown = read_screen(run, folder=tmp_path)[1]
+    assert "braidsearch.command_line.terminal" in shown
+    assert "rich" not in shown.split("MODULES ")[1].split()

@@ -9,6 +9,7 @@ from hypothesis import example, given, settings
 from hypothesis import strategies as st
 from rich.cells import cell_len
 
+from braidsearch.command_line.answer import is_on_terminal
 from braidsearch.command_line.terminal import (
     VERDICTS,
     Terminal,
@@ -39,7 +40,7 @@ class Screen(io.TextIOWrapper):
         return True
 
 
-def terminal_with(monkeypatch: pytest.MonkeyPatch, **variables: str) -> Terminal | None:
+def terminal_with(monkeypatch: pytest.MonkeyPatch, **variables: str) -> Terminal:
     """What is read of a colour terminal of 80 columns, these variables of the environment changed.
 
     The stream is set here, since a test's own output is redirected when its call begins.
@@ -102,7 +103,7 @@ def read_by_shell(lines: list[str]) -> list[str]:
 FILES = st.text("ab -'\"$`!\\*é한", min_size=1, max_size=20)
 
 
-@settings(max_examples=60)
+@settings(max_examples=30)  # each starts a shell
 @given(braids(max_letters=40), FILES, COLUMNS)
 @example(parse_word("1 2 1"), "my  'own' $HOME.json", 30)
 def test_a_shell_reads_a_command_as_it_is_set(braid: object, file: str, columns: int) -> None:
@@ -209,7 +210,6 @@ def test_width_follows_the_terminal(
 ) -> None:
     """All columns but the last one, and never less than a report needs."""
     terminal = terminal_with(monkeypatch, COLUMNS=columns)
-    assert terminal is not None
     assert terminal.columns == used
     assert terminal.text_columns == min(used, 100)
 
@@ -229,16 +229,18 @@ def test_colour_is_taken_away_by_any_value(
 ) -> None:
     """NO_COLOR counts when it is present and not empty, whatever it says (no-color.org, 2017)."""
     terminal = terminal_with(monkeypatch, **variables)
-    assert terminal is not None
     assert terminal.is_coloured is is_coloured
     assert bool(re.search("\x1b", terminal.paint("1", "text"))) is is_coloured
 
 
 def test_pipes_closed_streams_and_dumb_terminals_are_none(monkeypatch: pytest.MonkeyPatch) -> None:
     """There a report is plain and complete."""
-    assert terminal_with(monkeypatch, TERM="xterm") is not None
-    assert terminal_with(monkeypatch, TERM="dumb") is None
-    monkeypatch.setenv("TERM", "xterm")
+    terminal_with(monkeypatch)
+    assert is_on_terminal()
+    monkeypatch.setenv("TERM", "dumb")
+    assert not is_on_terminal()
+    monkeypatch.delenv("TERM")
+    assert is_on_terminal()
     for stream in (None, io.StringIO()):
         monkeypatch.setattr("sys.stdout", stream)
-        assert read_terminal() is None
+        assert not is_on_terminal()
