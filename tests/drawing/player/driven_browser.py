@@ -121,9 +121,9 @@ class DrivenBrowser:
         message: dict[str, Any] = json.loads(text)
         return message
 
-    def wait_for(self, method: str) -> dict[str, Any]:
+    def wait_for(self, method: str, seconds: float = _PATIENCE) -> dict[str, Any]:
         """The parameters of the next event of this name, which is taken out of those kept."""
-        end = time.monotonic() + _PATIENCE
+        end = time.monotonic() + seconds
         while True:
             for place, event in enumerate(self.events):
                 if event.get("method") == method:
@@ -134,9 +134,15 @@ class DrivenBrowser:
     def open(self, page: Path, width: int = 1280, height: int = 800) -> None:
         """Show a file in a window of this size, and wait until it has loaded."""
         self.resize(width, height)
-        self.events.clear()
-        self.call("Page.navigate", url=page.as_uri())
-        self.wait_for("Page.loadEventFired")
+        for seconds in (20.0, _PATIENCE):  # on a busy machine a browser now and then loses one
+            self.events.clear()
+            self.call("Page.navigate", url=page.as_uri())
+            try:
+                self.wait_for("Page.loadEventFired", seconds)
+            except TimeoutError:
+                continue
+            return
+        raise TimeoutError(f"the browser does not load {page.name}")
 
     def resize(self, width: int, height: int) -> None:
         """Give the page so many pixels."""

@@ -107,6 +107,43 @@ def test_steps_back_run_through_the_same_frames(browser: DrivenBrowser, tmp_path
         assert len(middle) >= 1
 
 
+_PLAY_ALL = """(() => {
+  const broken = [];
+  let frames = 0;
+  while (showNextFrame(100) && frames < 20000) {
+    frames += 1;
+    for (const path of document.querySelectorAll("#stage svg path[d], #stage svg")) {
+      const text = `${path.getAttribute("d")} ${path.getAttribute("viewBox")}`;
+      if (/NaN|undefined|Infinity/.test(text)) broken.push(text.slice(0, 80));
+    }
+  }
+  return [frames, broken, document.getElementById("place").textContent];
+})()"""
+
+
+@pytest.mark.parametrize("seed", range(4))
+def test_playing_to_the_end_breaks_nothing(
+    seed: int, browser: DrivenBrowser, tmp_path: Path
+) -> None:
+    """Random proofs, played to their end, open and closed: every path and every frame of every
+    picture consists of numbers, and playing stops at the last step.
+    """
+    proof = random_proof(seed, 10, 3 * seed)
+    page = PlayedPage(browser, draw_proof_page(proof), tmp_path)
+    page.select("speed", "4")
+    page.choose("sideways", seed % 2 == 0)
+    for is_closed in (False, True):
+        page.choose("closure", is_closed)
+        page.slide(0)
+        browser.press(" ")
+        frames, broken, place = browser.run(_PLAY_ALL)
+        assert frames > 20
+        assert broken == []
+        assert place == f"{len(proof.moves)} / {len(proof.moves)}"
+        assert page.text("reason").endswith("This is RIGHT, letter by letter.")
+    assert browser.mistakes() == []
+
+
 def test_large_changes_fade_and_say_so(browser: DrivenBrowser, tmp_path: Path) -> None:
     """A step that takes too many relations to be shown is a change from one picture to another,
     named as such; both pictures are there while it lasts.

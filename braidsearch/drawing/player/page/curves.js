@@ -142,7 +142,7 @@ class Pen {
 
   /* What was drawn; a closed curve that passes under somewhere begins behind an undercrossing. */
   pathData(isClosed) {
-    const { runs } = this;
+    const runs = this.runs.filter(({ pieces }) => pieces.length);
     if (isClosed && runs.length > 1) {
       const first = runs.shift(), last = runs.pop();
       runs.unshift({ start: last.start, pieces: joinedPieces(last, first) });

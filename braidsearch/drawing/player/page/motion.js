@@ -29,7 +29,7 @@ function shiftLetters(state, before, after, pairs, active = () => false) {
     Math.max(most, Math.abs(before.cells[was].y - after.cells[becomes].y))
   ), Math.abs(before.height - after.height));
   if (distance < 1e-6) return [];
-  const seconds = 0.25 + 0.15 * Math.min(1, distance / M.levelHeight);
+  const seconds = 0.22 + 0.16 * Math.min(4, distance / M.levelHeight);
   return [movement(seconds, (time) => {
     const items = pairs.map(([was, becomes]) => ({
       ...before.cells[was],
