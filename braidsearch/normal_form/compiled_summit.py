@@ -166,7 +166,7 @@ def _walk(slid: _Slid, cap: int, should_stop: ShouldStop) -> CompiledSummit | No
     members = np.zeros((_ROOM, len(start)), dtype=np.uint16)
     parents = np.zeros((_ROOM, 2), dtype=np.int64)
     orbits = np.zeros((_ROOM, 2), dtype=np.int64)
-    slots = np.full(_SLOTS_A_MEMBER * _ROOM, -1, dtype=np.int64)
+    slots = np.empty(_SLOTS_A_MEMBER * _ROOM, dtype=np.int64)
     numbers = np.zeros(kernel.NUMBERS, dtype=np.int64)
     members[0], numbers[kernel.INFIMUM] = start, slid.infimum
     numbers[kernel.MEMBERS] = numbers[kernel.IS_COMPLETE] = 1

@@ -7,7 +7,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 from functools import lru_cache
 from itertools import permutations
-from typing import Any, NamedTuple
+from typing import Any
 
 import numpy as np
 
@@ -17,7 +17,7 @@ from braidsearch.normal_form.simple_elements import Permutation, SimpleElements
 
 # The entries of ``pairs`` at [a, b], and the rows of ``singles``.
 LEFT, RIGHT, MEET, RESIDUE = range(4)
-COMPLEMENT, FLIP = range(2)
+SAME, FLIP, COMPLEMENT = range(3)
 
 
 @dataclass(frozen=True)
@@ -26,9 +26,9 @@ class RankedTables:
 
     So the identity is 0, delta the last, and names compare as the permutations do. ``pairs``,
     shape (n!, n!, 4), holds the left-weighted pair of a and b, their greatest common left divisor,
-    and the least r such that b divides a * r. ``singles``, shape (2, n!), holds the c with
-    a * c = delta, and the conjugate of a by delta. ``words`` are shortest positive words, and
-    ``elements`` knows the element a by ``names[a]``.
+    and the least r such that b divides a * r. ``singles``, shape (3, n!), holds a, its conjugate
+    by delta (so the one by delta^k at [k % 2, a]), and the c with a * c = delta. ``words`` are
+    shortest positive words, and ``elements`` knows the element a by ``names[a]``.
     """
 
     strands: int
@@ -49,7 +49,8 @@ def ranked_tables(strands: int) -> RankedTables:
     names = tuple(elements.number(ends) for ends in ordered)
     table = np.array(ordered, dtype=np.int64).reshape(-1, strands)
     inverse = np.argsort(table, axis=1)
-    singles = np.stack([rank(strands - 1 - inverse), rank(strands - 1 - table[:, ::-1])])
+    same, flip = np.arange(len(table)), rank(strands - 1 - table[:, ::-1])
+    singles = np.stack([same, flip, rank(strands - 1 - inverse)])
     without_first = _swapped(table)
     atoms = np.array(without_first[0], dtype=np.int64)
     with_last = rank(inverse)[_swapped(inverse)]
@@ -90,39 +91,6 @@ def _crossings(table: Any) -> Any:
     """The lengths of the elements: their pairs of strands that cross."""
     upper = np.triu(np.ones((table.shape[1],) * 2, dtype=bool), 1)
     return ((table[:, :, None] > table[:, None, :]) & upper).sum(axis=(1, 2))
-
-
-class Group(NamedTuple):
-    """The tables that compiled loops look into: ``pairs`` and ``singles`` of RankedTables."""
-
-    pairs: Any
-    singles: Any
-
-
-@compiled
-def flipped(group: Group, element: int, power: int) -> Any:
-    """The conjugate by that power of delta."""
-    if power % 2:
-        return np.int64(group.singles[FLIP, element])
-    return np.int64(element)
-
-
-@compiled
-def product(group: Group, left: int, right: int) -> Any:
-    """The product, which the caller knows to be simple."""
-    return np.int64(group.pairs[left, right, LEFT])
-
-
-@compiled
-def meet(group: Group, first: int, second: int) -> Any:
-    """The greatest common left divisor."""
-    return np.int64(group.pairs[first, second, MEET])
-
-
-@compiled
-def residue(group: Group, left: int, element: int) -> Any:
-    """The least r such that ``element`` divides ``left`` * r; the quotient, if it is a multiple."""
-    return np.int64(group.pairs[left, element, RESIDUE])
 
 
 @compiled

@@ -2,7 +2,8 @@
 
 They do, step for step, what ``left_normal_form``, ``conjugation`` and ``summit`` do, where the
 theorems stand. Simple elements are their names in ``RankedTables``: 0 the identity, the last name
-delta. A braid is its infimum with an array of factors.
+delta. A braid is its infimum with an array of factors. Each array handed to a function is counted
+as a reference, which costs as much as ten look-ups: so the innermost loops call none.
 
 Machine code is kept for each file by itself: after a change to ``row_table`` or ``ranked_tables``
 alone remove that of this file, ``__pycache__/summit_kernel*.nb*``.
@@ -15,17 +16,7 @@ from typing import Any, NamedTuple
 import numpy as np
 
 from braidsearch.compiling import compiled
-from braidsearch.normal_form.ranked_tables import (
-    COMPLEMENT,
-    FLIP,
-    LEFT,
-    RIGHT,
-    Group,
-    flipped,
-    meet,
-    product,
-    residue,
-)
+from braidsearch.normal_form.ranked_tables import COMPLEMENT, FLIP, LEFT, MEET, RESIDUE, RIGHT
 from braidsearch.normal_form.row_table import is_same, slot_of
 
 # How a loop ended: at its end, at the end of its share of work, for want of room, or with a member
@@ -56,20 +47,20 @@ class Walked(NamedTuple):
 
 
 class Orbit(NamedTuple):
-    """A cycling orbit of members with one infimum, and their inverses.
+    """A cycling orbit of members with one infimum.
 
-    There is room for one element, and for the values of an iteration of arrows.
+    ``sides``, shape (2, size, length), holds their factors and those of their inverses. There is
+    room for one element, and for the values of an iteration of arrows.
     """
 
-    members: Any
-    inverses: Any
+    sides: Any
     infimum: int
     room: Any
     values: Any
 
 
 @compiled
-def push(group: Group, factors: Any, first: int, last: int, factor: int) -> tuple[int, int]:
+def push(pairs: Any, factors: Any, first: int, last: int, factor: int) -> tuple[int, int]:
     """Multiply the factors at first .. last - 1 on the right; the new first and last.
 
     A delta that comes out in front is left behind: ``first`` is then greater by one.
@@ -78,14 +69,14 @@ def push(group: Group, factors: Any, first: int, last: int, factor: int) -> tupl
     place = last
     while place > first:
         left, right = factors[place - 1], factors[place]
-        new_left = group.pairs[left, right, LEFT]
+        new_left = pairs[left, right, LEFT]
         if new_left == left:
             break
-        factors[place - 1], factors[place] = new_left, group.pairs[left, right, RIGHT]
+        factors[place - 1], factors[place] = new_left, pairs[left, right, RIGHT]
         place -= 1
     if factors[last] != 0:
         last += 1
-    if first < last and factors[first] == group.pairs.shape[0] - 1:
+    if first < last and factors[first] == pairs.shape[0] - 1:
         first += 1
     return first, last
 
@@ -98,41 +89,40 @@ def read_letters(
 
     Moving the delta^-1 to the front flips every factor before it, which TURNS keeps count of.
     """
-    group = Group(pairs, singles)
     first, last = numbers[FIRST], numbers[LAST]
     for letter in letters:
         before = first
         if letter > 0:
-            factor = flipped(group, atoms[letter - 1], numbers[TURNS])
+            factor = singles[numbers[TURNS] % 2, atoms[letter - 1]]
         else:
             numbers[TURNS] += 1
             numbers[INFIMUM] -= 1
             complement = singles[COMPLEMENT, atoms[-letter - 1]]
-            factor = flipped(group, complement, numbers[TURNS] + 1)
-        first, last = push(group, factors, first, last, factor)
+            factor = singles[(numbers[TURNS] + 1) % 2, complement]
+        first, last = push(pairs, factors, first, last, factor)
         numbers[INFIMUM] += first - before
     numbers[FIRST], numbers[LAST] = first, last
 
 
 @compiled
 def conjugate(
-    group: Group, factors: Any, length: int, infimum: int, by: int, result: Any
+    pairs: Any, singles: Any, factors: Any, length: int, infimum: int, by: int, result: Any
 ) -> tuple[int, int]:
     """by^-1 * element * by in ``result``, which is longer by two; the infimum and the length."""
     for place in range(length):
         result[place + 1] = factors[place]
-    first, last = push(group, result, 1, length + 1, by)
+    first, last = push(pairs, result, 1, length + 1, by)
     infimum += first - 2
-    carried = flipped(group, group.singles[COMPLEMENT, by], infimum)
+    carried = singles[infimum % 2, singles[COMPLEMENT, by]]
     for place in range(first, last):
         right = result[place]
-        result[place - 1] = group.pairs[carried, right, LEFT]
-        carried = np.int64(group.pairs[carried, right, RIGHT])
+        result[place - 1] = pairs[carried, right, LEFT]
+        carried = np.int64(pairs[carried, right, RIGHT])
     result[last - 1] = carried
     if carried == 0:
         last -= 1
     start = first - 1
-    while start < last and result[start] == group.pairs.shape[0] - 1:
+    while start < last and result[start] == pairs.shape[0] - 1:
         start += 1
         infimum += 1
     for place in range(start, last):
@@ -141,11 +131,11 @@ def conjugate(
 
 
 @compiled
-def cycle(group: Group, factors: Any, length: int, infimum: int) -> tuple[int, int]:
+def cycle(pairs: Any, singles: Any, factors: Any, length: int, infimum: int) -> tuple[int, int]:
     """Cycling in place, with room for one factor more; the infimum and the length."""
     if length == 0:
         return infimum, length
-    first, last = push(group, factors, 1, length, flipped(group, factors[0], infimum))
+    first, last = push(pairs, factors, 1, length, singles[infimum % 2, factors[0]])
     for place in range(first, last):
         factors[place - first] = factors[place]
     return infimum + first - 1, last - first
@@ -159,7 +149,6 @@ def slide(
 
     ``extents`` holds the infimum and the length of each element of the trail.
     """
-    group = Group(pairs, singles)
     room = np.zeros(trail.shape[1] + 2, np.uint16)
     while True:
         last = numbers[TRAIL] - 1
@@ -172,8 +161,8 @@ def slide(
         numbers[KEPT] = last
         if length == 0:
             return DONE
-        initial = flipped(group, trail[last, 0], infimum)
-        prefix = meet(group, initial, singles[COMPLEMENT, trail[last, length - 1]])
+        initial = singles[infimum % 2, trail[last, 0]]
+        prefix = pairs[initial, singles[COMPLEMENT, trail[last, length - 1]], MEET]
         if prefix == 0:
             return DONE
         if last + 1 == len(trail):
@@ -181,7 +170,7 @@ def slide(
         if slides == 0:
             return PAUSED
         slides -= 1
-        infimum, length = conjugate(group, trail[last], length, infimum, prefix, room)
+        infimum, length = conjugate(pairs, singles, trail[last], length, infimum, prefix, room)
         for place in range(length):
             trail[last + 1, place] = room[place]
         extents[last + 1, 0], extents[last + 1, 1] = infimum, length
@@ -204,7 +193,7 @@ def enter(walked: Walked, slot: int, row: Any, parent: int, by: int) -> bool:
 
 
 @compiled
-def add_orbit(group: Group, walked: Walked, start: int, cap: int) -> int:
+def add_orbit(pairs: Any, singles: Any, walked: Walked, start: int, cap: int) -> int:
     """Enter the cycling orbit of the last member, number ``start``, and its flipped orbit."""
     members, slots, numbers = walked.members, walked.slots, walked.numbers
     length, infimum = members.shape[1], numbers[INFIMUM]
@@ -213,8 +202,8 @@ def add_orbit(group: Group, walked: Walked, start: int, cap: int) -> int:
         row[place] = members[start, place]
     size = 1
     while length > 0:
-        by = flipped(group, row[0], infimum)
-        if cycle(group, row, length, infimum) != (infimum, length):
+        by = singles[infimum % 2, row[0]]
+        if cycle(pairs, singles, row, length, infimum) != (infimum, length):
             return STRAYED
         if is_same(row, members[start], length):
             break
@@ -227,9 +216,9 @@ def add_orbit(group: Group, walked: Walked, start: int, cap: int) -> int:
         size += 1
     for number in range(start, start + size):
         for place in range(length):
-            row[place] = group.singles[FLIP, members[number, place]]
+            row[place] = singles[FLIP, members[number, place]]
         slot = slot_of(members, slots, row)
-        if slots[slot] < 0 and not enter(walked, slot, row, number, group.pairs.shape[0] - 1):
+        if slots[slot] < 0 and not enter(walked, slot, row, number, pairs.shape[0] - 1):
             return FULL
     walked.orbits[numbers[ORBITS], 0], walked.orbits[numbers[ORBITS], 1] = start, size
     numbers[ORBITS] += 1
@@ -237,66 +226,76 @@ def add_orbit(group: Group, walked: Walked, start: int, cap: int) -> int:
 
 
 @compiled
-def keep_infimum(group: Group, factors: Any, infimum: int, arrow: int) -> int:
-    """The least multiple of the arrow whose conjugate has the infimum of the element."""
-    while True:
-        missing = flipped(group, arrow, infimum)
-        for factor in factors:
-            missing = residue(group, factor, missing)
+def least_summit_arrow(
+    pairs: Any, singles: Any, sides: Any, position: int, infimum: int, arrow: Any
+) -> Any:
+    """The least multiple of the arrow whose conjugate lies in the super summit set.
+
+    The member of the orbit and its inverse are to keep their infima: see ``summit``.
+    """
+    length = sides.shape[2]
+    side, kept = 0, 0
+    while kept < 2:
+        missing = singles[(infimum + side * length) % 2, arrow]
+        for place in range(length):
             if missing == 0:
-                return arrow
-        missing = residue(group, arrow, missing)
+                break
+            missing = pairs[sides[side, position, place], missing, RESIDUE]
+        missing = pairs[arrow, missing, RESIDUE]
         if missing == 0:
-            return arrow
-        arrow = product(group, arrow, missing)
+            side, kept = 1 - side, kept + 1
+        else:
+            arrow, kept = np.int64(pairs[arrow, missing, LEFT]), 0
+    return arrow
 
 
 @compiled
-def least_summit_arrow(group: Group, member: Any, inverse: Any, infimum: int, arrow: int) -> int:
-    """The least multiple of the arrow whose conjugate lies in the super summit set."""
-    while True:
-        larger = keep_infimum(group, member, infimum, arrow)
-        larger = keep_infimum(group, inverse, -infimum - len(member), larger)
-        if larger == arrow:
-            return arrow
-        arrow = larger
-
-
-@compiled
-def transport(group: Group, orbit: Orbit, arrow: int) -> int:
+def transport(pairs: Any, singles: Any, orbit: Orbit, arrow: Any) -> Any:
     """The arrow carried once around the cycling orbit."""
-    pairs, length, infimum, target = group.pairs, orbit.members.shape[1], orbit.infimum, orbit.room
+    members, turn, target = orbit.sides[0], orbit.infimum % 2, orbit.room
+    size, length = members.shape
     if length == 0:
         return arrow
-    now, new_length = conjugate(group, orbit.members[0], length, infimum, arrow, target)
-    for position in range(len(orbit.members)):
-        initial = flipped(group, target[0], now)
+    conjugate(pairs, singles, members[0], length, orbit.infimum, arrow, target)
+    for position in range(size):
+        first, initial = singles[turn, members[position, 0]], singles[turn, target[0]]
         head, tail = pairs[arrow, initial, LEFT], pairs[arrow, initial, RIGHT]
-        first = flipped(group, orbit.members[position, 0], infimum)
-        arrow = product(group, residue(group, first, head), tail)
-        now, new_length = cycle(group, target, new_length, now)
+        arrow = np.int64(pairs[pairs[first, head, RESIDUE], tail, LEFT])
+        # Cycling keeps the infimum and the length of a member of the super summit set.
+        for place in range(1, length):
+            target[place - 1] = target[place]
+        pushed = initial
+        place = length - 1
+        while place > 0:
+            left = target[place - 1]
+            target[place] = pairs[left, pushed, RIGHT]
+            pushed = pairs[left, pushed, LEFT]
+            if pushed == left:
+                break
+            place -= 1
+        if place == 0:
+            target[0] = pushed
     return arrow
 
 
 @compiled
-def pull_back(group: Group, orbit: Orbit, arrow: int) -> int:
+def pull_back(pairs: Any, singles: Any, orbit: Orbit, arrow: int) -> Any:
     """The least arrow whose transport around the orbit the given one divides."""
-    pairs = group.pairs
-    for position in range(len(orbit.members) - 1, -1, -1):
-        member = orbit.members[position]
-        first = flipped(group, member[0], orbit.infimum)
+    sides, turn = orbit.sides, orbit.infimum % 2
+    for position in range(sides.shape[1] - 1, -1, -1):
+        first = singles[turn, sides[0, position, 0]]
         head, tail = pairs[first, arrow, LEFT], pairs[first, arrow, RIGHT]
-        one = group.singles[FLIP, residue(group, group.singles[COMPLEMENT, head], tail)]
-        other = flipped(group, arrow, orbit.infimum)
-        for place in range(1, len(member)):
-            other = residue(group, member[place], other)
-        join = product(group, one, residue(group, one, other))
-        arrow = least_summit_arrow(group, member, orbit.inverses[position], orbit.infimum, join)
+        one = singles[FLIP, pairs[singles[COMPLEMENT, head], tail, RESIDUE]]
+        other = singles[turn, arrow]
+        for place in range(1, sides.shape[2]):
+            other = pairs[sides[0, position, place], other, RESIDUE]
+        join = np.int64(pairs[one, pairs[one, other, RESIDUE], LEFT])
+        arrow = least_summit_arrow(pairs, singles, sides, position, orbit.infimum, join)
     return arrow
 
 
 @compiled
-def settle(group: Group, orbit: Orbit, arrow: int, is_forward: bool) -> Any:
+def settle(pairs: Any, singles: Any, orbit: Orbit, arrow: int, is_forward: bool) -> Any:
     """The value on the final cycle of the iteration whose index is a multiple of its length."""
     values, count = orbit.values, 0
     while True:
@@ -306,38 +305,39 @@ def settle(group: Group, orbit: Orbit, arrow: int, is_forward: bool) -> Any:
                 return values[-(-entry // length) * length]
         values[count] = arrow
         count += 1
-        arrow = transport(group, orbit, arrow) if is_forward else pull_back(group, orbit, arrow)
+        if is_forward:
+            arrow = transport(pairs, singles, orbit, arrow)
+        else:
+            arrow = pull_back(pairs, singles, orbit, arrow)
 
 
 @compiled
-def minimal_arrow(group: Group, orbit: Orbit, atom: int) -> Any:
+def minimal_arrow(pairs: Any, singles: Any, orbit: Orbit, atom: int) -> Any:
     """The least arrow that the atom divides, or 0 when it is a product of shorter ones."""
-    member, inverse = orbit.members[0], orbit.inverses[0]
-    least = least_summit_arrow(group, member, inverse, orbit.infimum, atom)
-    settled = settle(group, orbit, least, True)
-    if meet(group, atom, settled) == atom:
+    least = least_summit_arrow(pairs, singles, orbit.sides, 0, orbit.infimum, atom)
+    settled = settle(pairs, singles, orbit, least, True)
+    if pairs[atom, settled, MEET] == atom:
         return settled
     if settled != 0:
         return 0
-    settled = settle(group, orbit, settle(group, orbit, atom, False), True)
-    return settled if meet(group, atom, settled) == atom else 0
+    pulled = settle(pairs, singles, orbit, atom, False)
+    settled = settle(pairs, singles, orbit, pulled, True)
+    return settled if pairs[atom, settled, MEET] == atom else 0
 
 
 @compiled
-def orbit_of(group: Group, walked: Walked, number: int) -> Orbit:
-    """An orbit with the factors of the inverses of its members."""
-    infimum = walked.numbers[INFIMUM]
+def orbit_of(singles: Any, walked: Walked, number: int, count: int) -> Orbit:
+    """An orbit with the factors of the inverses of its members, of ``count`` simple elements."""
+    infimum, length = walked.numbers[INFIMUM], walked.members.shape[1]
     start, size = walked.orbits[number, 0], walked.orbits[number, 1]
-    members = walked.members[start : start + size]
-    length = members.shape[1]
-    inverses = np.zeros((size, length), np.uint16)
+    sides = np.empty((2, size, length), np.uint16)
     for position in range(size):
         for place in range(length):
-            complement = group.singles[COMPLEMENT, members[position, place]]
-            turned = flipped(group, complement, infimum + place + 1)
-            inverses[position, length - 1 - place] = turned
-    values = np.empty(group.pairs.shape[0] + 1, np.int64)
-    return Orbit(members, inverses, infimum, np.zeros(length + 2, np.uint16), values)
+            factor = walked.members[start + position, place]
+            turned = singles[(infimum + place + 1) % 2, singles[COMPLEMENT, factor]]
+            sides[0, position, place] = factor
+            sides[1, position, length - 1 - place] = turned
+    return Orbit(sides, infimum, np.empty(length + 2, np.uint16), np.empty(count + 1, np.int64))
 
 
 @compiled
@@ -354,24 +354,24 @@ def walk(
     work: int,
 ) -> int:
     """Walk on through the ultra summit set; FULL leaves all as before the step without room."""
-    group, walked = Group(pairs, singles), Walked(members, parents, slots, orbits, numbers)
+    walked = Walked(members, parents, slots, orbits, numbers)
     if numbers[ORBITS] == 0:
-        ending = add_orbit(group, walked, numbers[MEMBERS] - 1, cap)
+        ending = add_orbit(pairs, singles, walked, numbers[MEMBERS] - 1, cap)
         if ending != DONE:
             numbers[MEMBERS], numbers[IS_COMPLETE] = 1, 1
             return ending
     while numbers[IS_COMPLETE] and numbers[ORBIT] < numbers[ORBITS]:
-        orbit = orbit_of(group, walked, numbers[ORBIT])
+        orbit = orbit_of(singles, walked, numbers[ORBIT], len(pairs))
         while numbers[ATOM] < len(atoms):
             if numbers[MEMBERS] > cap:
                 numbers[IS_COMPLETE] = 0
                 break
             if work < 0:
                 return PAUSED
-            work -= orbit.members.size
-            arrow = minimal_arrow(group, orbit, atoms[numbers[ATOM]])
+            work -= orbit.sides.size
+            arrow = minimal_arrow(pairs, singles, orbit, atoms[numbers[ATOM]])
             if arrow != 0:
-                ending = follow(group, walked, orbit, arrow, cap)
+                ending = follow(pairs, singles, walked, orbit, arrow, cap)
                 if ending != DONE:
                     return ending
             numbers[ATOM] += 1
@@ -381,11 +381,11 @@ def walk(
 
 
 @compiled
-def follow(group: Group, walked: Walked, orbit: Orbit, arrow: int, cap: int) -> int:
+def follow(pairs: Any, singles: Any, walked: Walked, orbit: Orbit, arrow: int, cap: int) -> int:
     """Enter what the arrow leads to from the first member of an orbit, with its own, if new."""
-    numbers, length = walked.numbers, orbit.members.shape[1]
+    numbers, length = walked.numbers, orbit.sides.shape[2]
     count, is_complete = numbers[MEMBERS], numbers[IS_COMPLETE]
-    extent = conjugate(group, orbit.members[0], length, orbit.infimum, arrow, orbit.room)
+    extent = conjugate(pairs, singles, orbit.sides[0, 0], length, orbit.infimum, arrow, orbit.room)
     if extent != (orbit.infimum, length):
         return STRAYED
     slot = slot_of(walked.members, walked.slots, orbit.room)
@@ -393,7 +393,7 @@ def follow(group: Group, walked: Walked, orbit: Orbit, arrow: int, cap: int) -> 
         return DONE
     ending = FULL
     if enter(walked, slot, orbit.room, walked.orbits[numbers[ORBIT], 0], arrow):
-        ending = add_orbit(group, walked, count, cap)
+        ending = add_orbit(pairs, singles, walked, count, cap)
     if ending != DONE:
         numbers[MEMBERS], numbers[IS_COMPLETE] = count, is_complete
     return ending
