@@ -27,7 +27,9 @@ if TYPE_CHECKING:
     from braidsearch.diagrams import LinkDiagram
     from braidsearch.diagrams.polygons import polygon_diagram, read_polygons
     from braidsearch.drawing import draw_braid, draw_closure, draw_proof
+    from braidsearch.drawing.player import draw_proof_page
     from braidsearch.errors import BraidsearchError, CapacityError, InputError
+    from braidsearch.explaining import expand_certificate, explain_proof
     from braidsearch.ledger.ledger import Ledger
     from braidsearch.ledger.reading import Entry, Reading, read_entries
     from braidsearch.search.driver import compare
@@ -62,7 +64,10 @@ _HOMES: dict[str, str] = {
     "draw_braid": "drawing",
     "draw_closure": "drawing",
     "draw_proof": "drawing",
+    "draw_proof_page": "drawing.player",
+    "expand_certificate": "explaining",
     "explain_certificate": "certificates",
+    "explain_proof": "explaining",
     "find_symmetries": "search.symmetries",
     "format_certificate": "certificates",
     "format_word": "words",
@@ -101,7 +106,10 @@ __all__ = [
     "draw_braid",
     "draw_closure",
     "draw_proof",
+    "draw_proof_page",
+    "expand_certificate",
     "explain_certificate",
+    "explain_proof",
     "find_symmetries",
     "format_certificate",
     "format_word",
