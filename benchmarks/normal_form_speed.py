@@ -34,15 +34,22 @@ rest is cutting words into blocks and laying the result out.
 """
 
 import math
+import operator
+import os
 import random
 import statistics
+import subprocess
+import sys
+import tempfile
 import time
 
 import numpy as np
 
 from braidsearch.normal_form import left_normal_form
 from braidsearch.normal_form.batch import left_normal_forms
-from braidsearch.normal_form.conjugacy import conjugacy_class
+from braidsearch.normal_form.compiled_summit import compiled_summit, is_ready, is_small
+from braidsearch.normal_form.conjugacy import DEFAULT_SUMMIT_CAP, plain_summit
+from braidsearch.normal_form.left_normal_form import never
 from braidsearch.normal_form.simple_elements import _collection
 from braidsearch.words import Braid
 
@@ -98,24 +105,73 @@ def length_table() -> None:
 
 
 def class_table() -> None:
-    """Conjugacy classes of random words, with the sizes of the ultra summit sets."""
+    """Conjugacy classes of random words: both walks in turn, and the sizes of the summit sets."""
     generator = random.Random(3)
-    print("class of one word          median ms   nine in ten   median size   largest")
-    for strands, letters in ((3, 10), (4, 12), (5, 15), (6, 20), (7, 24), (8, 30)):
-        times, sizes = [], []
-        for _ in range(200 if strands < 7 else 60):
-            braid = random_braid(generator, strands, letters)
-            start = time.perf_counter()
-            sizes.append(conjugacy_class(braid).summit_size)
-            times.append(time.perf_counter() - start)
-        ninth = statistics.quantiles(times, n=10)[-1]
-        print(
-            f"  {letters} letters, {strands} strands {statistics.median(times) * 1e3:15.2f}"
-            f"{ninth * 1e3:14.2f}{statistics.median(sizes):14.0f}{max(sizes):10d}"
-        )
+    if not is_ready():
+        print("nothing is compiled here: the loops of both walks are plain")
+    print(
+        "class of one word         plain us  nine in ten  compiled us  nine in ten  ratio  of sums"
+    )
+    for strands, letters in ((3, 10), (4, 12), (4, 15), (5, 15), (6, 20), (7, 24), (8, 30)):
+        count = 200 if strands < 7 else 60
+        braids = [random_braid(generator, strands, letters) for _ in range(count)]
+        plain, compiled = walks_of(braids, is_small(strands))
+        line = f"  {letters} letters, {strands} strands {both(plain)}"
+        if compiled:
+            ratio = statistics.median(map(operator.truediv, plain, compiled))
+            line += f"{both(compiled)}{ratio:7.1f}{sum(plain) / sum(compiled):9.1f}"
+        sizes = [plain_summit(braid, DEFAULT_SUMMIT_CAP).size for braid in braids]
+        print(f"{line}   members: {statistics.median(sizes):.0f}, at most {max(sizes)}")
+
+
+def walks_of(braids: list[Braid], is_compiled: bool) -> tuple[list[float], list[float]]:
+    """For each braid the seconds of the plain and of the compiled walk, the best of three."""
+    walks = (plain_summit, compiled_summit) if is_compiled else (plain_summit,)
+    best: tuple[list[float], list[float]] = ([], [])
+    for braid in braids:
+        rounds = [
+            [
+                seconds(lambda w=walk, b=braid: w(b, DEFAULT_SUMMIT_CAP, never).least())
+                for walk in walks
+            ]
+            for _ in range(3)
+        ]
+        for column, times in zip(best, zip(*rounds, strict=True), strict=False):
+            column.append(min(times))
+    return best
+
+
+def both(times: list[float]) -> str:
+    """The median and the ninth decile, in microseconds."""
+    return (
+        f"{statistics.median(times) * 1e6:12.0f}{statistics.quantiles(times, n=10)[-1] * 1e6:13.0f}"
+    )
+
+
+def start_table() -> None:
+    """What a process pays when it has met so many members that it loads the compiled walk."""
+    print("start of the compiled walk, in processes of their own   seconds")
+    program = (
+        "import time; start = time.perf_counter()\n"
+        "from braidsearch.normal_form.compiled_summit import is_ready, ranked_tables\n"
+        "loaded = time.perf_counter(); is_ready(); ready = time.perf_counter()\n"
+        "ranked_tables(6); end = time.perf_counter()\n"
+        "print(f'{loaded - start:10.2f}{ready - loaded:10.2f}{end - ready:10.2f}')"
+    )
+    with tempfile.TemporaryDirectory() as folder:
+        for title in ("nothing kept on disk", "machine code on disk"):
+            result = subprocess.run(
+                [sys.executable, "-c", program],
+                env={**os.environ, "NUMBA_CACHE_DIR": folder},
+                capture_output=True,
+                text=True,
+                check=True,
+            )
+            print(f"  {title}: import, loops, tables of 6 strands {result.stdout.rstrip()}")
 
 
 if __name__ == "__main__":
     batch_table()
     length_table()
     class_table()
+    start_table()
