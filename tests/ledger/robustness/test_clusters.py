@@ -1,6 +1,7 @@
 """Sorting on a Dask cluster: the same ledger, and one line where there is no cluster any more."""
 
 import random
+import signal
 import time
 from collections.abc import Iterator
 from pathlib import Path
@@ -21,7 +22,7 @@ from tests.ledger.robustness.ledgers import (
     ledger_text,
     random_braid,
 )
-from tests.ledger.robustness.processes import message_of, run
+from tests.ledger.robustness.processes import finish, message_of, run, start, wait_until
 
 distributed = pytest.importorskip("distributed", reason="Dask is an extra that few install")
 
@@ -35,9 +36,9 @@ def cluster() -> Iterator[Any]:
         yield started
 
 
-def new_cluster() -> Any:
+def new_cluster(workers: int = 2) -> Any:
     return distributed.LocalCluster(
-        n_workers=2, threads_per_worker=1, processes=True, dashboard_address=None
+        n_workers=workers, threads_per_worker=1, processes=True, dashboard_address=None
     )
 
 
@@ -49,12 +50,13 @@ def sort_on(address: str, path: Path, **options: Any) -> None:
 def test_a_cluster_sorts_to_the_same_ledger(cluster: Any, life: Life, tmp_path: Path):
     """Two workers of a cluster make the very rows that one process makes."""
     path = life.copy_before(SORT, tmp_path / "ledger")
-    sort_on(cluster.scheduler_address, path, nodes=0)
+    outcome = run("sort", str(path), *SORT.command, "--scheduler", cluster.scheduler_address)
+    assert outcome.status == 3
     assert ledger_text(path) == life.text_after[SORT.name]
 
 
 @pytest.mark.slow
-@pytest.mark.parametrize("stage", STAGES[1:], ids=lambda stage: stage.name)
+@pytest.mark.parametrize("stage", STAGES[2:], ids=lambda stage: stage.name)
 def test_a_cluster_makes_the_same_rows_at_every_stage(
     stage: Stage, cluster: Any, life: Life, tmp_path: Path
 ):
@@ -111,6 +113,20 @@ def test_the_command_refuses_such_an_address_and_ends(life: Life, tmp_path: Path
     outcome = run("sort", str(path), "--scheduler", "tcp://127.0.0.1")
     assert outcome.status == 2
     assert "tcp://127.0.0.1" in message_of(outcome)
+
+
+@pytest.mark.slow
+@pytest.mark.parametrize("number", [signal.SIGINT, signal.SIGTERM])
+def test_a_sort_that_waits_for_workers_can_be_interrupted(number: int, life: Life, tmp_path: Path):
+    """A cluster may have no workers yet; who does not want to wait for them presses Ctrl-C."""
+    path = life.copy_before(SORT, tmp_path / "ledger")
+    with new_cluster(workers=0) as empty:
+        process = start("sort", str(path), "--scheduler", empty.scheduler_address)
+        wait_until(lambda: bool(empty.scheduler.tasks), "nothing is asked of the cluster")
+        process.send_signal(number)
+        outcome = finish(process)
+    assert outcome.status == 130
+    assert "interrupted" in message_of(outcome)
 
 
 @pytest.mark.slow
