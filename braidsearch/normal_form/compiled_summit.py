@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from functools import cache
+from itertools import chain
 from typing import Any
 
 import numpy as np
@@ -13,7 +14,7 @@ from braidsearch import compiling
 from braidsearch.errors import OutOfTimeError
 from braidsearch.normal_form import summit_kernel as kernel
 from braidsearch.normal_form.found_summit import ClassKey, FoundSummit, Letters, PlainSummit
-from braidsearch.normal_form.left_normal_form import ShouldStop, element_word, never
+from braidsearch.normal_form.left_normal_form import ShouldStop, never
 from braidsearch.normal_form.pair_tables import LARGEST_TABLE
 from braidsearch.normal_form.ranked_tables import FLIP, RankedTables, ranked_tables
 from braidsearch.normal_form.row_table import fill_slots, least_row
@@ -99,20 +100,33 @@ class CompiledSummit:
 
     def iter_members(self) -> Iterator[tuple[Braid, Letters]]:
         """The members in the order in which they were met, each with a conjugator."""
-        tables, parents = self.tables, self.parents.tolist()
+        parents = self.parents.tolist()
+        before, spellings, after = self._spellings()
         for number, row in enumerate(self.members.tolist()):
-            factors = tuple(tables.names[factor] for factor in row)
-            word = element_word(tables.elements, (self.infimum, factors))
-            yield Braid.trusted(word, tables.strands), self._conjugator_to(number, parents)
+            factors = chain.from_iterable(map(tuple.__getitem__, spellings, row))
+            word = (*before, *factors, *after)
+            yield Braid.trusted(word, self.tables.strands), self._conjugator_to(number, parents)
+
+    def _spellings(self) -> tuple[Letters, list[tuple[Letters, ...]], Letters]:
+        """How members are spelled, as ``element_word`` does: a start, words by place, an end.
+
+        Negative powers of delta are worked into the first factors; one that still has k of them
+        before it is flipped by all but its own.
+        """
+        tables, length = self.tables, self.members.shape[1]
+        half_twist = tables.words[-1]
+        waiting = range(-self.infimum, -self.infimum - length, -1)
+        spellings = [tables.undoing[(k - 1) % 2] if k > 0 else tables.words for k in waiting]
+        surplus = max(-self.infimum - length, 0)
+        return half_twist * max(self.infimum, 0), spellings, tables.undoing[0][0] * surplus
 
     def _conjugator_to(self, number: int, parents: list[list[int]]) -> Letters:
         path = []
         while number:
             number, by = parents[number]
             path.append(by)
-        words = self.tables.words
         conjugators = (*self.to_summit, *reversed(path))
-        return tuple(letter for by in conjugators for letter in words[by])
+        return tuple(chain.from_iterable(map(self.tables.words.__getitem__, conjugators)))
 
 
 def _read(tables: RankedTables, word: Letters, should_stop: ShouldStop) -> tuple[int, Any]:

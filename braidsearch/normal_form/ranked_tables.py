@@ -20,6 +20,9 @@ LEFT, RIGHT, MEET, RESIDUE = range(4)
 SAME, FLIP, COMPLEMENT = range(3)
 
 
+Letters = tuple[int, ...]
+
+
 @dataclass(frozen=True)
 class RankedTables:
     """Simple elements named by their place among all permutations in lexicographic order.
@@ -28,12 +31,14 @@ class RankedTables:
     shape (n!, n!, 4), holds the left-weighted pair of a and b, their greatest common left divisor,
     and the least r such that b divides a * r. ``singles``, shape (3, n!), holds a, its conjugate
     by delta (so the one by delta^k at [k % 2, a]), and the c with a * c = delta. ``words`` are
-    shortest positive words, and ``elements`` knows the element a by ``names[a]``.
+    shortest positive words; ``undoing[k % 2]`` are words for delta^-1 times the conjugate of a by
+    delta^k. ``elements`` knows the element a by ``names[a]``.
     """
 
     strands: int
     permutations: tuple[Permutation, ...]
-    words: tuple[tuple[int, ...], ...]
+    words: tuple[Letters, ...]
+    undoing: tuple[tuple[Letters, ...], ...]
     elements: SimpleElements
     names: tuple[int, ...]
     atoms: Any
@@ -60,16 +65,23 @@ def ranked_tables(strands: int) -> RankedTables:
     fill_weighted(pairs, order, without_first, with_last, starts, finishes)
     fill_meets(pairs, order, without_first, starts)
     fill_residues(pairs, order, without_first, starts, singles, rank(inverse))
+    words = tuple(elements.word(name) for name in names)
     return RankedTables(
         strands=strands,
         permutations=ordered,
-        words=tuple(elements.word(name) for name in names),
+        words=words,
+        undoing=tuple(_undoing(words, singles[COMPLEMENT][turned]) for turned in singles[:2]),
         elements=elements,
         names=names,
         atoms=atoms,
         pairs=pairs,
         singles=singles.astype(np.uint16),
     )
+
+
+def _undoing(words: tuple[Letters, ...], complements: Any) -> tuple[Letters, ...]:
+    """Words for delta^-1 * a, the inverse of the complement of a."""
+    return tuple(tuple(-letter for letter in reversed(words[c])) for c in complements.tolist())
 
 
 def _swapped(table: Any) -> Any:
