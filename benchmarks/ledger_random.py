@@ -5,10 +5,10 @@ Run: python -m benchmarks.ledger_random [--entries 100000] [--processes 2] [--fi
 
 Seeded random words on 3 to 6 strands, of 6 to 20 letters. The rate is printed for each tenth of
 the sorting; memory is the most that the process and its workers held at one time, from the
-operating system. ``find`` is asked for longer random words, of 22 to 30 letters, as a command from start to exit:
-status 1 says that the invariants told the link from every class. Exits with status 1 when a tenth
-is sorted below 300 entries a second, when memory reaches 2 GiB, or when the median find that the
-invariants decide takes 0.5 s.
+operating system. ``find`` is asked for longer random words, of 22 to 30 letters, as a command from
+start to exit: status 1 says that the invariants told the link from every class. Exits with status
+1 when a tenth is sorted below 300 entries a second, when memory reaches 2 GiB, or when the median
+find that the invariants decide takes 0.5 s.
 
 Measured on two shared cores:
 
