@@ -20,7 +20,9 @@ from tests.ledger.robustness.processes import (
 )
 
 SORT, IMAGES, RETRY = STAGES[1:]
-INTERRUPTED = 130
+INTERRUPTED = {130, -signal.SIGINT}
+"""A shell calls both 130. Python ends itself by the signal when it came inside an ``exec``, such as
+those of dataclasses that are being imported."""
 
 
 def carry_out_interrupted(
@@ -66,7 +68,7 @@ def test_ctrl_c_ends_the_command_in_one_line_and_leaves_no_process(life: Life, t
     os.killpg(process.pid, signal.SIGINT)
     outcome = finish(process)
     wait_until(lambda: not members(process.pid), "processes are left behind")
-    assert outcome.status == INTERRUPTED
+    assert outcome.status in INTERRUPTED
     assert "interrupted" in message_of(outcome)
     assert is_intact(path)
     with Ledger(path) as ledger:
@@ -82,7 +84,7 @@ def test_a_sort_that_is_told_to_end_leaves_a_ledger_and_no_process(life: Life, t
     process.send_signal(signal.SIGTERM)
     outcome = finish(process)
     wait_until(lambda: not members(process.pid), "processes are left behind")
-    assert outcome.status == INTERRUPTED
+    assert outcome.status in INTERRUPTED
     assert "interrupted" in message_of(outcome)
     assert is_intact(path)
     with Ledger(path) as ledger:
