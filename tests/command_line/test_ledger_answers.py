@@ -145,7 +145,7 @@ def test_undecided_says_how_to_go_on(run: Runner, marsh: str, tmp_path: Path) ->
     assert outcome.status == 3
     assert outcome.output.startswith("undecided: neither sameness with a class nor difference")
     assert "class 1, reed (marsh): " in outcome.output
-    assert f"braidsearch ledger find {marsh} '4: 1 2 1 1 1 2' --nodes 2000" in outcome.output
+    assert f"braidsearch ledger find {marsh} '4: 1 2 1 1 1 2' --nodes 1000" in outcome.output
     assert "braidsearch compare '4: 1 2 1 1 1 2' '3: 1 1 1 1 1'" in outcome.output
     assert "certificate: none" in outcome.output
     assert not proof.exists()
@@ -204,7 +204,7 @@ def test_an_open_question_is_no_proof(run: Runner, tmp_path: Path) -> None:
     assert outcome.status == 3
     assert outcome.output.startswith("undecided: the ledger holds no proof")
     assert "tried with 0 nodes: " in outcome.output
-    assert f"to go on: braidsearch ledger sort {path} --nodes 2000" in outcome.output
+    assert f"to go on: braidsearch ledger sort {path} --nodes 1000" in outcome.output
     found = run("ledger", "proof", path, "rush", "reed", "--json").json
     assert found["tried"] == {"nodes": 0, "max_strands": None}
     image = run("ledger", "proof", path, "rush", "#1", "--up-to", "any")

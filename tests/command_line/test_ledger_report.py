@@ -148,7 +148,7 @@ def test_open_questions_are_listed(run: Runner, tmp_path: Path) -> None:
     assert outcome.status == 0
     assert "open questions: 1" in outcome.output
     assert "  reed (marsh) and rush (marsh): tried with 0 nodes: " in outcome.output
-    assert f"to try them again: braidsearch ledger sort {path} --nodes 2000" in outcome.output
+    assert f"to try them again: braidsearch ledger sort {path} --nodes 1000" in outcome.output
     (question,) = run("ledger", "report", path, "--json").json["open_questions"]
     assert question["tried"] == {"nodes": 0, "max_strands": None}
     assert question["symmetry"] == "identity"

@@ -76,7 +76,7 @@ def test_open_questions_are_status_three(run: Runner, tmp_path: Path) -> None:
     assert "open questions: 1" in outcome.output
     (line,) = [line for line in outcome.output.splitlines() if line.startswith("to go on: ")]
     assert "'\"'\"'s open.ledger'" in line  # as a shell takes it
-    assert line.endswith("--nodes 2000")
+    assert line.endswith("--nodes 1000")
     again = run("ledger", "sort", str(path), "--nodes", "500")
     assert again.status == 0
     assert "tried again: 1 question, 1 settled" in again.output
