@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import os
 import sqlite3
+import time
 from collections.abc import Iterator
 from contextlib import contextmanager
 
@@ -14,6 +15,8 @@ APPLICATION = 0x42726C64
 
 VERSION = 1
 """The version of the tables, also in the head."""
+
+_PAUSE_SECONDS = 0.02
 
 WAIT_SECONDS = 60.0
 """How long a writer waits for another one to finish."""
@@ -109,11 +112,28 @@ def connect(path: str | os.PathLike[str], *, create: bool) -> sqlite3.Connection
         connection = sqlite3.connect(name, timeout=WAIT_SECONDS, isolation_level=None)
     try:
         with readable(name):
-            _set_up(connection, name, create)
+            _set_up_in_turn(connection, name, create)
     except BaseException:
         connection.close()
         raise
     return connection
+
+
+def _set_up_in_turn(connection: sqlite3.Connection, name: str, create: bool) -> None:
+    """Set the connection up; wait where another process makes the ledger or closes it just now.
+
+    SQLite does not wait by itself for the change of the kind of journal, nor for a recovery.
+    """
+    give_up = time.monotonic() + WAIT_SECONDS
+    while True:
+        try:
+            _set_up(connection, name, create)
+            return
+        except sqlite3.OperationalError as error:
+            is_busy = "locked" in str(error) or "busy" in str(error)
+            if not is_busy or time.monotonic() > give_up:
+                raise
+            time.sleep(_PAUSE_SECONDS)
 
 
 def _check_length(connection: sqlite3.Connection, name: str) -> None:
