@@ -5,10 +5,13 @@ from __future__ import annotations
 from dataclasses import replace
 from typing import NamedTuple
 
-from braidsearch.certificates import Certificate, Distinction
+from braidsearch.certificates import Certificate, Distinction, format_certificate
+from braidsearch.errors import CapacityError
 from braidsearch.moves import Move
 from braidsearch.moves.elementary_expansion import Stage, expand_moves
 from braidsearch.moves.elementary_steps import ElementaryStep
+
+_LARGEST_FILE = 16_000_000  # bytes of a certificate file, which are its characters
 
 
 class Expansion(NamedTuple):
@@ -34,7 +37,7 @@ def expand_certificate(certificate: Certificate) -> Expansion:
     if certificate.verdict == "same":
         stages = expand_moves(certificate.left, certificate.moves)
         expanded = replace(certificate, moves=tuple(move for _, move in stages))
-        return Expansion(expanded, tuple(step for step, _ in stages))
+        return _checked(Expansion(expanded, tuple(step for step, _ in stages)))
     distinctions = []
     steps: list[ElementaryStep] = []
     for distinction in certificate.distinctions:
@@ -43,7 +46,17 @@ def expand_certificate(certificate: Certificate) -> Expansion:
         distinctions.append(_with_moves(distinction, left, right))
         steps += [step for step, _ in (*left, *right)]
     expanded = replace(certificate, distinctions=tuple(distinctions))
-    return Expansion(expanded, tuple(steps))
+    return _checked(Expansion(expanded, tuple(steps)))
+
+
+def _checked(expansion: Expansion) -> Expansion:
+    """The expansion, unless its file would be larger than any verifier reads."""
+    size = len(format_certificate(expansion.certificate))
+    if size > _LARGEST_FILE:
+        raise CapacityError(
+            f"elementary steps of {size} bytes: expected at most {_LARGEST_FILE}, as a file holds"
+        )
+    return expansion
 
 
 def _with_moves(distinction: Distinction, left: list[Stage], right: list[Stage]) -> Distinction:

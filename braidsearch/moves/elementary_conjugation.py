@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
+from functools import partial
 
 from braidsearch.errors import InputError
 from braidsearch.moves.elementary_handles import reduce_chain_handles
@@ -37,6 +38,9 @@ _LONG = 300
 _MOST_GROWTH = 60
 """By so many letters a word may grow before a shorter one for the same element is looked for."""
 
+_MANY_PARTS = 1_000
+"""Beyond so many, keeping words shorter is tried too, and what has fewer letters is taken."""
+
 _WORTH_IT = 0.6
 """The part of its length to which the other must come down to be taken."""
 
@@ -57,24 +61,36 @@ def conjugate_parts(word: Letters, by: Letters, target: Letters, strands: int) -
     if rotation is not None:
         return _rotate(word, rotation)
     waiting = _short_conjugator(word, by, strands)
-    there = _conjugate_by_letters(word, waiting, target, strands)
+    there = _conjugate_by_letters(word, waiting, target, strands, _MOST_GROWTH)
+    if len(there) > _MANY_PARTS:
+        closer = _conjugate_by_letters(word, waiting, target, strands, _MOST_GROWTH // 4)
+        return min(there, closer, key=partial(_count_letters, word))
     if len(word) + len(waiting) + len(target) > _MOST_LETTERS_FOR_BOTH:
         return there
-    back = _conjugate_by_letters(target, _inverse(waiting), word, strands)
+    back = _conjugate_by_letters(target, _inverse(waiting), word, strands, _MOST_GROWTH)
     return there if len(there) <= len(back) else _reversed_parts(back, len(word))
 
 
+def _count_letters(word: Letters, parts: list[Part]) -> int:
+    """How many letters all words have together that the parts lead to."""
+    letters, length = 0, len(word)
+    for part in parts:
+        length += 2 if isinstance(part, int) else len(part.after) - len(part.before)
+        letters += length
+    return letters
+
+
 def _conjugate_by_letters(
-    word: Letters, waiting: Letters, target: Letters, strands: int
+    word: Letters, waiting: Letters, target: Letters, strands: int, growth: int
 ) -> list[Part]:
     """Conjugate by one letter after the other, taking away between them what cancels cheaply.
 
-    A word that has grown much is exchanged for the shortest that is seen for its element, since
-    every later step is one on all its letters.
+    A word that has grown by more letters than ``growth`` is exchanged for the shortest that is seen
+    for its element, since every later step is one on all its letters.
     """
     parts: list[Part] = []
     letters = 0
-    bound = max(len(word), len(target)) + _MOST_GROWTH
+    bound = max(len(word), len(target)) + growth
     while waiting:
         letters += len(word)
         check_capacity(len(parts), letters)
@@ -89,7 +105,7 @@ def _conjugate_by_letters(
             if len(shorter) < _WORTH_IT * len(word):
                 parts += rewrite_relations(word, shorter)
                 word = shorter
-            bound = len(word) + _MOST_GROWTH
+            bound = len(word) + growth
     return parts + rewrite_relations(word, target)
 
 
