@@ -17,9 +17,17 @@ Source of the words, codes and symmetry types: the package ``database-knotinfo``
 A. H. Moore, KnotInfo). Exits with status 1 when a class holds two knots, when an invertible knot
 has two classes, when a group is not one knot, or when the check finds a fault.
 
-Measured on two shared cores:
+Measured on two shared cores, with --crossings 10:
 
-    TABLE
+    entered: 996
+    open after 26 s: 0
+    sorted in 26 s, open ones again in 0 s, images in 9 s, checked in 2 s
+    knots 249, classes 249, groups 249
+    proofs 1289, values 1743, faults 0
+    undecided 0
+
+All knots to 12 crossings were not sorted to the end yet: 5,120 of 11,889 words took 300 s of
+processor time on each core, beside others, and left 68 questions open at 2,000 nodes.
 """
 
 from __future__ import annotations

@@ -12,7 +12,23 @@ find that the invariants decide takes 0.5 s.
 
 Measured on two shared cores:
 
-    TABLE
+    entered in 5.2 s
+      10240 entries,   1603 classes,    2 undecided:   334 a second
+      20480 entries,   2613 classes,    8 undecided:   391 a second
+      30720 entries,   3424 classes,   12 undecided:   377 a second
+      40960 entries,   4159 classes,   17 undecided:   316 a second
+      51200 entries,   4785 classes,   22 undecided:   302 a second
+      61440 entries,   5374 classes,   31 undecided:   296 a second
+      71680 entries,   5917 classes,   37 undecided:   352 a second
+      81920 entries,   6464 classes,   46 undecided:   277 a second
+      92160 entries,   6986 classes,   55 undecided:   227 a second
+    sorted in 330 s
+    memory at most 1106 MiB, file 116 MiB
+    find, by invariants: 23, median 0.41 s, at most 0.58 s
+    find, same, or searched for: 37, median 0.42 s, at most 2.45 s
+
+So the bound of 300 is kept on the whole (303) and missed by the last tenths: the open questions, a
+few seconds each, are what slows them.
 """
 
 from __future__ import annotations
