@@ -27,8 +27,9 @@ Measured on two shared cores, with --crossings 10:
     undecided 0
 
 With --crossings 11: 801 knots, 801 classes; 19 questions were open after 136 s, and none after they
-were asked again with 50,000 nodes. All knots to 12 crossings were not sorted to the end yet: 5,120 of 11,889 words took 300 s of
-processor time on each core, beside others, and left 68 questions open at 2,000 nodes.
+were asked again with 50,000 nodes. All knots to 12 crossings were not sorted to the end yet: 5,120
+of 11,889 words took 300 s of processor time on each core, beside others, and left 68 questions
+open at 2,000 nodes.
 """
 
 from __future__ import annotations
