@@ -60,7 +60,7 @@ class Orbit(NamedTuple):
 
 
 @compiled
-def push(pairs: Any, factors: Any, first: int, last: int, factor: int) -> tuple[int, int]:
+def push(pairs: Any, factors: Any, first: int, last: int, factor: Any) -> tuple[int, int]:
     """Multiply the factors at first .. last - 1 on the right; the new first and last.
 
     A delta that comes out in front is left behind: ``first`` is then greater by one.
@@ -99,14 +99,14 @@ def read_letters(
             numbers[INFIMUM] -= 1
             complement = singles[COMPLEMENT, atoms[-letter - 1]]
             factor = singles[(numbers[TURNS] + 1) % 2, complement]
-        first, last = push(pairs, factors, first, last, factor)
+        first, last = push(pairs, factors, first, last, np.int64(factor))
         numbers[INFIMUM] += first - before
     numbers[FIRST], numbers[LAST] = first, last
 
 
 @compiled
 def conjugate(
-    pairs: Any, singles: Any, factors: Any, length: int, infimum: int, by: int, result: Any
+    pairs: Any, singles: Any, factors: Any, length: int, infimum: int, by: Any, result: Any
 ) -> tuple[int, int]:
     """by^-1 * element * by in ``result``, which is longer by two; the infimum and the length."""
     for place in range(length):
@@ -135,7 +135,8 @@ def cycle(pairs: Any, singles: Any, factors: Any, length: int, infimum: int) -> 
     """Cycling in place, with room for one factor more; the infimum and the length."""
     if length == 0:
         return infimum, length
-    first, last = push(pairs, factors, 1, length, singles[infimum % 2, factors[0]])
+    initial = np.int64(singles[infimum % 2, factors[0]])
+    first, last = push(pairs, factors, 1, length, initial)
     for place in range(first, last):
         factors[place - first] = factors[place]
     return infimum + first - 1, last - first
@@ -162,7 +163,7 @@ def slide(
         if length == 0:
             return DONE
         initial = singles[infimum % 2, trail[last, 0]]
-        prefix = pairs[initial, singles[COMPLEMENT, trail[last, length - 1]], MEET]
+        prefix = np.int64(pairs[initial, singles[COMPLEMENT, trail[last, length - 1]], MEET])
         if prefix == 0:
             return DONE
         if last + 1 == len(trail):
@@ -179,7 +180,7 @@ def slide(
 
 
 @compiled
-def enter(walked: Walked, slot: int, row: Any, parent: int, by: int) -> bool:
+def enter(walked: Walked, slot: int, row: Any, parent: int, by: Any) -> bool:
     """Enter a new member, reached from ``parent``, at its slot; False when there is no room."""
     count = walked.numbers[MEMBERS]
     if count == len(walked.members):
@@ -202,7 +203,7 @@ def add_orbit(pairs: Any, singles: Any, walked: Walked, start: int, cap: int) ->
         row[place] = members[start, place]
     size = 1
     while length > 0:
-        by = singles[infimum % 2, row[0]]
+        by = np.int64(singles[infimum % 2, row[0]])
         if cycle(pairs, singles, row, length, infimum) != (infimum, length):
             return STRAYED
         if is_same(row, members[start], length):
