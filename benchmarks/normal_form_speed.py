@@ -2,11 +2,13 @@
 
 Run: python -m benchmarks.normal_form_speed
 
-Three tables. Batch: 10,000 random words of 40 letters on 5 strands, as one array and one by one in
+Four tables. Batch: 10,000 random words of 40 letters on 5 strands, as one array and one by one in
 the same run, so that the ratio holds on a noisy machine. Long words: one random word on 20
 strands, with nothing remembered from the one before; the last column is the growth exponent
 between neighbouring lengths, which must not exceed 2. Classes: the canonical representative of a
-random word's conjugacy class.
+random word's conjugacy class, each by the plain and by the compiled walk in turn, the better of
+three rounds each; the ratios are the median of all and that of the sums. Start: what a process
+pays for the compiled walk, on a machine that has it and on one that has to compile it once.
 
 Measured on two shared cores, CPython 3.11, NumPy 2.4:
 
@@ -20,13 +22,23 @@ Measured on two shared cores, CPython 3.11, NumPy 2.4:
         2500 letters             0.305   0.87
         5000 letters             0.715   1.23
        10000 letters             1.519   1.09
-    class of one word          median ms   nine in ten   median size   largest
-      10 letters, 3 strands            0.05          0.12             4        16
-      12 letters, 4 strands            0.12          0.22             8        32
-      15 letters, 5 strands            0.28          0.78            12       140
-      20 letters, 6 strands            0.69          2.35            16      1080
-      24 letters, 7 strands            1.86          5.60            19      2004
-      30 letters, 8 strands            2.63         19.86            18      2004
+
+and, of the classes and the start, with the cores shared by four other processes:
+
+    class of one word         plain us  nine in ten  compiled us  nine in ten  ratio  of sums
+      10 letters, 3 strands           90          220          28           33    3.0      3.7
+      12 letters, 4 strands          180          387          31           45    5.8      6.5
+      15 letters, 4 strands          215          461          33           50    6.3      7.2
+      15 letters, 5 strands          372         1139          53          108    7.8      9.2
+      20 letters, 6 strands          702         2378          96          247    7.8     12.1
+      24 letters, 7 strands         1034        82242
+      30 letters, 8 strands          986         4416
+    start of the compiled walk, in processes of their own   seconds
+      nothing kept on disk: import, loops, tables of 6 strands       0.47     12.45      0.02
+      machine code on disk: import, loops, tables of 6 strands       0.51      0.27      0.02
+
+The median summit has 4 to 18 members, the largest 16, 32, 48, 96, 544 and, on 7 and 8 strands,
+the cap. Some 20 us of a compiled class are calls and arrays around the loops, whatever its size.
 
 The batch does 1.8 million left-weightings, 176 a word, in about 6 ms: two table look-ups and an
 addition each, near the rate at which NumPy gathers from a table in cache (0.5 ns an entry). The
