@@ -38,7 +38,7 @@ _LONG = 300
 _MOST_GROWTH = 60
 """By so many letters a word may grow before a shorter one for the same element is looked for."""
 
-_MANY_PARTS = 1_000
+_MANY_PARTS = 2_000
 """Beyond so many, keeping words shorter is tried too, and what has fewer letters is taken."""
 
 _WORTH_IT = 0.6
