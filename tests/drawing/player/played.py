@@ -6,7 +6,7 @@ import json
 from pathlib import Path
 from typing import Any
 
-from tests.drawing.player.driven_browser import DrivenBrowser
+from tests.drawing.browser import DrivenBrowser
 from tests.drawing.svg_reader import Picture, read_picture
 
 _CLOCK = """

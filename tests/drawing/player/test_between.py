@@ -12,7 +12,7 @@ from braidsearch.invariants.jones import jones_polynomial
 from braidsearch.moves import Conjugate, Rewrite
 from braidsearch.normal_form import are_equal
 from braidsearch.words import Braid
-from tests.drawing.player.driven_browser import DrivenBrowser
+from tests.drawing.browser import DrivenBrowser
 from tests.drawing.player.played import PlayedPage, Strands, picture_of
 from tests.drawing.player.proofs import RELATIONS, accepted, random_proof
 from tests.drawing.svg_reader import Picture

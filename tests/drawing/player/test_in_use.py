@@ -9,7 +9,7 @@ import pytest
 
 from braidsearch.drawing.player import draw_proof_page
 from tests.certificates.test_file_format import DIFFERENT, SAME
-from tests.drawing.player.driven_browser import DrivenBrowser
+from tests.drawing.browser import DrivenBrowser
 from tests.drawing.player.played import SLIDE, PlayedPage
 from tests.drawing.player.proofs import accepted, random_proof
 

@@ -20,7 +20,7 @@ from braidsearch.drawing.strand_paths import (
 from braidsearch.drawing.svg import format_path
 from braidsearch.moves.markov import stated_result
 from braidsearch.words import Braid
-from tests.drawing.player.driven_browser import DrivenBrowser
+from tests.drawing.browser import DrivenBrowser
 from tests.drawing.player.played import PlayedPage, Strands
 from tests.drawing.player.proofs import RELATIONS, accepted, random_proof
 

@@ -1,11 +1,10 @@
-"""One browser for all tests of the page, since it takes a while to start."""
+"""One browser for all tests that look with it, since it takes a while to start."""
 
 from collections.abc import Iterator
 
 import pytest
 
-from tests.drawing.browser import CHROMIUM
-from tests.drawing.player.driven_browser import DrivenBrowser
+from tests.drawing.browser import CHROMIUM, DrivenBrowser
 
 
 @pytest.fixture(scope="session")
