@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Sequence
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
 from itertools import pairwise
 
@@ -38,6 +38,9 @@ DIRECTIONS = ("down", "right")
 
 _NUMBER_ROOM = 22.0
 _LETTER_ROOM = 22.0
+_LETTER_MARGIN = 3.5
+"""Between a letter and the edge of the mark around it."""
+
 _OVERHANG = 8.0
 _LEVELS_DOWNWARDS = 22
 """How many levels a picture that runs downwards has before it goes on beside."""
@@ -106,9 +109,10 @@ def closure_part(braid: Braid, options: Options) -> Part:
     frame = (*frame[:3], frame[3] + MARGIN)
     width, height, place = _placement(frame, options)
     placed = geometry.mapped(place)
-    texts = [*_number_beside(placed, options), *_letters(placed, options)]
-    boxes = tuple(_boxes(geometry, options, place))
-    return Part(width, height, (placed,), boxes, texts=tuple(texts))
+    letters = _letters(placed, options)
+    texts = (*_number_beside(placed, options), *letters.values())
+    boxes = tuple(_boxes(geometry, options, place, letters))
+    return Part(width, height, (placed,), boxes, texts=texts)
 
 
 def _edges(marks: Sequence[Mark]) -> set[int]:
@@ -150,8 +154,10 @@ def _piece_part(
     placed = geometry.mapped(place)
     ends = ((placed.tops, number > 0), (placed.bottoms, number < count - 1))
     lines = tuple(_hairline(points, is_cut, options) for points, is_cut in ends)
-    texts = (*_number_in_front(placed, options), *_letters(placed, options))
-    part = Part(width, height, (placed,), tuple(_boxes(geometry, options, place)), lines, texts)
+    letters = _letters(placed, options)
+    texts = (*_number_in_front(placed, options), *letters.values())
+    boxes = tuple(_boxes(geometry, options, place, letters))
+    part = Part(width, height, (placed,), boxes, lines, texts)
     return part if count == 1 else _headed(part, f"part {number + 1} of {count}")
 
 
@@ -199,32 +205,48 @@ def _number_beside(placed: Geometry, options: Options) -> list[Text]:
     ]
 
 
-def _letters(placed: Geometry, options: Options) -> list[Text]:
-    """Each letter in the wedge of its crossing on the side of the higher positions."""
+def _letters(placed: Geometry, options: Options) -> dict[int, Text]:
+    """By its number each letter, in the wedge of its crossing on the side of higher positions."""
     if not options.has_letters:
-        return []
-    texts = []
+        return {}
+    texts = {}
     for crossing in placed.crossings:
         x, y = crossing.meeting
         content = str(crossing.letter).replace("-", "\N{MINUS SIGN}")
         if options.is_downwards:
-            texts.append(Text((x + 9.5, y + 3.4), content, 9.5))
+            texts[crossing.number] = Text((x + 9.5, y + 3.4), content, 9.5)
         else:
-            texts.append(Text((x, y - STRAND_SPACING / 2 - 4.5), content, 9.5, "middle"))
+            place = (x, y - STRAND_SPACING / 2 - 4.5)
+            texts[crossing.number] = Text(place, content, 9.5, "middle")
     return texts
 
 
-def _boxes(geometry: Geometry, options: Options, place: Callable[[Point], Point]) -> list[Box]:
+def _boxes(
+    geometry: Geometry,
+    options: Options,
+    place: Callable[[Point], Point],
+    letters: Mapping[int, Text],
+) -> list[Box]:
     """The bands and frames of the marks, as far as their letters stand in this geometry."""
     boxes = []
+    side, end = STRAND_SPACING / 2 + 7.0, LEVEL_HEIGHT / 2 - 1.5
     for mark in options.marks:
-        centres = [
-            each.centre for each in geometry.crossings if mark.first <= each.number < mark.last
-        ]
-        if centres:
-            across, along = [x for x, _ in centres], [y for _, y in centres]
-            side, end = STRAND_SPACING / 2 + 7.0, LEVEL_HEIGHT / 2 - 1.5
-            outer = side + (8.0 if options.has_letters else 0.0)
-            bounds = (min(across) - side, min(along) - end, max(across) + outer, max(along) + end)
-            boxes.append(Box(map_rectangle(bounds, place), mark.is_frame))
+        marked = [each for each in geometry.crossings if mark.first <= each.number < mark.last]
+        around = [_grown((*each.centre, *each.centre), side, end) for each in marked]
+        labels = [letters[each.number].bounds for each in marked if each.number in letters]
+        rectangles = [map_rectangle(each, place) for each in around]
+        rectangles += [_grown(each, _LETTER_MARGIN, _LETTER_MARGIN) for each in labels]
+        if rectangles:
+            boxes.append(Box(_hull(rectangles), mark.is_frame))
     return boxes
+
+
+def _grown(bounds: Rectangle, across: float, along: float) -> Rectangle:
+    left, top, right, bottom = bounds
+    return left - across, top - along, right + across, bottom + along
+
+
+def _hull(rectangles: Sequence[Rectangle]) -> Rectangle:
+    """The least rectangle around all of them."""
+    lefts, tops, rights, bottoms = zip(*rectangles, strict=True)
+    return min(lefts), min(tops), max(rights), max(bottoms)

@@ -21,7 +21,6 @@ from braidsearch.drawing.levels import check_size
 from braidsearch.drawing.palette import QUIET
 from braidsearch.drawing.sheet import (
     COMFORTABLE_WIDTH,
-    MARGIN,
     Part,
     Sheet,
     below,
@@ -76,7 +75,7 @@ def draw_proof(  # noqa: PLR0913 - each is one choice about the picture
     if most_stages is not None and most_stages < 2:
         raise InputError(f"{most_stages} stages: expected at least 2, the first and the last")
     writer = _SheetWriter(Options(direction, has_letters), most_stages)
-    part = below([*writer.iter_parts(certificate), Part(0.0, MARGIN)], _SPACE)
+    part = below([Part(0.0, 0.0), *writer.iter_parts(certificate), Part(0.0, 0.0)], _SPACE)
     title = f"Proof that two braids close to {_claimed(certificate)}"
     words = f"Left: {describe_word(certificate.left)} Right: {describe_word(certificate.right)}"
     description = f"{words}\n{explain_certificate(certificate, most_stages)}"

@@ -26,7 +26,7 @@ from tests.drawing.layout import do_overlap, is_inside, iter_rectangles, text_re
 from tests.drawing.svg_reader import SVG, Picture, read_picture
 from tests.knot_tables import iter_knots, iter_links
 from tests.scrambles import scramble
-from tests.strategies import move_chains
+from tests.strategies import braids, move_chains
 
 VERIFIER_CASES = [
     file
@@ -36,12 +36,33 @@ VERIFIER_CASES = [
 ]
 
 
+LETTER_SIZE = 9.5
+
+
 def certificate_of(chain: MoveChain) -> Certificate:
     return Certificate.same(chain.start, chain.current, "identity", chain.moves)
 
 
+def check_marks(picture: Picture) -> None:
+    """The edge of no mark comes near the letter of a crossing, inside or outside of it."""
+    letters = [
+        (content, (left - 2.5, top - 2.5, right + 2.5, bottom + 2.5))
+        for (content, (left, top, right, bottom)), (_, _, size, _) in zip(
+            text_rectangles(picture), picture.texts, strict=True
+        )
+        if size == LETTER_SIZE
+    ]
+    marks = [element for element in picture.root.iter(f"{SVG}rect") if "x" in element.attrib]
+    for mark in marks:
+        x, y, width, height = (float(mark.attrib[name]) for name in ("x", "y", "width", "height"))
+        edges = (x, y, x + width, y + height)
+        for content, room in letters:
+            assert is_inside(room, edges) or not do_overlap(room, edges), content
+
+
 def check_layout(picture: Picture) -> None:
-    """Nothing is cut off, and no two texts overlap."""
+    """Nothing is cut off, no two texts overlap, and marks keep clear of letters."""
+    check_marks(picture)
     page = view_box(picture)
     assert all(is_inside(rectangle, page) for rectangle in iter_rectangles(picture))
     texts = sorted(text_rectangles(picture), key=lambda pair: pair[1][1])
@@ -100,6 +121,16 @@ def test_colours_stay_with_their_components(chain: MoveChain) -> None:
         assert len(looks) == chain.start.components
     linking = [{pair: n for pair, n in sums.items() if n and len(pair) == 2} for sums in stages]
     assert all(each == linking[0] for each in linking)
+
+
+@given(
+    braids(max_strands=13, max_letters=12).flatmap(lambda start: move_chains(start, 4)),
+    st.sampled_from(DIRECTIONS),
+)
+@settings(max_examples=50)
+def test_marks_keep_clear_of_letters(chain: MoveChain, direction: str) -> None:
+    """In every stage, also where letters have two digits and a sign."""
+    check_layout(read_picture(draw_proof(certificate_of(chain), direction=direction)))
 
 
 @given(move_chains(max_moves=8))

@@ -17,6 +17,32 @@ PLACE = "document.getElementById('place').textContent"
 TITLES = "[...document.querySelectorAll('#stage svg > desc')].map((each) => each.textContent)"
 
 
+SMALLEST_LETTER = 6.9
+"""In pixels of the page, of which a telephone has several of its own for each."""
+
+LETTERS_AND_MARKS = """(() => {
+  const sizes = [], cuts = [];
+  for (const svg of document.querySelectorAll("#stage svg.braid")) {
+    const boxes = [...svg.querySelectorAll("g > rect[rx]:not([display])")]
+      .map((box) => box.getBoundingClientRect());
+    for (const text of svg.querySelectorAll("text:not([display])")) {
+      const t = text.getBoundingClientRect();
+      const size = parseFloat(getComputedStyle(text).fontSize);
+      sizes.push(size * svg.getBoundingClientRect().width / svg.viewBox.baseVal.width);
+      for (const b of boxes) {
+        const isInside = t.left >= b.left && t.right <= b.right && t.top >= b.top
+          && t.bottom <= b.bottom;
+        const isOutside = t.left > b.right || t.right < b.left || t.top > b.bottom
+          || t.bottom < b.top;
+        if (!isInside && !isOutside) cuts.push(text.textContent);
+      }
+    }
+  }
+  return [sizes, cuts];
+})()"""
+"""How large the letters and numbers of all pictures are shown, and which a mark's edge cuts."""
+
+
 @pytest.fixture
 def opened(browser: DrivenBrowser, tmp_path: Path) -> Iterator[DrivenBrowser]:
     """A browser that shows the proof of the exchange move, with the usual clock."""
@@ -134,7 +160,8 @@ def test_single_relations_are_stops(opened: DrivenBrowser) -> None:
 @pytest.mark.parametrize("width", [360, 768, 1280])
 def test_nothing_is_cut_off(browser: DrivenBrowser, tmp_path: Path, width: int) -> None:
     """No page is wider than its window, and no picture than its paper, at any step, open or closed;
-    every text of a picture lies on the paper.
+    every text of a picture lies on the paper, is large enough to be read, and is not cut by the
+    edge of a mark.
     """
     for number, proof in enumerate((accepted("same-exchange-written-out"), DIFFERENT)):
         file = tmp_path / f"{number}.html"
@@ -155,6 +182,9 @@ def test_nothing_is_cut_off(browser: DrivenBrowser, tmp_path: Path, width: int) 
                     " && b.right <= room.right + 1 && b.top >= room.top - 1"
                     " && b.bottom <= room.bottom + 1; }); })"
                 )
+                sizes, cuts = browser.run(LETTERS_AND_MARKS)
+                assert min(sizes) >= SMALLEST_LETTER
+                assert cuts == []
         assert browser.mistakes() == []
 
 

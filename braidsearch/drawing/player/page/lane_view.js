@@ -1,7 +1,15 @@
 /* A lane on the page: its picture, fitted to its paper. */
 
 /* A picture that would be smaller than the smallest is scrolled instead. */
-const SMALLEST_SCALE = 0.44, SCROLL_BAR = 16, SCROLLED_SCALE = 1, LARGEST_SCALE = 1.7;
+const SMALLEST_SCALE = 0.46, SCROLL_BAR = 16, SCROLLED_SCALE = 1, LARGEST_SCALE = 1.7;
+
+/* Below the first scale letters are written larger, as far as the strands leave room for them: for
+   a sign and one digit, or, on many strands, for two digits. */
+const LETTERS_AS_THEY_ARE = 0.9, MOST_ENLARGED = 1.6, MOST_ENLARGED_WIDE = 1.25;
+
+const enlargement = (scale, strands) => rounded(Math.max(1, Math.min(
+  LETTERS_AS_THEY_ARE / scale, strands > 9 ? MOST_ENLARGED_WIDE : MOST_ENLARGED,
+)));
 
 /* One lane on the page: its picture, its scrolling paper, the caption. */
 class LaneView {
@@ -52,7 +60,6 @@ class LaneView {
       return;
     }
     const frame = isShown ? lane.frameBetween(start, end, time, view.isClosed) : lane.restFrame(still);
-    this.picture.draw(frame, view);
     let box = boxOf(frame, view);
     if (frame.fading) {
       const other = boxOf(frame.fading.other, view), share = frame.fading.share;
@@ -60,10 +67,13 @@ class LaneView {
       this.note.hidden = false;
       this.note.textContent = "rewritten by braid relations, too many to be shown one by one";
     }
-    this.fit(box, frame, view, room);
+    const scale = this.scaleOf(box, view, room);
+    this.picture.enlarge(enlargement(scale, frame.strands));
+    this.picture.draw(frame, view);
+    this.fit(box, scale, room);
   }
 
-  fit(box, frame, view, room) {
+  scaleOf(box, view, room) {
     const [width, height] = [box[2] - box[0], box[3] - box[1]];
     const most = this.largest(view), fitting = ([w, h]) => Math.min(room.width / w, room.height / h);
     let scale = Math.min(LARGEST_SCALE, fitting(most));
@@ -73,6 +83,11 @@ class LaneView {
       scale = Math.min(LARGEST_SCALE, fitting([width, height]));
       scale = Math.max(scale, Math.min(SCROLLED_SCALE, Math.max(SMALLEST_SCALE, across)));
     }
+    return scale;
+  }
+
+  fit(box, scale, room) {
+    const [width, height] = [box[2] - box[0], box[3] - box[1]];
     const shown = [Math.max(room.width, width * scale), Math.max(room.height, height * scale)];
     const { svg } = this.picture, [w, h] = shown.map((value) => value / scale);
     const left = box[0] - (w - width) / 2, top = box[1] - (h - height) / 2;

@@ -4,6 +4,10 @@ const SVG = "http://www.w3.org/2000/svg";
 
 /* The light line inside a strand; room for the numbers of strands; the head of an arrow. */
 const INLAY = 1.3, NUMBER_ROOM = 22, ARROW_WIDTH = 10, ARROW_NOTCH = 2.8;
+
+/* Sizes of letters and of numbers of strands; the width of a character in units of its size; and
+   how far a mark stays away from the letters in it. */
+const LETTER_SIZE = 9.5, NUMBER_SIZE = 10.5, CHARACTER = 0.62, LETTER_MARGIN = 3.5;
 const ARROW = [
   [M.arrowLength / 2, 0],
   [-M.arrowLength / 2, ARROW_WIDTH / 2],
@@ -76,9 +80,18 @@ class Picture {
     this.paths = this.strands.map((group) => new Pool("path", group));
     this.arrows = new Pool("path", makeElement("g", {}, this.body));
     const text = { "font-family": M.font, fill: M.ink };
-    this.letters = new Pool("text", makeElement("g", { ...text, "font-size": 9.5 }, this.body));
-    this.numbers = new Pool("text", makeElement("g", { ...text, "font-size": 10.5 }, this.svg));
+    this.letters = new Pool("text", makeElement("g", text, this.body));
+    this.numbers = new Pool("text", makeElement("g", text, this.svg));
+    this.enlarge(1);
     holder.append(this.svg);
+  }
+
+  /* Write letters and numbers larger, where the whole picture is shown small. */
+  enlarge(times) {
+    if (this.times === times) return;
+    this.times = times;
+    this.letters.parent.setAttribute("font-size", rounded(LETTER_SIZE * times));
+    this.numbers.parent.setAttribute("font-size", rounded(NUMBER_SIZE * times));
   }
 
   /* Draw a frame. `view` is { isClosed, isRight, hasLetters }. */
@@ -141,12 +154,20 @@ class Picture {
         top = Math.min(top, y - long - end);
         bottom = Math.max(bottom, y + long + end);
       }
-      const [x0, y0] = place(left, top), [x1, y1] = place(right, bottom);
+      const rectangles = [[...place(left, top), ...place(right, bottom)]];
+      if (view.hasLetters && !frame.fading) {
+        for (const [item, { meeting }] of found) {
+          if (!item.walks) rectangles.push(this.roomOfLetter(item, place(...meeting), view));
+        }
+      }
+      const xs = rectangles.flatMap(([x0, , x1]) => [x0, x1]);
+      const ys = rectangles.flatMap(([, y0, , y1]) => [y0, y1]);
+      const x = Math.min(...xs), y = Math.min(...ys);
       this.boxes.next({
-        x: rounded(Math.min(x0, x1)),
-        y: rounded(Math.min(y0, y1)),
-        width: rounded(Math.abs(x1 - x0)),
-        height: rounded(Math.abs(y1 - y0)),
+        x: rounded(x),
+        y: rounded(y),
+        width: rounded(Math.max(...xs) - x),
+        height: rounded(Math.max(...ys) - y),
         opacity: rounded(opacity),
         fill: isFrame ? "none" : M.band,
         stroke: isFrame ? M.frame : "none",
@@ -159,13 +180,26 @@ class Picture {
   drawLetters(frame, centres, view, place) {
     for (const item of frame.items) {
       if (item.walks || frame.fading) continue;
-      const { meeting } = centres.get(item), at = place(...meeting);
-      const shift = view.isRight ? [0, -M.strandSpacing / 2 - 4.5] : [9.5, 3.4];
+      const [x, y] = this.placeOfLetter(place(...centres.get(item).meeting), view);
       this.letters.next({
-        transform: `translate(${rounded(at[0] + shift[0])} ${rounded(at[1] + shift[1])})`,
+        transform: `translate(${rounded(x)} ${rounded(y)})`,
         "text-anchor": view.isRight ? "middle" : "start",
       }, String(item.letter).replace("-", "\u2212"));
     }
+  }
+
+  /* Where the base line of a letter begins, or, sideways, has its middle. */
+  placeOfLetter([x, y], { isRight }) {
+    return isRight ? [x, y - M.strandSpacing / 2 - 4.5] : [x + 9.5, y + 3.4 * this.times];
+  }
+
+  roomOfLetter({ letter }, meeting, view) {
+    const size = LETTER_SIZE * this.times, width = String(letter).length * size * CHARACTER;
+    const [x, y] = this.placeOfLetter(meeting, view), left = view.isRight ? x - width / 2 : x;
+    return [
+      left - LETTER_MARGIN, y - 0.74 * size - LETTER_MARGIN,
+      left + width + LETTER_MARGIN, y + LETTER_MARGIN,
+    ];
   }
 
   /* The hairlines on which strands begin and end, and the numbers of positions. */
@@ -176,11 +210,13 @@ class Picture {
         this.lines.next({ d: `M${start.map(rounded).join(" ")}L${end.map(rounded).join(" ")}` });
       }
     }
-    const shifts = isClosed ? [[0, -5, "middle"], [-5, 4, "end"]] : [[-7, 3.7, "end"], [0, -7, "middle"]];
+    const half = 3.7 * this.times; // of the height of a number
+    const shifts = isClosed
+      ? [[0, -5, "middle"], [-5, half, "end"]] : [[-7, half, "end"], [0, -7, "middle"]];
     const [right, down, anchor] = shifts[isRight ? 0 : 1];
     for (let position = 0; position <= Math.round(frame.last); position += 1) {
       const [x, y] = place(position * M.strandSpacing, 0);
-      this.numbers.next({ x: x + right, y: y + down, "text-anchor": anchor }, String(position + 1));
+      this.numbers.next({ x: x + right, y: rounded(y + down), "text-anchor": anchor }, String(position + 1));
     }
   }
 
