@@ -10,6 +10,7 @@ import shutil
 import subprocess
 import sys
 import time
+from collections.abc import Sequence
 from pathlib import Path
 from types import TracebackType
 from typing import Any
@@ -164,14 +165,14 @@ class DrivenBrowser:
             raise RuntimeError(json.dumps(result["exceptionDetails"])[:1000])
         return result["result"].get("value")
 
-    def press(self, key: str) -> None:
-        """Press and release a key, as a person does."""
+    def press(self, key: str, kinds: Sequence[str] = ("keyDown", "keyUp")) -> None:
+        """Press and release a key, as a person does; with "keyDown" alone it is held down."""
         code = {" ": "Space"}.get(key, key)
         number = {
             "ArrowLeft": 37, "ArrowRight": 39, "Home": 36, "End": 35, " ": 32, "Tab": 9,
         }.get(key, ord(key[0].upper()))  # fmt: skip
         text = key if len(key) == 1 else ""
-        for kind in ("keyDown", "keyUp"):
+        for kind in kinds:
             self.call(
                 "Input.dispatchKeyEvent",
                 type=kind,
@@ -180,6 +181,11 @@ class DrivenBrowser:
                 windowsVirtualKeyCode=number,
                 **({"text": text} if text and kind == "keyDown" else {}),
             )
+
+    def metrics(self) -> dict[str, float]:
+        """What the page has cost so far, by name, as the browser counts it; times in seconds."""
+        found = self.call("Performance.getMetrics")["metrics"]
+        return {each["name"]: each["value"] for each in found}
 
     def mistakes(self) -> list[str]:
         """What went wrong since the page was opened: exceptions, and what its policy stopped."""

@@ -275,5 +275,4 @@ def test_long_proofs_open_and_move_quickly(browser: DrivenBrowser, tmp_path: Pat
 
 def busy_milliseconds(browser: DrivenBrowser) -> float:
     """How long the page's thread has worked."""
-    metrics = browser.call("Performance.getMetrics")["metrics"]
-    return 1000 * next(each["value"] for each in metrics if each["name"] == "TaskDuration")
+    return 1000 * browser.metrics()["TaskDuration"]
