@@ -240,7 +240,8 @@ def _contradictions(store: Store) -> Iterator[str]:
     known = set()
     for number, same, different in store.rows("SELECT id, same, different FROM contradictions"):
         known |= {same, different}
-        yield f"contradiction {number}: proof {same} and proof {different}"
+        by = "the values of its classes" if different is None else f"proof {different}"
+        yield f"contradiction {number}: proof {same} and {by}"
     rows = store.rows(
         "SELECT evidence.id, verdict, one.class, other.class FROM evidence "
         "JOIN forms AS one ON one.braid = evidence.left "

@@ -5,6 +5,7 @@ from __future__ import annotations
 import os
 import signal
 import threading
+import time
 from collections.abc import Callable, Iterator
 from concurrent.futures import BrokenExecutor, CancelledError, Executor, Future, ProcessPoolExecutor
 from contextlib import contextmanager
@@ -12,6 +13,11 @@ from multiprocessing import get_context, parent_process
 from typing import Any
 
 from braidsearch.errors import InputError
+
+SECONDS_WITHOUT_WORKERS = 60.0
+"""How long a cluster that has lost all its workers is waited for."""
+
+_SECONDS_BETWEEN_LOOKS = 1.0
 
 
 class DeferredFuture(Future[Any]):
@@ -187,10 +193,44 @@ def _dask_executor(address: str) -> Iterator[Executor]:
         ) from None
     try:
         with client:
-            yield client.get_executor(pure=False)
+            executor = client.get_executor(pure=False)
+            with _watched(client, executor):
+                yield executor
     except (CancelledError, KilledWorker):
         raise InputError(
             f"--scheduler {address}: the cluster has ended, or its workers have, before their work "
             "was done: what was kept before is not lost: expected a cluster that stays; run the "
             "command again to go on"
         ) from None
+
+
+@contextmanager
+def _watched(client: Any, executor: Executor) -> Iterator[None]:
+    """Cancel what is asked of a cluster once it has had no workers for a while.
+
+    A scheduler that lives keeps the tasks of lost workers for others that may come. To those that
+    a cluster has not had yet any time is given.
+    """
+    ended = threading.Event()
+
+    def watch() -> None:
+        last_seen = None
+        while True:
+            try:
+                workers = client.nthreads()
+            except (OSError, RuntimeError, TypeError):  # the client is closing
+                return
+            now = time.monotonic()
+            if workers:
+                last_seen = now
+            elif last_seen is not None and now - last_seen > SECONDS_WITHOUT_WORKERS:
+                executor.shutdown(wait=False)
+                return
+            if ended.wait(_SECONDS_BETWEEN_LOOKS):
+                return
+
+    threading.Thread(target=watch, daemon=True).start()
+    try:
+        yield
+    finally:
+        ended.set()

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import json
+from collections.abc import Iterator
 from dataclasses import dataclass
 from functools import lru_cache
 from typing import Any
@@ -52,12 +53,15 @@ class Fingerprint:
         """Whether no value is missing."""
         return None not in self.values
 
-    def first_difference(self, other: Fingerprint) -> str | None:
-        """The first invariant that differs, of those that both have; None when they agree."""
+    def differences(self, other: Fingerprint) -> Iterator[str]:
+        """The invariants that differ, of those that both have, in the order of FIELDS."""
         for name, mine, theirs in zip(FIELDS, self.values, other.values, strict=True):
             if mine is not None and theirs is not None and mine != theirs:
-                return name
-        return None
+                yield name
+
+    def first_difference(self, other: Fingerprint) -> str | None:
+        """The first invariant that differs, of those that both have; None when they agree."""
+        return next(self.differences(other), None)
 
     def value(self, name: str) -> Any:
         """The value of one invariant as a certificate states it, None where it is missing."""

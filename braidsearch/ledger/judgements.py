@@ -2,12 +2,11 @@
 
 from __future__ import annotations
 
-import json
 from collections.abc import Sequence
 from typing import TYPE_CHECKING
 
 from braidsearch.certificates import Certificate, Distinction, format_certificate
-from braidsearch.ledger.fingerprints import FIELDS, Fingerprint
+from braidsearch.ledger.fingerprints import Fingerprint
 from braidsearch.ledger.store import Store
 from braidsearch.search.gate import judge
 from braidsearch.words import Braid
@@ -85,18 +84,36 @@ class Judgements:
     def take_proof(self, left: int, right: int, finding: Finding) -> None:
         """Keep a proof about two forms: classes merge where it says so and nothing contradicts."""
         number = self.store.add_evidence(left, right, finding)
-        if finding.symmetry != "identity":
+        between = self._class_number(left), self._class_number(right), finding.symmetry
+        if finding.outcome == "same":
+            self._take_sameness(number, *between)
+        else:
+            self._take_difference(number, *between)
+
+    def _take_sameness(self, number: int, one: int, other: int, symmetry: str) -> None:
+        is_identity = symmetry == "identity"
+        if is_identity and one == other:
             return
-        one, other = self._class_number(left), self._class_number(right)
-        if finding.outcome == "same" and one != other:
-            against = self._evidence_between(one, other)
-            if against is None:
-                self._merge(*sorted((one, other)))
-            else:
-                self.store.add_contradiction(number, against, one, other)
-        elif finding.outcome == "different" and one == other:
-            same = self._evidence_within(one)
-            self.store.add_contradiction(same, number, one, one)
+        against = self.store.proof_between(one, other, symmetry, "different")
+        is_against = against is not None
+        if is_identity and against is None:
+            is_against, against = self._difference_of_values(one, other)
+        if is_against:
+            self.store.add_contradiction(number, against, one, other)
+        elif is_identity:
+            self._merge(*sorted((one, other)))
+        else:
+            self._drop_answered(one)
+
+    def _take_difference(self, number: int, one: int, other: int, symmetry: str) -> None:
+        if symmetry == "identity" and one == other:
+            against: int | None = self._evidence_within(one)
+        else:
+            against = self.store.proof_between(one, other, symmetry, "same")
+        if against is None:
+            self._drop_answered(one)
+        else:
+            self.store.add_contradiction(against, number, one, other)
 
     def _class_number(self, form: int) -> int:
         number = self.store.class_of_form(form)
@@ -106,38 +123,40 @@ class Judgements:
 
     def _merge(self, kept: int, merged: int) -> None:
         self.store.merge_classes(kept, merged)
-        inside = "(SELECT braid FROM forms WHERE class = ?)"
-        self.store.execute(
-            f"DELETE FROM undecided WHERE symmetry = 'identity' "
-            f"AND left IN {inside} AND right IN {inside}",
-            [kept, kept],
-        )
+        self._drop_answered(kept)
 
-    def _evidence_between(self, one: int, other: int) -> int | None:
-        """A proof that two classes differ, by a stored one or by their fingerprints."""
+    def _drop_answered(self, number: int) -> None:
+        """Settle the open questions about a class to which other proofs have the answer now."""
+        store = self.store
+        for left, right, symmetry in store.undecided_about(number):
+            one, other = self._class_number(left), self._class_number(right)
+            is_one = symmetry == "identity" and one == other
+            if is_one or any(
+                store.proof_between(one, other, symmetry, verdict) is not None
+                for verdict in ("same", "different")
+            ):
+                store.settle(left, right, symmetry)
+
+    def _difference_of_values(self, one: int, other: int) -> tuple[bool, int | None]:
+        """Whether the fingerprints of two classes differ, and the number of a proof of that.
+
+        Each value was confirmed by the verifier alone; a certificate of two of them may yet be
+        more than it takes at once, and then there is no number.
+        """
         from braidsearch.ledger.placing import Finding  # noqa: PLC0415 - loads the search, which look-ups do without
 
-        inside = "(SELECT braid FROM forms WHERE class = ?)"
-        number: int | None = self.store.one(
-            "SELECT id FROM evidence WHERE verdict = 'different' AND symmetry = 'identity' AND "
-            f"(left IN {inside} AND right IN {inside} OR left IN {inside} AND right IN {inside}) "
-            "ORDER BY id LIMIT 1",
-            [one, other, other, one],
-        )
-        if number is not None:
-            return number
         left, right = self.store.form_of_class(one), self.store.form_of_class(other)
         marks, theirs = (self.store.fingerprint_of_class(key) for key in (one, other))
         certificate = fingerprint_certificate(
             self.store.braid(left), marks, self.store.braid(right), theirs
         )
         if certificate is None:
-            return None
+            return marks.first_difference(theirs) is not None, None
         text = format_certificate(certificate)
         finding = Finding(
             certificate.left, certificate.right, "identity", "different", text, "fingerprint"
         )
-        return self.store.add_evidence(left, right, finding)
+        return True, self.store.add_evidence(left, right, finding)
 
     def _evidence_within(self, number: int) -> int:
         """A proof of sameness by which a class holds together."""
@@ -166,12 +185,14 @@ def fingerprint_certificate(
 ) -> Certificate | None:
     """The certificate that two forms differ by their fingerprints; None where these agree.
 
-    None as well where the verifier does not accept it.
+    The first of the values that differ of which the verifier takes a certificate; None as well
+    where it takes none.
     """
-    name = marks.first_difference(theirs)
-    if name is None:
-        return None
-    values = [json.loads(one.values[FIELDS.index(name)] or "null") for one in (marks, theirs)]
-    distinction = Distinction("identity", name, {}, (), (), *values)
-    certificate = Certificate.different(left, right, [distinction])
-    return certificate if judge(certificate).valid else None
+    for name in marks.differences(theirs):
+        distinction = Distinction(
+            "identity", name, {}, (), (), marks.value(name), theirs.value(name)
+        )
+        certificate = Certificate.different(left, right, [distinction])
+        if judge(certificate).valid:
+            return certificate
+    return None

@@ -12,6 +12,7 @@ from typing import TYPE_CHECKING
 from braidsearch.certificates import Certificate
 from braidsearch.errors import InputError
 from braidsearch.ledger.proofs import Proofs
+from braidsearch.ledger.references import find_entry
 from braidsearch.ledger.reporting import LedgerReport, OpenQuestion, open_questions, report_ledger
 from braidsearch.ledger.soundness import blaming_damage
 from braidsearch.ledger.store import Store, StoredEntry
@@ -147,18 +148,7 @@ class Ledger:
 
         Raises InputError where there is none, or more than one.
         """
-        found = self.store.entries("name = ?", [reference])
-        if reference.startswith("#") and reference[1:].isdecimal():
-            found = found or self.store.entries("entries.id = ?", [int(reference[1:])])
-        found = found or self.store.entries("source || '/' || name = ?", [reference])
-        if not found:
-            raise InputError(
-                f"{reference}: no such entry: expected a name, source/name, or # and a number"
-            )
-        if len(found) > 1:
-            titles = ", ".join(entry.title for entry in found[:5])
-            raise InputError(f"{reference}: {len(found)} entries: expected one of {titles}")
-        return found[0]
+        return find_entry(self.store, reference)
 
     def proof(self, left: str, right: str, *, up_to: Sequence[str] = ()) -> Proof:
         """What the evidence in the ledger says of two entries, joined into one certificate.

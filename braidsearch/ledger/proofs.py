@@ -17,8 +17,6 @@ from braidsearch.ledger.judgements import fingerprint_certificate
 from braidsearch.ledger.store import Store
 from braidsearch.words import Braid, apply_symmetry
 
-_INSIDE = "(SELECT braid FROM forms WHERE class = ?)"
-
 Edge = tuple[int, int, int, str]
 """The number of a proof, its left and its right braid, and its symmetry."""
 
@@ -32,13 +30,17 @@ class Proofs:
     def __init__(self, store: Store) -> None:
         self.store = store
 
-    def same(self, left: int, right: int, asked: Collection[str]) -> Certificate | None:
+    def same(
+        self, left: int, right: int, asked: Collection[str], *, through_images: bool = False
+    ) -> Certificate | None:
         """One certificate that closure(left) is s(closure(right)), for one of the symmetries asked.
 
         ``left`` and ``right`` are numbers of placed braids. None where no chain of evidence joins
-        them. The first symmetry in the order asked that is joined is taken.
+        them. The first symmetry in the order asked that is joined is taken. Within a class proofs
+        about images are passed by, unless ``through_images`` says otherwise.
         """
-        path = self._path(self.form(left), self.form(right), asked)
+        only_identity = set(asked) == {"identity"} and not through_images
+        path = self._path(self.form(left), self.form(right), asked, only_identity)
         if path is None:
             return None
         first, last = self._to_form(left), self._to_form(right)
@@ -84,7 +86,9 @@ class Proofs:
         text = self.store.one("SELECT certificate FROM evidence WHERE id = ?", [number])
         return parse_certificate(text)
 
-    def _path(self, start: int, end: int, asked: Collection[str]) -> list[Certificate] | None:
+    def _path(
+        self, start: int, end: int, asked: Collection[str], only_identity: bool
+    ) -> list[Certificate] | None:
         """Certificates along a shortest way from form to form, breadth first."""
         came: dict[Stage, tuple[Stage, Edge] | None] = {(start, "identity"): None}
         layer: list[Stage] = [(start, "identity")]
@@ -94,7 +98,7 @@ class Proofs:
                     return self._walk_back((end, symmetry), came)
             following: list[Stage] = []
             for stage in layer:
-                for edge, there in self._steps(stage, only_identity=set(asked) == {"identity"}):
+                for edge, there in self._steps(stage, only_identity):
                     if there not in came:
                         came[there] = stage, edge
                         following.append(there)
@@ -138,15 +142,12 @@ class Proofs:
     def _stored_difference(
         self, one: int, other: int, symmetry: str
     ) -> tuple[int, Certificate, int] | None:
-        rows = self.store.rows(
-            "SELECT id, left, right FROM evidence WHERE verdict = 'different' AND symmetry = ? "
-            f"AND (left IN {_INSIDE} AND right IN {_INSIDE} "
-            f"OR left IN {_INSIDE} AND right IN {_INSIDE}) ORDER BY id LIMIT 1",
-            [symmetry, one, other, other, one],
-        )
-        if not rows:
+        number = self.store.proof_between(one, other, symmetry, "different")
+        if number is None:
             return None
-        number, left, right = rows[0]
+        ((left, right),) = self.store.rows(
+            "SELECT left, right FROM evidence WHERE id = ?", [number]
+        )
         certificate = self._certificate(number)
         if self.class_of(left) == one:
             return left, certificate, right

@@ -5,6 +5,7 @@ from __future__ import annotations
 from braidsearch.certificates import Certificate, format_certificate
 from braidsearch.certificates.joining import join_chain
 from braidsearch.errors import InputError
+from braidsearch.ledger.following import merge_what_follows
 from braidsearch.ledger.judgements import Judgements
 from braidsearch.ledger.placing import Effort, Finding
 from braidsearch.ledger.proofs import Proofs
@@ -30,6 +31,7 @@ def record_certificate(store: Store, certificate: Certificate) -> str:
         before = store.count("classes"), store.count("contradictions")
         for symmetry in symmetries:
             _record(store, _for_symmetry(certificate, symmetry), symmetry)
+        merge_what_follows(store, Judgements(store, Effort()))
         after = store.count("classes"), store.count("contradictions")
     if after[1] > before[1]:
         return "it contradicts proofs that the ledger has: both are kept, and no class is changed"

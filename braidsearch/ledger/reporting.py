@@ -42,13 +42,15 @@ class OpenQuestion:
 class Contradiction:
     """Two proofs that the verifier accepts and that cannot both be true, by their numbers.
 
-    One of the two has met a defect of the verifier, or a theorem is applied wrongly: neither is
-    believed any more, and the classes stay as they were.
+    ``different`` is None where values of the two classes differ, each of them confirmed, of which
+    the verifier takes no certificate: both together are too large for it. One of the two has met
+    a defect of the verifier, or a theorem is applied wrongly: neither is believed any more, and
+    the classes stay as they were.
     """
 
     number: int
     same: int
-    different: int
+    different: int | None
     left: StoredEntry
     right: StoredEntry
 

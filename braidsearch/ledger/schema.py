@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import os
+import pathlib
 import sqlite3
 import time
 from collections.abc import Iterator
@@ -80,7 +81,7 @@ CREATE TABLE imaged (
 ) STRICT;
 CREATE TABLE contradictions (
     id INTEGER PRIMARY KEY, same INTEGER NOT NULL REFERENCES evidence,
-    different INTEGER NOT NULL REFERENCES evidence, left INTEGER NOT NULL REFERENCES classes,
+    different INTEGER REFERENCES evidence, left INTEGER NOT NULL REFERENCES classes,
     right INTEGER NOT NULL REFERENCES classes
 ) STRICT;
 CREATE INDEX copy_of_entries ON entries (note, given, remarks);
@@ -109,14 +110,36 @@ def connect(path: str | os.PathLike[str], *, create: bool) -> sqlite3.Connection
     if create and not os.path.isdir(os.path.dirname(os.path.abspath(name))):
         raise InputError(f"{name}: its folder does not exist: expected an existing one")
     with readable(name):
-        connection = sqlite3.connect(name, timeout=WAIT_SECONDS, isolation_level=None)
+        try:
+            return _opened(name, name, create)
+        except sqlite3.OperationalError as error:
+            if create or not _is_for_reading_only(name, error):
+                raise
+            place = pathlib.Path(name).absolute().as_uri()
+            return _opened(f"{place}?immutable=1", name, create)
+
+
+def _opened(place: str, name: str, create: bool) -> sqlite3.Connection:
+    connection = sqlite3.connect(
+        place, timeout=WAIT_SECONDS, isolation_level=None, uri=place != name
+    )
     try:
-        with readable(name):
-            _set_up_in_turn(connection, name, create)
+        _set_up_in_turn(connection, name, create)
     except BaseException:
         connection.close()
         raise
     return connection
+
+
+def _is_for_reading_only(name: str, error: sqlite3.OperationalError) -> bool:
+    """Whether a ledger was not opened for want of a folder in which its log could be made.
+
+    Where no log is left over, and none can be made, the file alone has all, and nobody changes it.
+    """
+    folder = os.path.dirname(os.path.abspath(name))
+    can_log = os.access(folder, os.W_OK)
+    is_wanting = any(part in str(error) for part in ("unable to open", "readonly"))
+    return is_wanting and not can_log and not os.path.exists(f"{name}-wal")
 
 
 def _set_up_in_turn(connection: sqlite3.Connection, name: str, create: bool) -> None:

@@ -16,6 +16,7 @@ from typing import Any
 
 from braidsearch.ledger.ahead import BLOCK, Ahead
 from braidsearch.ledger.fingerprints import Fingerprint
+from braidsearch.ledger.following import merge_what_follows
 from braidsearch.ledger.imaging import Imager
 from braidsearch.ledger.judgements import Judgements
 from braidsearch.ledger.placing import Effort, Finding, Marked, ask, place_all
@@ -65,6 +66,8 @@ class Sorter:
         self._place_all()
         if up_to:
             self._find_images(up_to)
+        with self._changing():
+            merge_what_follows(self.store, self.judgements)
         found = self.store.count("contradictions") - before
         return SortSummary(self.placed, self.retried, self.settled, found)
 

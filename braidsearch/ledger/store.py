@@ -14,6 +14,9 @@ from braidsearch.ledger.schema import readable
 if TYPE_CHECKING:
     from braidsearch.ledger.placing import Effort, Finding
 
+INSIDE = "(SELECT braid FROM forms WHERE class = ?)"
+"""The forms of a class, in a statement."""
+
 Revision = tuple[int, int, int]
 """Braids placed, classes, the number of the last proof."""
 
@@ -81,13 +84,31 @@ class Store(EntryRows, ClassRows):
             for left, right, symmetry, nodes, most, reason in rows
         ]
 
+    def undecided_about(self, number: int) -> list[tuple[int, int, str]]:
+        """The open questions about forms of a class: two forms and the symmetry."""
+        return self.rows(
+            f"SELECT left, right, symmetry FROM undecided WHERE left IN {INSIDE} "
+            f"OR right IN {INSIDE} ORDER BY left, right, symmetry",
+            [number, number],
+        )
+
+    def proof_between(self, one: int, other: int, symmetry: str, verdict: str) -> int | None:
+        """The first proof between forms of two classes, in either direction, that says this."""
+        number: int | None = self.one(
+            "SELECT id FROM evidence WHERE verdict = ? AND symmetry = ? AND "
+            f"(left IN {INSIDE} AND right IN {INSIDE} OR left IN {INSIDE} AND right IN {INSIDE}) "
+            "ORDER BY id LIMIT 1",
+            [verdict, symmetry, one, other, other, one],
+        )
+        return number
+
     def is_undecided(self, left: int, right: int, symmetry: str) -> bool:
         """Whether a question is open still."""
         condition = "left = ? AND right = ? AND symmetry = ?"
         return bool(self.one(f"SELECT 1 FROM undecided WHERE {condition}", [left, right, symmetry]))
 
-    def add_contradiction(self, same: int, different: int, left: int, right: int) -> None:
-        """Keep that two proofs contradict each other."""
+    def add_contradiction(self, same: int, different: int | None, left: int, right: int) -> None:
+        """Keep that two proofs contradict each other, or a proof (None) the classes' values."""
         self.execute(
             "INSERT INTO contradictions (same, different, left, right) VALUES (?, ?, ?, ?)",
             [same, different, left, right],
@@ -112,4 +133,4 @@ class Store(EntryRows, ClassRows):
             )
 
 
-__all__ = ["COLUMNS", "Evidence", "Store", "StoredEntry", "base_of", "key_of"]
+__all__ = ["COLUMNS", "INSIDE", "Evidence", "Store", "StoredEntry", "base_of", "key_of"]

@@ -91,9 +91,13 @@ def test_entries_are_named_in_three_ways(sorted_once: Path) -> None:
         assert ledger.entry("bench/yarrow") == ledger.entry(f"#{yarrow.number}") == yarrow
         with pytest.raises(InputError, match="2 entries: expected one of bench/thistle, field/thi"):
             ledger.entry("thistle")
-        for missing in ("moss", "#99", "#x", "bench/moss"):
-            with pytest.raises(InputError, match="no such entry"):
+        for missing in ("moss", "#99", "#x", "bench/moss", "", "#", "\udcff", "#²", f"#{10**30}"):
+            with pytest.raises(InputError, match="no such entry") as refused:
                 ledger.entry(missing)
+            assert str(refused.value).isprintable()
+            assert not str(refused.value).startswith(":")
+        with pytest.raises(InputError, match="is yarrow meant"):
+            ledger.entry("yarow")
 
 
 def test_every_pair_has_its_proof(sorted_once: Path, tmp_path: Path) -> None:

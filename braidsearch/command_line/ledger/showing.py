@@ -66,11 +66,17 @@ def show_contradictions(contradictions: Iterable[Contradiction]) -> list[str]:
     """What contradicts what, to be read by everyone."""
     return [
         f"CONTRADICTION {one.number}: by proof {one.same} {show_entry(one.left)} and "
-        f"{show_entry(one.right)} are one link, by proof {one.different} they are not; the "
+        f"{show_entry(one.right)} are one link, by {_show_difference(one)} they are not; the "
         "verifier accepts both, so that neither is to be believed: ledger export --certificates "
         "writes them out"
         for one in contradictions
     ]
+
+
+def _show_difference(contradiction: Contradiction) -> str:
+    if contradiction.different is None:
+        return "the values of their classes"
+    return f"proof {contradiction.different}"
 
 
 def show_question(question: OpenQuestion) -> str:

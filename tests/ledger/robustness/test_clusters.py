@@ -10,6 +10,7 @@ from typing import Any
 import pytest
 
 from braidsearch.errors import InputError
+from braidsearch.ledger import executors
 from braidsearch.ledger.executors import open_executor
 from braidsearch.ledger.ledger import Ledger
 from tests.ledger.robustness.ledgers import (
@@ -127,6 +128,27 @@ def test_a_sort_that_waits_for_workers_can_be_interrupted(number: int, life: Lif
         outcome = finish(process)
     assert outcome.status == 130
     assert "interrupted" in message_of(outcome)
+
+
+def test_workers_that_are_lost_while_the_scheduler_stays_are_not_waited_for_for_ever(
+    life: Life, tmp_path: Path, monkeypatch: pytest.MonkeyPatch
+):
+    """A sort whose workers are all gone ends in one line after a while; begun again it goes on."""
+    monkeypatch.setattr(executors, "SECONDS_WITHOUT_WORKERS", 1.0)
+    path = life.copy_before(SORT, tmp_path / "ledger")
+    with new_cluster(workers=1) as left:
+
+        def lose(progress: object) -> None:
+            time.sleep(1.5)  # they are seen, then lost
+            left.scale(0)
+            wait_until(lambda: not left.scheduler.workers, "the worker does not end")
+
+        with pytest.raises(InputError, match="or its workers have"):
+            sort_on(left.scheduler_address, path, nodes=0, progress=lose)
+    assert is_intact(path)
+    with Ledger(path) as ledger:
+        SORT.carry_out(ledger)
+    assert ledger_text(path) == life.text_after[SORT.name]
 
 
 @pytest.mark.slow
