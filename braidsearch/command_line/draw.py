@@ -6,14 +6,22 @@ import os
 import re
 from argparse import Namespace
 from collections.abc import Sequence
+from dataclasses import replace
 from pathlib import Path
 from typing import TYPE_CHECKING
 
 from braidsearch.certificates import check_destination, parse_certificate
-from braidsearch.command_line.answer import SUCCESS, Answer
+from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser, read_standard_input
+from braidsearch.command_line.draw_report import (
+    Drawn,
+    drawn_to_json,
+    report_drawn,
+    warnings_of,
+)
 from braidsearch.command_line.link_input import INPUTS, WORD_OR_DRAWING, read_link_argument
 from braidsearch.errors import CapacityError, InputError
+from braidsearch.search.gate import judge
 
 if TYPE_CHECKING:
     from braidsearch.certificates import Certificate
@@ -21,15 +29,23 @@ if TYPE_CHECKING:
 _DESCRIPTION = f"""Print a picture as SVG: of a braid, of its closure, or of all stages of the
 proof in a certificate, which is known by its content. Strands run downwards, or to the right;
 components differ in colour and in the pattern inside them; the word is kept as description.
-With --page a proof becomes one HTML page, which moves the strands from step to step.
+With --page a proof becomes one HTML page, which moves the strands from step to step. A certificate
+that the verifier rejects is drawn as it stands, with a warning on standard error.
 
-{INPUTS}"""
+{INPUTS}
+
+--json prints one object in place of the picture: what was "drawn" (braid, closure, proof, page),
+the braid with its numbers of letters and components, or the claim with its number of steps, the
+width and height, the bytes, the file, and the picture itself where no -o names one."""
 
 _EXAMPLES = """  braidsearch draw "1 -2 1 -2" --closure -o figure-eight.svg
   braidsearch draw "4: 1 2 -1 2 3 2" --direction right --letters > braid.svg
   braidsearch draw proof.json -o proof.svg
   braidsearch draw proof.json --page -o proof.html
-  braidsearch compare "1 1 1" "1 2 1 2" -o - | braidsearch draw --proof - -o proof.svg"""
+  braidsearch compare "1 1 1" "1 2 1 2" -o - | braidsearch draw --proof - -o proof.svg
+  braidsearch draw "1 -2 1 -2" --closure -o figure-eight.svg --json
+
+exit status: 0 drawn, 2 for a mistake in the input."""
 
 _LONGEST_INPUT = 100_000_000
 _LONGEST_NUMBER = 9
@@ -41,11 +57,14 @@ def answer(arguments: Sequence[str]) -> Answer:
     _check_choices(given)
     if given.output not in (None, "-"):
         _check_picture_destination(given.output)
-    picture = _picture(given)
-    if given.output in (None, "-"):
-        return Answer(SUCCESS, picture)
-    _write_picture(picture, given.output)
-    return Answer(SUCCESS, f"{'page' if given.page else 'picture'}: {given.output}")
+    drawn = _draw(given)
+    file = None if given.output == "-" else given.output
+    if file is not None:
+        _write_picture(drawn.text, file)
+    if given.json:
+        return json_answer(SUCCESS, drawn_to_json(drawn, file), warnings_of(drawn))
+    text = drawn.text if file is None else report_drawn(drawn, file)
+    return Answer(SUCCESS, text, warnings_of(drawn))
 
 
 def _parser() -> CommandParser:
@@ -68,10 +87,13 @@ def _parser() -> CommandParser:
         "--stages", metavar="N", explanation="most stages of a proof that are shown (60), or all"
     )
     parser.add_text("-o", "--output", metavar="FILE", explanation="file for the picture")
+    parser.add_json()
     return parser
 
 
 def _check_choices(given: Namespace) -> None:
+    if given.output == "-" and given.json:
+        raise InputError("-o -: expected a file, since --json prints the picture already")
     if given.closure and given.proof:
         raise InputError("--closure: expected no --proof beside it")
     if given.page:
@@ -100,43 +122,57 @@ def _read_stages(text: str | None) -> int | None:
     return int(text)
 
 
-def _picture(given: Namespace) -> str:
-    from braidsearch import drawing  # noqa: PLC0415 - help and mistakes come faster
-
+def _draw(given: Namespace) -> Drawn:
     certificate = _read_certificate(given)
     if certificate is not None:
         if given.closure:
             raise InputError("--closure: expected a braid, since LINK is a certificate")
-        if given.page:
-            return _page(certificate)
-        return drawing.draw_proof(
-            certificate,
-            direction=given.direction or "right",
-            most_stages=_read_stages(given.stages),
-            is_transparent=given.transparent,
-        )
+        drawn = _draw_page(certificate) if given.page else _draw_proof(certificate, given)
+        report = judge(certificate)
+        return drawn if report.valid else replace(drawn, fault=report.reason)
     if given.page:
         raise InputError("--page: expected a certificate, since it plays a proof")
     if given.stages is not None:
         raise InputError("--stages: expected a certificate, since it counts those of a proof")
-    braid = read_link_argument("LINK", given.link)
+    return _draw_braid(given)
+
+
+def _draw_braid(given: Namespace) -> Drawn:
+    from braidsearch import drawing  # noqa: PLC0415 - help and mistakes come faster
+
+    braid, direction = read_link_argument("LINK", given.link), given.direction or "down"
     draw = drawing.draw_closure if given.closure else drawing.draw_braid
     try:
-        return draw(
+        text = draw(
             braid,
-            direction=given.direction or "down",
+            direction=direction,
             has_letters=given.letters,
             is_transparent=given.transparent,
         )
     except CapacityError as error:
         raise CapacityError(f"LINK: {error}") from None
+    return Drawn("closure" if given.closure else "braid", text, braid, direction)
 
 
-def _page(certificate: Certificate) -> str:
+def _draw_proof(certificate: Certificate, given: Namespace) -> Drawn:
+    from braidsearch import drawing  # noqa: PLC0415 - help and mistakes come faster
+
+    direction, most_stages = given.direction or "right", _read_stages(given.stages)
+    text = drawing.draw_proof(
+        certificate,
+        direction=direction,
+        most_stages=most_stages,
+        is_transparent=given.transparent,
+    )
+    left_out = drawing.count_left_out(certificate, most_stages)
+    return Drawn("proof", text, certificate, direction, left_out)
+
+
+def _draw_page(certificate: Certificate) -> Drawn:
     from braidsearch.drawing.player import draw_proof_page  # noqa: PLC0415 - not for pictures
 
     try:
-        return draw_proof_page(certificate).rstrip("\n")
+        return Drawn("page", draw_proof_page(certificate).rstrip("\n"), certificate)
     except InputError as error:
         raise InputError(f"LINK: {error}") from None
 

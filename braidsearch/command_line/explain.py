@@ -80,6 +80,8 @@ def _check_options(given: Namespace) -> None:
     if given.output is not None:
         if given.steps != "elementary":
             raise InputError(f"-o {given.output}: expected --steps elementary with it")
+        if given.output == "-" and given.json:
+            raise InputError("-o -: expected a file, since --json prints the explanation there")
         if given.output != "-":
             check_destination(given.output)
 

@@ -82,6 +82,16 @@ def draw_proof(  # noqa: PLR0913 - each is one choice about the picture
     return write_svg(Sheet(part, title, description, is_transparent, identifier))
 
 
+def count_left_out(certificate: Certificate, most_stages: int | None = MOST_STAGES) -> int:
+    """How many stages of its chains ``draw_proof`` leaves out, since they are too many."""
+    if most_stages is None:
+        return 0
+    chains = [certificate.moves]
+    for distinction in certificate.distinctions:
+        chains += [distinction.left_moves, distinction.right_moves]
+    return sum(max(0, len(moves) + 1 - most_stages) for moves in chains)
+
+
 class _SheetWriter:
     """Makes the parts of a sheet in order, and keeps count of what is left of its crossings."""
 

@@ -2,6 +2,7 @@
 
 import io
 import os
+import subprocess
 from collections.abc import Sequence
 from pathlib import Path
 
@@ -11,8 +12,10 @@ from braidsearch.certificates import format_certificate
 from braidsearch.drawing import draw_braid, draw_closure, draw_proof
 from braidsearch.words import Braid
 from tests.certificates.test_file_format import DIFFERENT, SAME
-from tests.command_line.running import Runner, run_process
+from tests.command_line.running import Runner, command, environment, run_process
+from tests.drawing.layout import is_inside, iter_rectangles, view_box
 from tests.drawing.svg_reader import read_picture
+from tests.verifier.cases import path_of
 
 FIGURE_EIGHT = Braid([1, -2, 1, -2])
 
@@ -91,6 +94,113 @@ def test_certificates_come_from_standard_input(
     assert run("draw", "-").output == draw_braid(FIGURE_EIGHT) + "\n"
 
 
+def test_json_says_what_was_drawn(run: Runner, tmp_path: Path) -> None:
+    """One object: the braid and its numbers, the size that the picture has, and the picture, or the
+    file that holds it.
+    """
+    picture = draw_closure(FIGURE_EIGHT)
+    outcome = run("draw", "1 -2 1 -2", "--closure", "--json")
+    assert (outcome.status, outcome.errors, outcome.output.count("\n")) == (0, "", 1)
+    found = outcome.json
+    root = read_picture(picture).root
+    assert found == {
+        "drawn": "closure",
+        "braid": {"strands": 3, "word": [1, -2, 1, -2]},
+        "letters": 4,
+        "components": 1,
+        "direction": "down",
+        "width": float(root.attrib["width"]),
+        "height": float(root.attrib["height"]),
+        "format": "svg",
+        "bytes": len(picture) + 1,
+        "file": None,
+        "picture": picture,
+    }
+    file = tmp_path / "closure.svg"
+    written = run("draw", "1 -2 1 -2", "--closure", "--json", "-o", str(file))
+    assert written.json == found | {"file": str(file), "picture": None}
+    assert file.stat().st_size == found["bytes"]
+    assert run("draw", "2: 1", "--json", "--direction", "right").json["drawn"] == "braid"
+
+
+def test_json_says_which_proof_was_drawn(run: Runner, proof: Path, tmp_path: Path) -> None:
+    """The claim and the number of steps; a page has neither a size nor a direction of its own."""
+    claim = {
+        "left": {"strands": 2, "word": [1, 1, 1]},
+        "right": {"strands": 3, "word": [1, 2, 1, 2]},
+        "verdict": "same",
+        "symmetry": "identity",
+        "valid": True,
+        "steps": 2,
+        "stages_left_out": 0,
+    }
+    sheet = run("draw", str(proof), "--json").json
+    assert sheet.items() >= claim.items()
+    assert (sheet["drawn"], sheet["direction"], sheet["picture"]) == (
+        *("proof", "right"),
+        draw_proof(SAME),
+    )
+    file = tmp_path / "proof.html"
+    page = run("draw", str(proof), "--page", "--json", "-o", str(file)).json
+    assert page.items() >= claim.items()
+    assert (page["drawn"], page["format"], page["file"]) == ("page", "html", str(file))
+    assert (page["width"], page["height"], page["direction"], page["picture"]) == (None,) * 4
+    assert file.stat().st_size == page["bytes"]
+    DIFFERENT.save(tmp_path / "different.json")
+    found = run("draw", str(tmp_path / "different.json"), "--json").json
+    assert (found["verdict"], found["symmetry"], found["steps"]) == ("different", None, 0)
+
+
+def test_stages_left_out_are_counted(run: Runner, proof: Path, tmp_path: Path) -> None:
+    """Standard error says how many of a long proof are not shown, and what shows them."""
+    outcome = run("draw", str(proof), "--stages", "2", "-o", str(tmp_path / "proof.svg"))
+    assert outcome.errors == (
+        "braidsearch draw: 1 stage left out: --stages all draws every one, --page plays them\n"
+    )
+    assert run("draw", str(proof), "--stages", "2", "--json").json["stages_left_out"] == 1
+    assert run("draw", str(proof), "--stages", "all").errors == ""
+    shown = run("draw", str(proof), "--stages", "2").output
+    assert "... 1 stage left out" in shown
+
+
+@pytest.mark.parametrize("options", [(), ("--page",)])
+def test_false_proofs_are_drawn_with_a_warning(run: Runner, options: Sequence[str]) -> None:
+    """Whoever looks for the mistake sees it drawn; nobody takes the picture for a proof."""
+    file = str(path_of("rejected", "same-stops-before-the-end"))
+    outcome = run("draw", file, *options)
+    assert outcome.status == 0
+    assert outcome.errors.startswith("braidsearch draw: LINK: drawn as it stands, but rejected: ")
+    assert outcome.errors.count("\n") == 1
+    assert run("draw", file, "--json", *options).json["valid"] is False
+
+
+def test_a_reader_that_leaves_is_no_mistake() -> None:
+    """A pipe that is closed early ends in silence, and so does an output that is closed."""
+    for shell in ('"$@" | true', '"$@" >&-', '"$@" --json >&-'):
+        finished = subprocess.run(
+            ["sh", "-c", shell, "sh", *command("draw", "1 -2 1 -2")],
+            capture_output=True,
+            check=False,
+            env=environment(),
+        )
+        assert (finished.returncode, finished.stdout, finished.stderr) == (0, b"", b"")
+
+
+@pytest.mark.parametrize(
+    ("word", "strands", "letters"),
+    [("", 1, 0), ("1:", 1, 0), ("3:", 3, 0), ("40: 1 39 -20", 40, 3), ("5 -1 2 " * 100, 6, 300)],
+)
+def test_unusual_words_are_drawn(run: Runner, word: str, strands: int, letters: int) -> None:
+    """No letters, one strand, many strands, hundreds of letters: open, closed, with letters."""
+    for options in ([], ["--closure"], ["--letters"], ["--direction", "right"]):
+        found = run("draw", word, "--json", *options).json
+        assert (found["braid"]["strands"], found["letters"]) == (strands, letters)
+        picture = read_picture(found["picture"], is_turned=options == ["--direction", "right"])
+        assert len(picture.crossings) == letters
+        page = view_box(picture)
+        assert all(is_inside(each, page) for each in iter_rectangles(picture))
+
+
 def test_pictures_pass_through_any_encoding() -> None:
     """In a process whose output knows ASCII alone the picture is the same, minus signs included."""
     outcome = run_process("draw", "1 -2", "--letters", "--closure")
@@ -107,6 +217,7 @@ def test_pictures_pass_through_any_encoding() -> None:
         (["61: 1"], "LINK: a picture of 61 strands: expected at most 60"),
         (["1 " * 2001], "LINK: a picture of 2001 crossings: expected at most 2000"),
         (["1", "--direction", "up"], "--direction: 'up': expected down or right"),
+        (["1", "--json", "-o", "-"], "-o -: expected a file, since --json prints the picture"),
         (["1", "--closure", "--proof"], "--closure: expected no --proof beside it"),
         (["1", "--stages", "3"], "--stages: expected a certificate"),
         (["1", "--stages", "one"], "--stages: 'one': expected an integer from 2 upwards, or all"),

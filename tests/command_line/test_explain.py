@@ -115,6 +115,10 @@ def test_what_is_no_certificate_is_unreadable(run: Runner, name: str) -> None:
         ([EXCHANGE, "-o", "x.json"], "-o x.json: expected --steps elementary with it"),
         ([EXCHANGE, "--format", "latex", "--json"], "--format latex with --json"),
         (
+            [EXCHANGE, "--steps", "elementary", "--json", "-o", "-"],
+            "-o -: expected a file, since --json prints the explanation there",
+        ),
+        (
             [EXCHANGE, "--steps", "elementary", "-o", "no/such/folder/x.json"],
             "'no/such/folder/x.json' cannot be written",
         ),
