@@ -161,11 +161,17 @@ def _iter_tried(explored: Mapping[str, Any], terminal: Terminal) -> Iterator[str
 def _gathered(tried: Sequence[str]) -> list[str]:
     """What was tried, the symmetries with one result on one line.
 
-    "equal invariants, mirror: jones" and the like have a symmetry between comma and colon.
+    "equal invariants, mirror: jones" and the like have a symmetry between comma and colon; where no
+    other than the identity was asked for, nobody needs it.
     """
     groups: dict[tuple[str, str], list[str]] = {}
     for item in tried:
         kind, comma, rest = item.partition(", ")
         symmetry, colon, result = rest.partition(": ")
         groups.setdefault((kind + comma, colon + result), []).append(symmetry)
-    return [f"{kind}{', '.join(names)}{result}" for (kind, result), names in groups.items()]
+    return [
+        kind.removesuffix(", ") + result
+        if names == ["identity"]
+        else f"{kind}{', '.join(names)}{result}"
+        for (kind, result), names in groups.items()
+    ]

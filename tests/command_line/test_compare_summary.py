@@ -91,6 +91,15 @@ def test_undecided_reports_are_short(columns: int) -> None:
     assert len(lines) <= 20
 
 
+def test_the_identity_alone_is_not_named() -> None:
+    """Where no symmetric image was asked for, there is nothing to tell it from."""
+    tried = ("equal invariants, identity: jones", "search for moves, identity", "x, mirror: y")
+    lines = summary(undecided("node limit", 7, 1.0, *tried), question(), 79)
+    assert {"equal invariants: jones", "search for moves", "x, mirror: y"} <= {
+        line.strip() for line in lines
+    }
+
+
 POLYNOMIALS = st.lists(
     st.tuples(st.integers(-400, 400), st.integers(-999, 999).filter(bool)),
     min_size=1,
