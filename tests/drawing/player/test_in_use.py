@@ -171,7 +171,9 @@ def test_nothing_is_cut_off(browser: DrivenBrowser, tmp_path: Path, width: int) 
             browser.press("c")
             for stop in range(int(browser.run("document.getElementById('slider').max")) + 1):
                 browser.run(SLIDE % stop)
-                assert browser.run("document.documentElement.scrollWidth <= innerWidth")
+                assert browser.run(
+                    "document.documentElement.scrollWidth <= document.documentElement.clientWidth"
+                )
                 assert browser.run(
                     "[...document.querySelectorAll('.paper')].every((paper) => {"
                     "const room = paper.getBoundingClientRect();"
