@@ -56,7 +56,7 @@ def answer(arguments: Sequence[str]) -> Answer:
     given = _parser().read(arguments)
     _check_choices(given)
     if given.output not in (None, "-"):
-        _check_picture_destination(given.output)
+        _check_picture_destination(given.output, given.link)
     drawn = _draw(given)
     file = None if given.output == "-" else given.output
     if file is not None:
@@ -205,11 +205,13 @@ def _read_file(name: str) -> str:
         raise InputError(f"LINK: {name!r}: expected a file of text in UTF-8") from None
 
 
-def _check_picture_destination(path: str) -> None:
+def _check_picture_destination(path: str, link: str) -> None:
     try:
         check_destination(path)
     except InputError as error:  # its line speaks of a certificate
         raise InputError(f"picture {str(error).removeprefix('certificate ')}") from None
+    if os.path.isfile(link) and os.path.exists(path) and os.path.samefile(link, path):
+        raise InputError(f"-o {path}: expected another file than LINK, which it would replace")
 
 
 def _write_picture(picture: str, path: str) -> None:

@@ -88,17 +88,18 @@ def _check_options(given: Namespace) -> None:
 
 def _read(file: str) -> Certificate:
     """The certificate in the file. Raises InputError, which names the file and what is wrong."""
+    name = "standard input" if file == "-" else file
     try:
         data = _read_bytes(file)
         if len(data) > _LARGEST_FILE:
             raise InputError(f"more than {_LARGEST_FILE} bytes: expected a smaller file")
         return parse_certificate(data.decode("utf-8"))
     except OSError as error:
-        raise InputError(f"{file}: {error.strerror}: expected a certificate file") from None
+        raise InputError(f"{name}: {error.strerror}: expected a certificate file") from None
     except UnicodeDecodeError:
-        raise InputError(f"{file}: expected text in UTF-8") from None
+        raise InputError(f"{name}: expected text in UTF-8") from None
     except InputError as error:
-        raise InputError(f"{file}: {error}") from None
+        raise InputError(f"{name}: {error}") from None
 
 
 def _read_bytes(file: str) -> bytes:

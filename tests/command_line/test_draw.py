@@ -59,6 +59,18 @@ def test_files_are_written_whole(run: Runner, tmp_path: Path) -> None:
     assert os.listdir(tmp_path) == ["closure.svg"]
 
 
+def test_a_certificate_is_not_replaced_by_its_picture(
+    run: Runner, proof: Path, tmp_path: Path
+) -> None:
+    """-o with the file that is drawn, under whatever name, is refused; nothing is written."""
+    before = proof.read_bytes()
+    (tmp_path / "other").symlink_to(proof)
+    for name in (str(proof), str(tmp_path / "other")):
+        line = run.fail("draw", str(proof), "--page", "-o", name)
+        assert line.endswith(f"-o {name}: expected another file than LINK, which it would replace")
+    assert proof.read_bytes() == before
+
+
 def test_devices_stay_devices(run: Runner) -> None:
     """A picture may be written to what is no file."""
     assert run("draw", "1", "-o", os.devnull).status == 0

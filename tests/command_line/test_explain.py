@@ -147,6 +147,14 @@ def test_standard_input_is_read(run: Runner, monkeypatch: pytest.MonkeyPatch) ->
     assert run("explain", "-").output == run("explain", JONES).output
 
 
+def test_standard_input_is_named(run: Runner, monkeypatch: pytest.MonkeyPatch) -> None:
+    """What is wrong with it is said of standard input, not of a minus sign."""
+    monkeypatch.setattr(sys, "stdin", io.TextIOWrapper(io.BytesIO(b"{")))
+    assert run.fail("explain", "-").startswith("braidsearch explain: standard input: certificate: ")
+    monkeypatch.setattr(sys, "stdin", None)
+    assert run.fail("explain", "-").endswith("standard input: it is closed: expected a certificate")
+
+
 def test_lines_follow_the_width_of_a_terminal(run: Runner, monkeypatch: pytest.MonkeyPatch) -> None:
     """On a terminal of 60 columns no line is longer, and no letter is cut."""
     monkeypatch.setattr(type(sys.stdout), "isatty", lambda _: True, raising=False)
