@@ -11,7 +11,7 @@ from typing import Any
 import numpy as np
 
 from braidsearch import compiling
-from braidsearch.arc_walk import kernels
+from braidsearch.arc_walk import direct_kernel, kernels
 from braidsearch.diagrams import ArcMove, ArcMoveKind, ArcPresentation
 from braidsearch.errors import CapacityError
 
@@ -48,11 +48,17 @@ class Walk:
 
     def iter_moves(self) -> Iterator[ArcMove]:
         """The accepted moves in order, by walking once more with a trace."""
-        trace = _zeros(3 * self.moves, np.int32)
-        cells, capacity, numbers = _packed(self.start, self.seed, self.plan)
-        kernels.walk(cells, capacity, numbers, _plan_cells(self.plan), trace)
+        trace = recorded(self)
         for place in range(0, 3 * self.moves, 3):
             yield ArcMove(ArcMoveKind(trace[place]), int(trace[place + 1]), int(trace[place + 2]))
+
+
+def recorded(walk: Walk) -> Any:
+    """The accepted moves of a walk in a row, three numbers each, by walking once more."""
+    trace = zeros(3 * walk.moves, np.int32)
+    cells, capacity, numbers = _packed(walk.start, walk.seed, walk.plan)
+    kernels.walk(cells, capacity, numbers, _plan_cells(walk.plan), trace)
+    return trace
 
 
 def walk(arcs: ArcPresentation, seed: int, plan: Sequence[Phase]) -> Walk:
@@ -62,7 +68,7 @@ def walk(arcs: ArcPresentation, seed: int, plan: Sequence[Phase]) -> Walk:
     """
     phases = tuple(plan)
     cells, capacity, numbers = _packed(arcs, seed, phases)
-    kernels.walk(cells, capacity, numbers, _plan_cells(phases), _zeros(0, np.int32))
+    kernels.walk(cells, capacity, numbers, _plan_cells(phases), zeros(0, np.int32))
     size = int(numbers[kernels.SIZE])
     end = ArcPresentation(
         tuple(map(int, cells[:size])), tuple(map(int, cells[capacity : capacity + size]))
@@ -102,33 +108,49 @@ def is_compiled() -> bool:
     """
     if not compiling.is_compiled():
         return False
-    circle = np.array([0, 1, 1, 0, 0, 1, 1, 0], dtype=np.int16)
-    numbers = np.array([2, 1, 1, 0, 0, 0], dtype=np.int64)
-    plan = np.array([1, 0, 0, 0], dtype=np.int64)
     try:
         with compiling.interrupts_deferred():
-            kernels.walk(circle, 2, numbers, plan, np.zeros(0, dtype=np.int32))
+            _call_all()
     except Exception:  # whatever the compiler raises, the plain loops need none of it
         compiling.switch_off()
         importlib.reload(kernels)
+        importlib.reload(direct_kernel)
         return False
     return True
 
 
+def _call_all() -> None:
+    """Call every compiled loop once, on a circle of two columns, so that it is compiled."""
+    circle = np.array([0, 1, 1, 0, 0, 1, 1, 0], dtype=np.int16)
+    numbers = np.array([2, 1, 1, 0, 0, 0], dtype=np.int64)
+    plan = np.array([1, 0, 0, 0], dtype=np.int64)
+    trace = np.zeros(3, dtype=np.int32)
+    kernels.walk(circle, 2, numbers, plan, trace)
+    marks, *room = (np.zeros(4, dtype=np.int64) for _ in range(6))
+    direct_kernel.mark_visits(circle, 2, 2, trace, 0, marks)
+    direct_kernel.find_way(room[0], trace, 0, *room[1:])
+
+
 def _packed(arcs: ArcPresentation, seed: int, plan: tuple[Phase, ...]) -> tuple[Any, int, Any]:
     """The cells of a presentation with room for the splits of a plan, and the walk's numbers."""
+    cells, capacity = cells_of(arcs, plan)
+    numbers = zeros(kernels.NUMBERS, np.int64)
+    numbers[kernels.SIZE] = arcs.size
+    numbers[kernels.STRANDS] = arcs.strands
+    numbers[kernels.RANDOM] = (mixed_seed(seed) >> 3) or 1  # below 2^61, and not the fixed point 0
+    return cells, capacity, numbers
+
+
+def cells_of(arcs: ArcPresentation, plan: Sequence[Phase]) -> tuple[Any, int]:
+    """The cells of a presentation with room for the splits of a plan, and their capacity."""
     size = arcs.size
     capacity = size + sum(phase.splits for phase in plan)
     if capacity > LARGEST_SIZE:
         raise CapacityError(f"{capacity} columns: a walk takes at most {LARGEST_SIZE}")
-    cells = _zeros(4 * capacity, np.int16)
+    cells = zeros(4 * capacity, np.int16)
     for section, values in enumerate((arcs.starts, arcs.ends, arcs.leaves, arcs.enters)):
         cells[section * capacity : section * capacity + size] = values
-    numbers = _zeros(kernels.NUMBERS, np.int64)
-    numbers[kernels.SIZE] = size
-    numbers[kernels.STRANDS] = arcs.strands
-    numbers[kernels.RANDOM] = (mixed_seed(seed) >> 3) or 1  # below 2^61, and not the fixed point 0
-    return cells, capacity, numbers
+    return cells, capacity
 
 
 def _plan_cells(plan: tuple[Phase, ...]) -> Any:
@@ -139,6 +161,6 @@ def _plan_cells(plan: tuple[Phase, ...]) -> Any:
     return np.array(values, dtype=np.int64) if is_compiled() else values
 
 
-def _zeros(count: int, kind: type[np.generic]) -> Any:
+def zeros(count: int, kind: type[np.generic]) -> Any:
     """Zeros for the compiled loops; for the plain ones a list, whose integers cannot overflow."""
     return np.zeros(count, dtype=kind) if is_compiled() else [0] * count

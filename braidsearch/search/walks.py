@@ -2,10 +2,19 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Sequence
 
-from braidsearch.arc_walk import HeatRange, Phase, Walk, cooled, find_short, mixed_seed, walk
-from braidsearch.diagrams import ArcMove, ArcPresentation, word_from_arcs
+from braidsearch.arc_walk import (
+    HeatRange,
+    Phase,
+    Walk,
+    cooled,
+    find_short,
+    iter_direct_moves,
+    mixed_seed,
+    walk,
+)
+from braidsearch.diagrams import ArcPresentation, word_from_arcs
 from braidsearch.diagrams.arc_cuts import presentation_key
 from braidsearch.normal_form.left_normal_form import ShouldStop, never
 from braidsearch.search.route import Route, Stretch
@@ -23,12 +32,7 @@ COOLING_TRIES_A_LETTER = 3_000
 def walked_stretch(start: Braid, walks: Sequence[Walk]) -> Stretch:
     """The stretch from a word through walks that begin at its own arc presentation."""
     end = word_from_arcs(walks[-1].end)
-    return Stretch(end, lambda: walk_moves(start, _iter_moves(walks)))
-
-
-def _iter_moves(walks: Sequence[Walk]) -> Iterator[ArcMove]:
-    for part in walks:
-        yield from part.iter_moves()
+    return Stretch(end, lambda: walk_moves(start, iter_direct_moves(walks)))
 
 
 def cooled_route(

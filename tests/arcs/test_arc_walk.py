@@ -36,13 +36,14 @@ PLAN = (
 SCRIPT = """
 import sys
 {prelude}
-from braidsearch.arc_walk import Phase, find_short, walk
+from braidsearch.arc_walk import Phase, find_short, iter_direct_moves, walk
 from braidsearch.arc_walk.walking import is_compiled
 from braidsearch.diagrams import arcs_from_word
 from braidsearch.words import Braid
 arcs = arcs_from_word(Braid([1, -2, 3, 3, 1, -2, 2, 1, -3, 2]))
 done = walk(arcs, 17, (Phase(3000, 9, merges=0.5, exchanges=0.5), Phase(500)))
 print(done.end, done.moves)
+print(*iter_direct_moves([done, walk(done.end, 18, (Phase(800, 2), Phase(300)))]))
 print(find_short(Braid([3, 3, -2, 3, -2, -1, -1, -1, 2, -1, 2]), 5, 20000)[0].arcs)
 print(is_compiled(), file=sys.stderr)
 """
