@@ -88,24 +88,29 @@ def place_all(
 
     The last finding of a form is "same" when it was found to be a candidate.
     """
-    known = list(candidates)
+    known, values = list(candidates), Values()
     results = []
     for form, marks in forms:
         agreeing = [other for other, theirs in known if marks.first_difference(theirs) is None]
-        findings = place(form, agreeing, effort)
+        findings = place(form, agreeing, effort, values)
         results.append(findings)
         if not findings or findings[-1].outcome != "same":
             known.append((form, marks))
     return results
 
 
-def place(form: Braid, candidates: Sequence[Braid], effort: Effort) -> tuple[Finding, ...]:
+def place(
+    form: Braid, candidates: Sequence[Braid], effort: Effort, values: Values | None = None
+) -> tuple[Finding, ...]:
     """What is found about each candidate, by steps each dearer than the one before.
+
+    ``values`` holds the values of invariants that were computed for these braids before.
 
     Every step is taken for all candidates that are left before the next one is. Sameness with one
     of them ends it, and is the last finding then.
     """
-    questions = [_Question(form, candidate, effort) for candidate in candidates]
+    known = Values() if values is None else values
+    questions = [_Question(form, candidate, effort, known) for candidate in candidates]
     findings: dict[Braid, Finding] = {}
     for step in _iter_steps(effort):
         for question in questions:
@@ -154,13 +159,13 @@ def _course(effort: Effort) -> Course:
 class _Question:
     """A form and one candidate; each step gives a finding, or None where it leaves it open."""
 
-    def __init__(self, form: Braid, candidate: Braid, effort: Effort) -> None:
+    def __init__(self, form: Braid, candidate: Braid, effort: Effort, values: Values) -> None:
         self.left, self.right, self.effort = form, candidate, effort
         self.budget = Budget(effort.limits)
         # Canonical forms up to 3 strands are equal, or the links differ: no search is needed.
         self.is_classified = is_classified(form) and is_classified(candidate)
         self.meeting: Meeting | None = None
-        self.values = Values()
+        self.values = values
 
     def tell_apart(self) -> Finding | None:
         """What is cheap and decides most: sublinks, or the classification of closed 3-braids."""

@@ -69,7 +69,7 @@ CREATE TABLE evidence (
     verdict TEXT NOT NULL CHECK (verdict IN ('same', 'different')),
     reason TEXT NOT NULL, certificate TEXT NOT NULL
 ) STRICT;
-CREATE INDEX evidence_by_left ON evidence (left);
+CREATE INDEX evidence_by_left ON evidence (left, right);
 CREATE INDEX evidence_by_right ON evidence (right);
 CREATE TABLE undecided (
     left INTEGER NOT NULL REFERENCES forms, right INTEGER NOT NULL REFERENCES forms,
