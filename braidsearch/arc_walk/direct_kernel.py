@@ -1,6 +1,8 @@
 """The inner loops that find the shortest way among the presentations that walks have visited.
 
-As in the kernels of walks, all integers stay below 2^62, so that the loops hold plain too.
+As in the kernels of walks, all integers stay below 2^62, so that the loops hold plain too. A zero
+is added to what is read from arrays of narrow integers: it is a wide one then, and each loop is
+compiled for one type alone.
 """
 
 # ruff: noqa: PLR0913, PLR0917 - loose arguments, since compiled loops take no objects of ours
@@ -31,22 +33,24 @@ def mark_of_all(cells: Cells, capacity: int, size: int, multiplier: int) -> int:
     """The mark of a presentation: the sum of the marks of its columns."""
     total = 0
     for column in range(size):
-        total += mark_of_column(column, cells[column], cells[capacity + column], multiplier)
+        start, end = 0 + cells[column], 0 + cells[capacity + column]
+        total += mark_of_column(column, start, end, multiplier)
     return total % _PRIME
 
 
 @compiled
 def mark_of_two(cells: Cells, capacity: int, base: int, p: int, q: int, multiplier: int) -> int:
     """The part of the mark that a swap of the neighbours p and q of an axis changes."""
-    if base == 0:
-        return mark_of_column(p, cells[p], cells[capacity + p], multiplier) + mark_of_column(
-            q, cells[q], cells[capacity + q], multiplier
-        )
-    leaving, entering = cells[base + p], cells[base + capacity + p]
-    third, fourth = cells[base + q], cells[base + capacity + q]
+    first, second = 0 + p, 0 + q
+    third = fourth = -1
+    if base:
+        first, second = 0 + cells[base + p], 0 + cells[base + capacity + p]
+        third, fourth = 0 + cells[base + q], 0 + cells[base + capacity + q]
     total = 0
-    for column in (leaving, entering, third, fourth):
-        total += mark_of_column(column, cells[column], cells[capacity + column], multiplier)
+    for column in (first, second, third, fourth):
+        if column >= 0:
+            start, end = 0 + cells[column], 0 + cells[capacity + column]
+            total += mark_of_column(column, start, end, multiplier)
     # A column that joins the two rows stands in the sum twice, before and after alike.
     return total
 
@@ -74,7 +78,7 @@ def mark_visits(
     second = mark_of_all(cells, capacity, size, _SECOND)
     marks[0] = first * (_PRIME + 1) + second
     for i in range(count):
-        code, p, new = trace[3 * i], trace[3 * i + 1], trace[3 * i + 2]
+        code, p, new = 0 + trace[3 * i], 0 + trace[3 * i + 1], 0 + trace[3 * i + 2]
         axis = code % 2 if code < _SPLIT else (code - _SPLIT) // 2
         base = axis * 2 * capacity
         q = p + 1 if p + 1 < size else 0

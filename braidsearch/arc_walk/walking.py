@@ -11,7 +11,7 @@ from typing import Any
 import numpy as np
 
 from braidsearch import compiling
-from braidsearch.arc_walk import direct_kernel, kernels
+from braidsearch.arc_walk import kernels
 from braidsearch.diagrams import ArcMove, ArcMoveKind, ArcPresentation
 from braidsearch.errors import CapacityError
 
@@ -108,27 +108,17 @@ def is_compiled() -> bool:
     """
     if not compiling.is_compiled():
         return False
-    try:
-        with compiling.interrupts_deferred():
-            _call_all()
-    except Exception:  # whatever the compiler raises, the plain loops need none of it
-        compiling.switch_off()
-        importlib.reload(kernels)
-        importlib.reload(direct_kernel)
-        return False
-    return True
-
-
-def _call_all() -> None:
-    """Call every compiled loop once, on a circle of two columns, so that it is compiled."""
     circle = np.array([0, 1, 1, 0, 0, 1, 1, 0], dtype=np.int16)
     numbers = np.array([2, 1, 1, 0, 0, 0], dtype=np.int64)
     plan = np.array([1, 0, 0, 0], dtype=np.int64)
-    trace = np.zeros(3, dtype=np.int32)
-    kernels.walk(circle, 2, numbers, plan, trace)
-    marks, *room = (np.zeros(4, dtype=np.int64) for _ in range(6))
-    direct_kernel.mark_visits(circle, 2, 2, trace, 0, marks)
-    direct_kernel.find_way(room[0], trace, 0, *room[1:])
+    try:
+        with compiling.interrupts_deferred():
+            kernels.walk(circle, 2, numbers, plan, np.zeros(0, dtype=np.int32))
+    except Exception:  # whatever the compiler raises, the plain loops need none of it
+        compiling.switch_off()
+        importlib.reload(kernels)
+        return False
+    return True
 
 
 def _packed(arcs: ArcPresentation, seed: int, plan: tuple[Phase, ...]) -> tuple[Any, int, Any]:

@@ -4,10 +4,11 @@ from collections import deque
 from collections.abc import Iterable, Sequence
 
 import networkx as nx
+import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from braidsearch.arc_walk import Phase, Walk, iter_direct_moves, walk
+from braidsearch.arc_walk import Phase, Walk, direct, iter_direct_moves, walk
 from braidsearch.diagrams import (
     ArcMove,
     ArcMoveKind,
@@ -78,3 +79,12 @@ def test_a_long_walk_on_few_columns_is_much_longer_than_its_way() -> None:
     moves = list(iter_direct_moves([done]))
     assert apply_arc_moves(arcs, moves) == done.end
     assert 20 * len(moves) < done.moves
+
+
+def test_where_the_loops_cannot_be_compiled_all_moves_are_made(
+    monkeypatch: pytest.MonkeyPatch,
+) -> None:
+    """A walk's own moves, every one, are a way to its end as well."""
+    monkeypatch.setattr(direct, "_kernel", lambda: None)
+    done = walk(arcs_from_word(Braid([1, -2, 1])), 3, (Phase(500),))
+    assert list(iter_direct_moves([done])) == list(done.iter_moves())
