@@ -25,7 +25,7 @@ def iter_direct_moves(walks: Sequence[Walk]) -> Iterator[ArcMove]:
         return
     traces = [recorded(part) for part in walks]
     trace = np.concatenate([np.asarray(one) for one in traces])
-    marks = [_marks(kernel, part, one) for part, one in zip(walks, traces, strict=True)]
+    marks = [marks_of(kernel, part, one) for part, one in zip(walks, traces, strict=True)]
     visits = np.concatenate([marks[0], *(one[1:] for one in marks[1:])])
     for place in _way(kernel, visits, trace)[::-1]:
         code, position, new = map(int, trace[3 * place : 3 * place + 3])
@@ -53,7 +53,7 @@ def _kernel() -> ModuleType | None:
     return direct_kernel
 
 
-def _marks(kernel: ModuleType, part: Walk, trace: object) -> np.ndarray:
+def marks_of(kernel: ModuleType, part: Walk, trace: object) -> np.ndarray:
     """A number for each presentation that a walk visits, equal just for equal ones."""
     marks = zeros(part.moves + 1, np.int64)
     cells, capacity = cells_of(part.start, part.plan)

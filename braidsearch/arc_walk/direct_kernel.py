@@ -10,9 +10,8 @@ compiled for one type alone.
 from braidsearch.arc_walk.kernels import Cells, apply_merge, apply_split, shape_after_merge
 from braidsearch.compiling import compiled
 
-_PRIME = 2147483647  # 2^31 - 1
-_SPREAD = 16384  # columns and rows are fewer
-_FIRST, _SECOND = 1220703125, 742938285
+PRIME = 2147483647  # 2^31 - 1
+FIRST, SECOND = 1220703125, 742938285
 
 _MERGE, _SPLIT = 2, 4  # the least codes of these kinds of moves; below are swaps
 
@@ -20,12 +19,12 @@ _MERGE, _SPLIT = 2, 4  # the least codes of these kinds of moves; below are swap
 @compiled
 def mark_of_column(column: int, start: int, end: int, multiplier: int) -> int:
     """A number that looks random, the same for the same column from row start to row end."""
-    mark = ((column * _SPREAD + start) * _SPREAD + end) % _PRIME
-    mark = mark * multiplier % _PRIME
+    mark = (column * multiplier + start) % PRIME
+    mark = (mark * multiplier + end) % PRIME
     mark ^= mark >> 15
-    mark = mark * multiplier % _PRIME
+    mark = mark * multiplier % PRIME
     mark ^= mark >> 13
-    return mark * multiplier % _PRIME
+    return mark * multiplier % PRIME
 
 
 @compiled
@@ -35,7 +34,7 @@ def mark_of_all(cells: Cells, capacity: int, size: int, multiplier: int) -> int:
     for column in range(size):
         start, end = 0 + cells[column], 0 + cells[capacity + column]
         total += mark_of_column(column, start, end, multiplier)
-    return total % _PRIME
+    return total % PRIME
 
 
 @compiled
@@ -74,21 +73,21 @@ def mark_visits(
     Equal presentations have equal numbers, and different ones different numbers but for a chance
     of one in 2^61.
     """
-    first = mark_of_all(cells, capacity, size, _FIRST)
-    second = mark_of_all(cells, capacity, size, _SECOND)
-    marks[0] = first * (_PRIME + 1) + second
+    first = mark_of_all(cells, capacity, size, FIRST)
+    second = mark_of_all(cells, capacity, size, SECOND)
+    marks[0] = first * (PRIME + 1) + second
     for i in range(count):
         code, p, new = 0 + trace[3 * i], 0 + trace[3 * i + 1], 0 + trace[3 * i + 2]
         axis = code % 2 if code < _SPLIT else (code - _SPLIT) // 2
         base = axis * 2 * capacity
         q = p + 1 if p + 1 < size else 0
         if code < _MERGE:
-            first -= mark_of_two(cells, capacity, base, p, q, _FIRST)
-            second -= mark_of_two(cells, capacity, base, p, q, _SECOND)
+            first -= mark_of_two(cells, capacity, base, p, q, FIRST)
+            second -= mark_of_two(cells, capacity, base, p, q, SECOND)
             swap(cells, capacity, base, p, q)
-            first += mark_of_two(cells, capacity, base, p, q, _FIRST)
-            second += mark_of_two(cells, capacity, base, p, q, _SECOND)
-            first, second = first % _PRIME, second % _PRIME
+            first += mark_of_two(cells, capacity, base, p, q, FIRST)
+            second += mark_of_two(cells, capacity, base, p, q, SECOND)
+            first, second = first % PRIME, second % PRIME
         else:
             if code < _SPLIT:
                 kind, _ = shape_after_merge(cells, capacity, size, base, p, q)
@@ -97,9 +96,9 @@ def mark_visits(
             else:
                 apply_split(cells, capacity, size, base, p, new, 1 + (code - _SPLIT) % 2)
                 size += 1
-            first = mark_of_all(cells, capacity, size, _FIRST)
-            second = mark_of_all(cells, capacity, size, _SECOND)
-        marks[i + 1] = first * (_PRIME + 1) + second
+            first = mark_of_all(cells, capacity, size, FIRST)
+            second = mark_of_all(cells, capacity, size, SECOND)
+        marks[i + 1] = first * (PRIME + 1) + second
 
 
 @compiled

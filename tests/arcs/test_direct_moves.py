@@ -2,13 +2,17 @@
 
 from collections import deque
 from collections.abc import Iterable, Sequence
+from itertools import product
 
 import networkx as nx
+import numpy as np
 import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from braidsearch.arc_walk import Phase, Walk, direct, iter_direct_moves, walk
+from braidsearch.arc_walk import Phase, Walk, direct, direct_kernel, iter_direct_moves, walk
+from braidsearch.arc_walk.direct_kernel import mark_of_column
+from braidsearch.arc_walk.walking import recorded
 from braidsearch.diagrams import (
     ArcMove,
     ArcMoveKind,
@@ -88,3 +92,30 @@ def test_where_the_loops_cannot_be_compiled_all_moves_are_made(
     monkeypatch.setattr(direct, "_kernel", lambda: None)
     done = walk(arcs_from_word(Braid([1, -2, 1])), 3, (Phase(500),))
     assert list(iter_direct_moves([done])) == list(done.iter_moves())
+
+
+def test_no_two_pairs_of_columns_have_one_mark() -> None:
+    """Presentations that differ in two columns are told apart, whichever these are."""
+    both = [
+        np.array(
+            [mark_of_column(*column, one) for column in product(range(17), range(9), range(9))]
+        )
+        for one in (direct_kernel.FIRST, direct_kernel.SECOND)
+    ]
+    rows, columns = np.triu_indices(len(both[0]), 1)
+    first, second = ((marks[rows] + marks[columns]) % direct_kernel.PRIME for marks in both)
+    pairs = first * (direct_kernel.PRIME + 1) + second
+    assert len(np.unique(pairs)) == len(pairs) > 900_000
+
+
+@pytest.mark.parametrize("letters", [10, 30])
+def test_a_long_walk_marks_presentations_as_they_are(letters: int) -> None:
+    """Of tens of thousands of visits, those have one mark that are of one presentation."""
+    braid = Braid([1, -2, 3, 4, -3, 2, -1, 1, -2, -4] * (letters // 10))
+    done = walk(arcs_from_word(braid), 5, (Phase(3_000, 3, merges=0.0), Phase(60_000, merges=0.0)))
+    stages = visited(done.start, done.iter_moves())
+    marks = direct.marks_of(direct_kernel, done, recorded(done))
+    assert len(set(zip(stages, marks.tolist(), strict=True))) == len(set(stages))
+    assert len(set(marks.tolist())) == len(set(stages))
+    moves = list(iter_direct_moves([done]))
+    assert apply_arc_moves(done.start, moves) == done.end
