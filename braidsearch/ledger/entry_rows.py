@@ -99,6 +99,13 @@ class EntryRows(Database):
         )
         return bool(rows) and rows[0] != _columns_of(entry.braid)
 
+    def is_doubled(self, entry: Entry) -> bool:
+        """Whether the name and the word of an entry stand under another source as well."""
+        condition = "entries.name = ? AND source != ? AND strands = ? AND word = ?"
+        statement = f"SELECT 1 FROM entries JOIN braids ON braids.id = braid WHERE {condition}"
+        values = [entry.name, entry.source, *_columns_of(entry.braid)]
+        return bool(self.one(statement, values))
+
     def entries(
         self, condition: str = "1", values: Iterable[Any] = (), most: int = -1
     ) -> list[StoredEntry]:

@@ -31,10 +31,15 @@ DEFAULT_NODES = 1_000
 
 @dataclass(frozen=True, slots=True)
 class AddSummary:
-    """What ``add`` did: entries that are new, and entries that were there already."""
+    """What ``add`` did: entries that are new, and entries that were there already.
+
+    Of the new ones ``doubled`` have the name and the word that an entry of another source has, as
+    when one file is entered twice under two names.
+    """
 
     added: int
     known: int
+    doubled: int = 0
 
 
 @dataclass(frozen=True, slots=True)
@@ -90,7 +95,7 @@ class Ledger:
         """
         from braidsearch.ledger.reading.catalogue_file import check_label  # noqa: PLC0415 - for this
 
-        added = known = 0
+        added = known = doubled = 0
         with blaming_damage(self.store), self.store.writing():
             for entry in entries:
                 if not entry.name:
@@ -101,9 +106,10 @@ class Ledger:
                 check_label(entry.source, "source")
                 if self.store.add_entry(entry):
                     added += 1
+                    doubled += self.store.is_doubled(entry)
                 else:
                     known += 1
-        return AddSummary(added, known)
+        return AddSummary(added, known, doubled)
 
     def conflicts(self, entries: Sequence[Entry]) -> list[tuple[Entry, str]]:
         """The entries that ``add`` would refuse, each with the reason in words."""
@@ -150,15 +156,18 @@ class Ledger:
         """
         return find_entry(self.store, reference)
 
-    def proof(self, left: str, right: str, *, up_to: Sequence[str] = ()) -> Proof:
+    def proof(
+        self, left: str | StoredEntry, right: str | StoredEntry, *, up_to: Sequence[str] = ()
+    ) -> Proof:
         """What the evidence in the ledger says of two entries, joined into one certificate.
 
-        Raises InputError for an entry that there is not, or that is not sorted yet.
+        An entry may be given as ``entry`` takes it. Raises InputError for an entry that there is
+        not, or that is not sorted yet.
         """
         check_symmetries(up_to)
         asked = tuple(dict.fromkeys(("identity", *up_to)))
         with blaming_damage(self.store), self.store.reading():
-            one, other = (self._sorted_entry(name) for name in (left, right))
+            one, other = self._sorted_entry(left), self._sorted_entry(right)
             proofs = Proofs(self.store)
             certificate = proofs.same(one.braid_number, other.braid_number, asked)
             if certificate is None:
@@ -169,8 +178,8 @@ class Ledger:
         report = judge(certificate)
         if not report.valid:
             raise InputError(
-                f"{left}, {right}: the verifier rejects the stored evidence: {report.reason}: "
-                "expected an intact ledger; ledger check says what is wrong"
+                f"{one.title}, {other.title}: the verifier rejects the stored evidence: "
+                f"{report.reason}: expected an intact ledger; ledger check says what is wrong"
             )
         return Proof(certificate.verdict, certificate.symmetry, certificate)
 
@@ -185,10 +194,10 @@ class Ledger:
         with blaming_damage(self.store):
             return Proofs(self.store).same(entry.braid_number, other.braid_number, asked)
 
-    def _sorted_entry(self, reference: str) -> StoredEntry:
-        entry = self.entry(reference)
+    def _sorted_entry(self, reference: str | StoredEntry) -> StoredEntry:
+        entry = self.entry(reference) if isinstance(reference, str) else reference
         if entry.class_number is None:
-            raise InputError(f"{reference}: not sorted yet: expected ledger sort before")
+            raise InputError(f"{entry.title}: not sorted yet: expected ledger sort before")
         return entry
 
     def _question_between(self, one: StoredEntry, other: StoredEntry) -> OpenQuestion | None:

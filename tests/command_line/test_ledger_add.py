@@ -54,12 +54,27 @@ def test_a_ledger_is_made_and_grows(run: Runner, folder: Path) -> None:
         assert ledger.entry("iris").given.startswith("pd: ")
 
 
+def test_a_file_that_is_entered_under_another_source_is_noticed(run: Runner, folder: Path) -> None:
+    """Nothing is refused: two sources may list one link under one name; but it is said."""
+    run("ledger", "add", "a.ledger", "marsh.csv", "pond.txt")
+    again = run("ledger", "add", "a.ledger", "marsh.csv", "--source", "copy")
+    assert again.status == 0
+    assert (
+        "3 new, 0 there already\n3 of the new ones: same name, same word in anoth" in again.output
+    )
+    assert run("ledger", "add", "a.ledger", "marsh.csv", "--source", "copy").output == (
+        "0 new, 3 there already\n"
+    )
+
+
 def test_json_counts_what_was_done(run: Runner, folder: Path) -> None:
     """One object with the same keys, whether anything was entered or not."""
     good = run("ledger", "add", "a.ledger", "marsh.csv", "--json").json
     bad = run("ledger", "add", "a.ledger", "bad.csv", "--json").json
     assert list(good) == list(bad)
-    assert list(good) == ["added", "known", "repeated", "mistakes", "problems", "recorded"]
+    assert list(good) == [
+        *("added", "known", "doubled", "repeated", "mistakes", "problems", "recorded")
+    ]
     assert (good["added"], bad["added"], bad["mistakes"]) == (3, 0, 2)
 
 

@@ -19,6 +19,7 @@ from braidsearch.search.driver import compare
 from braidsearch.words import SYMMETRIES, Braid, parse_word
 from tests.ledger.ledgers import (
     CLASSES,
+    HOPF,
     LINKS,
     TREFOIL,
     TWINS,
@@ -265,3 +266,14 @@ def test_a_recorded_mirror_image_makes_a_group(tmp_path: Path) -> None:
         report = ledger.report()
         assert (len(report.classes), len(report.groups)) == (2, 1)
         assert len(ledger.report(("reverse",)).groups) == 2
+
+
+def test_a_proof_is_about_the_entries_given_whatever_they_are_called(tmp_path: Path) -> None:
+    """An entry may have the number of another for its name."""
+    with Ledger(tmp_path / "ledger", create=True) as ledger:
+        ledger.add([entry("#2", "", TREFOIL), entry("#1", "", HOPF)])
+        ledger.sort()
+        first, second = ledger.store.entries()
+        proof = ledger.proof(first, second)
+        assert proof.certificate is not None
+        assert (proof.certificate.left, proof.certificate.right) == (first.braid, second.braid)

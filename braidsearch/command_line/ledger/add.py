@@ -265,6 +265,11 @@ def _answer(
         lines.append(f"{summary.added} new, {summary.known} there already")
     if contents.repeated:
         lines.append(f"{plural(contents.repeated, 'row')} repeated in the files")
+    if summary.doubled:
+        lines.append(
+            f"{summary.doubled} of the new ones: same name, same word in another source: expected "
+            "--source with the name of before, if the file is the same"
+        )
     lines += [f"{file}: {said}" for file, said in recorded]
     if summary.added:
         lines.append(f"next: braidsearch ledger sort {quoted(given.ledger)}")
@@ -277,6 +282,7 @@ def _to_json(
     return {
         "added": summary.added if summary else 0,
         "known": summary.known if summary else 0,
+        "doubled": summary.doubled if summary else 0,
         "repeated": contents.repeated,
         "mistakes": contents.problem_count,
         "problems": contents.problems,

@@ -46,7 +46,7 @@ def answer(arguments: Sequence[str]) -> Answer:
     up_to = read_symmetries(given.up_to)
     with Ledger(given.ledger) as ledger, blaming_damage(ledger.store):
         one, other = ledger.entry(given.left), ledger.entry(given.right)
-        proof = ledger.proof(f"#{one.number}", f"#{other.number}", up_to=up_to)
+        proof = ledger.proof(one, other, up_to=up_to)
     write_output(given, proof.certificate)
     status = STATUS[proof.outcome]
     if given.json:
