@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 from functools import partial
 
-from braidsearch.errors import InputError
+from braidsearch.errors import CapacityError, InputError
 from braidsearch.moves.elementary_handles import reduce_chain_handles
 from braidsearch.moves.elementary_relations import (
     Letters,
@@ -35,6 +35,9 @@ _MOST_LETTERS_FOR_BOTH = 60
 _LONG = 300
 """Beyond so many letters in a word and its conjugator, letters go as they stand."""
 
+_LONGEST_CONJUGATOR = 2_000
+"""Beyond so many letters in a word and its conjugator, no shorter conjugator is looked for."""
+
 _MOST_GROWTH = 60
 """By so many letters a word may grow before a shorter one for the same element is looked for."""
 
@@ -60,6 +63,8 @@ def conjugate_parts(word: Letters, by: Letters, target: Letters, strands: int) -
     rotation = find_rotation(Braid.trusted(word, strands), Braid.trusted(target, strands))
     if rotation is not None:
         return _rotate(word, rotation)
+    if len(word) + len(by) > _LONG:
+        return _conjugate_by_long(word, by, target, strands)
     waiting = _short_conjugator(word, by, strands)
     there = _conjugate_by_letters(word, waiting, target, strands, _MOST_GROWTH)
     if len(there) > _MANY_PARTS:
@@ -69,6 +74,23 @@ def conjugate_parts(word: Letters, by: Letters, target: Letters, strands: int) -
         return there
     back = _conjugate_by_letters(target, _inverse(waiting), word, strands, _MOST_GROWTH)
     return there if len(there) <= len(back) else _reversed_parts(back, len(word))
+
+
+def _conjugate_by_long(word: Letters, by: Letters, target: Letters, strands: int) -> list[Part]:
+    """The same for a long conjugator, as it stands or as the shortest: what has fewer letters.
+
+    Raises CapacityError where neither fits into a certificate.
+    """
+    found, failure = [], None
+    for waiting in dict.fromkeys((by, _shortest_conjugator(word, by, strands))):
+        for growth in (_MOST_GROWTH, _MOST_GROWTH // 4):
+            try:
+                found.append(_conjugate_by_letters(word, waiting, target, strands, growth))
+            except CapacityError as error:
+                failure = error
+    if failure is not None and not found:
+        raise failure
+    return min(found, key=partial(_count_letters, word))
 
 
 def _count_letters(word: Letters, parts: list[Part]) -> int:
@@ -148,18 +170,30 @@ def _rotate(word: Letters, rotation: int) -> list[Part]:
 
 
 def _short_conjugator(word: Letters, by: Letters, strands: int) -> Letters:
-    """The shortest of the words seen for a conjugator that does the same as ``by``.
+    """The shortest of the words seen for a conjugator that does the same as ``by``."""
+    fronts = _commuting_words(word, strands)
+    candidates = [reduce_handles(Braid.trusted(front + by, strands)).word for front in fronts]
+    return min((by, *candidates), key=len)
 
-    What commutes with the braid may stand in front: its own powers, and full twists.
-    """
-    if len(word) + len(by) > _LONG:
+
+def _shortest_conjugator(word: Letters, by: Letters, strands: int) -> Letters:
+    """The same for long ones: one power after the other, as long as the conjugator gets shorter."""
+    if len(word) + len(by) > _LONGEST_CONJUGATOR:
         return by
+    fronts = _commuting_words(word, strands)
+    shortest = by
+    while True:
+        found = min((_shorter_word(front + shortest, strands) for front in fronts), key=len)
+        if len(found) >= len(shortest):
+            return shortest
+        shortest = found
+
+
+def _commuting_words(word: Letters, strands: int) -> list[Letters]:
+    """What commutes with the braid and may stand in front: its own powers, and full twists."""
     twist = tuple(range(1, strands)) * strands if strands <= _MOST_STRANDS_TO_TWIST else ()
-    candidates = [by]
-    for front in ((), word, _inverse(word)):
-        for turns in dict.fromkeys(((), twist, _inverse(twist))):
-            candidates.append(reduce_handles(Braid.trusted(front + turns + by, strands)).word)
-    return min(candidates, key=len)
+    twists = dict.fromkeys(((), twist, _inverse(twist)))
+    return [front + turns for front in ((), word, _inverse(word)) for turns in twists]
 
 
 def _best_letter(word: Letters, waiting: Letters) -> tuple[int, list[Relation]]:

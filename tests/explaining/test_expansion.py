@@ -68,6 +68,22 @@ def test_an_exchange_takes_a_few_dozen_steps() -> None:
     assert len(certificate.moves) < check_expansion(certificate) <= 60
 
 
+def test_powers_and_twists_are_taken_out_of_conjugators() -> None:
+    """A conjugator of hundreds of letters that is a short one behind powers of the braid and full
+    twists, which commute with it, takes no more than a few hundred steps.
+    """
+    word, short = (1, -2, 3, 4, -3, 2, -1, 4, 2, -3), (2, -1, 3)
+    twist = (1, 2, 3, 4) * 5
+    by = word * 12 + twist * 9 + short
+    inverse = tuple(-letter for letter in reversed(short))
+    target = inverse + word + short
+    certificate = Certificate.same(
+        Braid(word, 5), Braid(target, 5), "identity", [Conjugate(by, target)]
+    )
+    assert len(by) > 300
+    assert check_expansion(certificate) <= 200
+
+
 def test_loops_are_left_out() -> None:
     """A chain that comes back to a word needs nothing in between."""
     braid = Braid([1, 2])
