@@ -17,6 +17,7 @@ from braidsearch.command_line.answer import (
     print_error,
 )
 from braidsearch.command_line.arguments import HelpRequested
+from braidsearch.command_line.choices import list_choices, unknown_choice
 from braidsearch.errors import BraidsearchError, InputError
 
 COMMANDS: dict[str, str] = {
@@ -62,20 +63,19 @@ def run() -> NoReturn:
 
 def main(arguments: Sequence[str]) -> int:
     """Carry out the command line and return the exit status; no exception leaves here."""
-    name = " ".join(["braidsearch", *arguments[:1]]) if arguments[:1] else "braidsearch"
     try:
         return deliver(_answer(arguments))
     except HelpRequested as help_requested:
         return deliver(Answer(SUCCESS, str(help_requested)))
     except BraidsearchError as error:
-        return _fail(name, str(error))
+        return _fail(arguments, str(error))
     except KeyboardInterrupt:
-        print_error(f"{name}: interrupted")
+        print_error(f"{_name(arguments)}: interrupted")
         return INTERRUPTED
     except MemoryError:
-        return _fail(name, "out of memory: expected a smaller input")
+        return _fail(arguments, "out of memory: expected a smaller input")
     except Exception as error:  # a defect: one line for the user, with the place for the report
-        return _fail(name, _describe_defect(error))
+        return _fail(arguments, _describe_defect(error))
 
 
 def _answer(arguments: Sequence[str]) -> Answer:
@@ -88,29 +88,29 @@ def _answer(arguments: Sequence[str]) -> Answer:
 
         return Answer(SUCCESS, f"braidsearch {__version__}")
     if command not in COMMANDS:
-        raise InputError(_unknown_command(command))
+        raise InputError(unknown_choice(command, "a command", COMMANDS))
     module = import_module(f"braidsearch.command_line.{command}")
     answer: Answer = module.answer(arguments[1:])
     return answer
 
 
 def _help_text() -> str:
-    width = max(map(len, COMMANDS))
-    lines = (f"  {name:<{width}}  {summary}" for name, summary in COMMANDS.items())
-    return _HELP.format(commands="\n".join(lines))
+    return _HELP.format(commands=list_choices(COMMANDS))
 
 
-def _unknown_command(command: str) -> str:
-    import difflib  # noqa: PLC0415 - only for this mistake
-
-    close = difflib.get_close_matches(command, COMMANDS, n=1)
-    meant = f" (did you mean {close[0]}?)" if close else ""
-    return f"{command!r}: expected a command, one of {', '.join(COMMANDS)}{meant}"
-
-
-def _fail(name: str, message: str) -> int:
-    print_error(one_line(f"{name}: {message}"))
+def _fail(arguments: Sequence[str], message: str) -> int:
+    print_error(one_line(f"{_name(arguments)}: {message}"))
     return USAGE_ERROR
+
+
+def _name(arguments: Sequence[str]) -> str:
+    """The command that messages begin with, with the action on a ledger if it is one."""
+    words = ["braidsearch", *arguments[:1]]
+    if arguments[:1] == ["ledger"]:
+        from braidsearch.command_line.ledger import ACTIONS  # noqa: PLC0415 - only for messages
+
+        words += [word for word in arguments[1:2] if word in ACTIONS]
+    return " ".join(words)
 
 
 def _describe_defect(error: Exception) -> str:

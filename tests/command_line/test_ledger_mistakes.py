@@ -110,7 +110,8 @@ def test_mistakes_get_one_line(run: Runner, arguments: Sequence[str], said: str)
     """Each names the offending text and what was expected; the ledger stays as it was."""
     before = dump(Path("a.ledger"))
     line = run.fail("ledger", *arguments)
-    assert line.startswith("braidsearch ledger: ")
+    action = f" {arguments[0]}" * (arguments[0] in ACTIONS)
+    assert line.startswith(f"braidsearch ledger{action}: ")
     assert said in line
     assert dump(Path("a.ledger")) == before
 

@@ -6,6 +6,7 @@ from collections.abc import Sequence
 from importlib import import_module
 
 from braidsearch.command_line.answer import SUCCESS, USAGE_ERROR, Answer
+from braidsearch.command_line.choices import list_choices, unknown_choice
 from braidsearch.errors import InputError
 
 ACTIONS: dict[str, str] = {
@@ -51,21 +52,11 @@ def answer(arguments: Sequence[str]) -> Answer:
         text = _help_text()
         return Answer(SUCCESS, text) if arguments else Answer(USAGE_ERROR, "", text)
     if action not in ACTIONS:
-        raise InputError(_unknown_action(action))
+        raise InputError(unknown_choice(action, "an action", ACTIONS))
     module = import_module(f"braidsearch.command_line.ledger.{action}")
     answer: Answer = module.answer(arguments[1:])
     return answer
 
 
 def _help_text() -> str:
-    width = max(map(len, ACTIONS))
-    lines = (f"  {name:<{width}}  {summary}" for name, summary in ACTIONS.items())
-    return _HELP.format(actions="\n".join(lines))
-
-
-def _unknown_action(action: str) -> str:
-    import difflib  # noqa: PLC0415 - only for this mistake
-
-    close = difflib.get_close_matches(action, ACTIONS, n=1)
-    meant = f" (did you mean {close[0]}?)" if close else ""
-    return f"{action!r}: expected an action, one of {', '.join(ACTIONS)}{meant}"
+    return _HELP.format(actions=list_choices(ACTIONS))
