@@ -1,4 +1,4 @@
-"""What is the same for the commands and for the actions on a ledger: listing, and mistaken names."""
+"""What commands and actions on a ledger have in common: listings, and mistaken names."""
 
 from __future__ import annotations
 

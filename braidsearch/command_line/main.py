@@ -106,7 +106,7 @@ def _fail(arguments: Sequence[str], message: str) -> int:
 def _name(arguments: Sequence[str]) -> str:
     """The command that messages begin with, with the action on a ledger if it is one."""
     words = ["braidsearch", *arguments[:1]]
-    if arguments[:1] == ["ledger"]:
+    if words[1:] == ["ledger"]:
         from braidsearch.command_line.ledger import ACTIONS  # noqa: PLC0415 - only for messages
 
         words += [word for word in arguments[1:2] if word in ACTIONS]
