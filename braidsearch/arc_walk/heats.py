@@ -15,11 +15,14 @@ class HeatRange:
     splits: tuple[int, int]
     settling: int
 
-    def plan(self, seed: int, exchanges: float) -> tuple[Phase, Phase]:
-        """A heat and the cooling after it; ``exchanges`` is the share of exchange moves made."""
+    def plan(self, seed: int, exchanges: float, times: int = 1) -> tuple[Phase, Phase]:
+        """A heat and the cooling after it; ``exchanges`` is the share of exchange moves made.
+
+        ``times`` as many tries and splits as the ranges say are made.
+        """
         least, most = self.tries
         fewest, largest = self.splits
         tries = least + seed % (most - least + 1)
         splits = fewest + seed // 1024 % (largest - fewest + 1)
-        heat = Phase(tries, splits, merges=0.0, exchanges=exchanges)
-        return heat, Phase(self.settling, exchanges=exchanges)
+        heat = Phase(times * tries, times * splits, merges=0.0, exchanges=exchanges)
+        return heat, Phase(times * self.settling, exchanges=exchanges)

@@ -21,6 +21,8 @@ from braidsearch.words import Braid
 COOLING_TRIES_A_COLUMN = 400
 _HEATS = HeatRange(tries=(100, 600), splits=(1, 3), settling=250)
 LARGEST_POOL = 64
+_COLUMNS_A_HEAT = 200  # a larger presentation is heated in several places at once: every heat takes
+# some time for each of its columns, whatever it does
 
 
 @dataclass(frozen=True, slots=True)
@@ -95,8 +97,9 @@ def find_short(  # noqa: PLR0913 - each option has its own default
     """The best presentations that about ``tries`` tries reach: fewest strands, then letters.
 
     The word's own presentation is cooled; then each round heats one of the best ones by one to
-    three splits, cools it, and takes what it finds into the pool, where only the least strand
-    count stays. At most ``keep`` results, best first; the same seed gives the same results.
+    three splits for every 200 columns, cools it, and takes what it finds into the pool, where only
+    the least strand count stays. At most ``keep`` results, best first; the same seed gives the
+    same results.
 
     An exchange move costs a proof four moves and the other swaps cost nothing, so only a share of
     ``exchanges`` of them is made: a small one for short proofs, 1 to reach as far as can be.
@@ -108,8 +111,9 @@ def find_short(  # noqa: PLR0913 - each option has its own default
     number = 0
     while spent < tries and pool.strands > braid.components and not should_stop():
         number += 1
-        plan = _HEATS.plan(mixed_seed(seed, number, 1), exchanges)
         _, chosen = pool.walks[mixed_seed(seed, number, 2) % len(pool.walks)]
+        times = max(1, chosen[-1].end.size // _COLUMNS_A_HEAT)
+        plan = _HEATS.plan(mixed_seed(seed, number, 1), exchanges, times)
         step = walk(chosen[-1].end, mixed_seed(seed, number, 3), plan)
         spent += sum(phase.tries for phase in plan)
         pool.offer((*chosen, step))

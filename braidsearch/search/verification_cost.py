@@ -23,8 +23,8 @@ def verification_seconds(invariant: Invariant, braid: Braid) -> float:
     return 0.0 if estimate is None else estimate(braid.strands, len(braid))
 
 
-def _alexander(_strands: int, letters: int) -> float:
-    return 6e-8 * letters**3
+def _alexander(strands: int, letters: int) -> float:
+    return min(4.5e-9 * letters**4, 5e-8 * strands * letters**3)
 
 
 def _jones(strands: int, letters: int) -> float:
