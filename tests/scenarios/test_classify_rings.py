@@ -20,11 +20,11 @@ from braidsearch import (
     verify,
 )
 from braidsearch.invariants import homfly_polynomial, pair_linking_numbers
-from tests.command_line.running import environment
 from tests.diagrams.polygons.curves import exact_determinant, gauss_linking_integral
 from tests.knot_tables import TableRow, iter_knots, iter_links
+from tests.scenarios.running import SCENARIOS, check_usage, run_scenario
 
-SCENARIO = Path(__file__).parents[2] / "scenarios" / "classify_rings"
+SCENARIO = SCENARIOS / "classify_rings"
 
 MADE = {
     "molecule-01": "unknot",
@@ -74,18 +74,9 @@ class Classified(NamedTuple):
 
 
 def classify(folder: Path) -> Classified:
-    finished = subprocess.run(
-        [sys.executable, str(SCENARIO / "classify.py"), str(folder)],
-        capture_output=True,
-        text=True,
-        check=False,
-        timeout=300,
-        env=environment(),
-    )
-    assert finished.stderr == ""
-    assert finished.stdout == (folder / "report.txt").read_text(encoding="utf-8")
+    done = run_scenario("classify_rings/classify.py", folder)
     types = json.loads((folder / "types.json").read_text(encoding="utf-8"))
-    return Classified(finished.returncode, finished.stdout, types, folder)
+    return Classified(*done, types, folder)
 
 
 @pytest.fixture(scope="module")
@@ -178,15 +169,7 @@ def test_the_classification_repeats(classified: Classified, tmp_path: Path) -> N
 
 def test_the_script_names_its_usage() -> None:
     """Without a folder nothing is written: exit status 2."""
-    finished = subprocess.run(
-        [sys.executable, str(SCENARIO / "classify.py")],
-        capture_output=True,
-        text=True,
-        check=False,
-        env=environment(),
-    )
-    assert finished.returncode == 2
-    assert finished.stderr == "usage: python classify.py FOLDER\n"
+    check_usage("classify_rings/classify.py")
 
 
 def test_the_coordinates_are_made_again(tmp_path: Path) -> None:

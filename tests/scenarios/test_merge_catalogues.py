@@ -27,11 +27,12 @@ from braidsearch.invariants import homfly_polynomial
 from braidsearch.verifier import verify as verifier
 from braidsearch.words import apply_symmetry
 from tests.command_line.readme_examples import commands_of, console_blocks, run_blocks
-from tests.command_line.running import Runner, environment
+from tests.command_line.running import Runner
 from tests.diagrams.polygons.curves import exact_determinant, gauss_linking_integral
 from tests.knot_tables import TableRow, iter_knots
+from tests.scenarios.running import SCENARIOS, check_usage, run_scenario
 
-SCENARIO = Path(__file__).parents[2] / "scenarios" / "merge_catalogues"
+SCENARIO = SCENARIOS / "merge_catalogues"
 README = (SCENARIO / "README.md").read_text(encoding="utf-8")
 LIMITS = SearchLimits(seconds=None, nodes=2_000)
 
@@ -75,18 +76,9 @@ class Merged(NamedTuple):
 
 
 def merge(folder: Path) -> Merged:
-    finished = subprocess.run(
-        [sys.executable, str(SCENARIO / "merge.py"), str(folder)],
-        capture_output=True,
-        text=True,
-        check=False,
-        timeout=600,
-        env=environment(),
-    )
-    assert finished.stderr == ""
-    assert finished.stdout == (folder / "report.txt").read_text(encoding="utf-8")
+    done = run_scenario("merge_catalogues/merge.py", folder)
     found = json.loads((folder / "merged.json").read_text(encoding="utf-8"))
-    return Merged(finished.returncode, finished.stdout, found, folder)
+    return Merged(*done, found, folder)
 
 
 @pytest.fixture(scope="module")
@@ -388,15 +380,7 @@ def test_the_name_of_an_entry_is_no_link(
 
 def test_the_script_names_its_usage() -> None:
     """Without a folder nothing is written: exit status 2."""
-    finished = subprocess.run(
-        [sys.executable, str(SCENARIO / "merge.py")],
-        capture_output=True,
-        text=True,
-        check=False,
-        env=environment(),
-    )
-    assert finished.returncode == 2
-    assert finished.stderr == "usage: python merge.py FOLDER\n"
+    check_usage("merge_catalogues/merge.py")
 
 
 @pytest.mark.slow

@@ -1,17 +1,13 @@
 """The scenario of the two lists of rings, run as its users run it."""
 
 import json
-import subprocess
-import sys
 from pathlib import Path
 from typing import Any, NamedTuple
 
 import pytest
 
 from braidsearch import read_certificate, verify
-from tests.command_line.running import environment
-
-SCRIPT = Path(__file__).parents[2] / "scenarios" / "merge_ring_lists" / "merge.py"
+from tests.scenarios.running import check_usage, run_scenario
 
 RINGS_BY_TYPE = [
     {"gel-01", "gel-02", "plate-3a"},
@@ -43,20 +39,9 @@ class Merged(NamedTuple):
 def merged(tmp_path_factory: pytest.TempPathFactory) -> Merged:
     """The folder that the script writes."""
     folder = tmp_path_factory.mktemp("rings") / "merged"
-    finished = subprocess.run(
-        [sys.executable, str(SCRIPT), str(folder)],
-        capture_output=True,
-        text=True,
-        check=False,
-        timeout=300,
-        env=environment(),
-    )
-    assert finished.stderr == ""
-    assert finished.stdout == (folder / "report.txt").read_text(encoding="utf-8")
+    done = run_scenario("merge_ring_lists/merge.py", folder)
     types = json.loads((folder / "types.json").read_text(encoding="utf-8"))
-    return Merged(
-        finished.returncode, finished.stdout, types, sorted((folder / "certificates").iterdir())
-    )
+    return Merged(*done, types, sorted((folder / "certificates").iterdir()))
 
 
 def test_the_lists_are_merged_as_they_were_made(merged: Merged) -> None:
@@ -97,12 +82,4 @@ def test_every_decision_has_a_certificate(merged: Merged) -> None:
 
 def test_the_script_names_its_usage() -> None:
     """Without a folder nothing is written: exit status 2."""
-    finished = subprocess.run(
-        [sys.executable, str(SCRIPT)],
-        capture_output=True,
-        text=True,
-        check=False,
-        env=environment(),
-    )
-    assert finished.returncode == 2
-    assert finished.stderr == "usage: python merge.py FOLDER\n"
+    check_usage("merge_ring_lists/merge.py")
