@@ -72,3 +72,18 @@ def command(*arguments: str) -> list[str]:
 def environment() -> dict[str, str]:
     """The environment in which a process finds the package that is tested here."""
     return {**os.environ, "PYTHONPATH": PACKAGE_HOME}
+
+
+def read_terminal(leader: int) -> bytes:
+    """All that is written on a terminal until its other end is closed."""
+    written = b""
+    while True:
+        try:
+            piece = os.read(leader, 4096)
+        except OSError:  # the other end is closed
+            break
+        if not piece:
+            break
+        written += piece
+    os.close(leader)
+    return written

@@ -14,7 +14,7 @@ from pathlib import Path
 import pytest
 from rich.cells import cell_len
 
-from tests.command_line.running import command, environment, run_process
+from tests.command_line.running import command, environment, read_terminal, run_process
 
 ESCAPE = re.compile("\x1b\\[[0-9;]*m")
 MORTON = "3 3 -2 3 -2 -1 -1 -1 2 -1 2"
@@ -50,16 +50,7 @@ def read_screen(
         env={**inherited, "PYTHONUTF8": "1", "TERM": "xterm-256color", **variables},
     )
     os.close(follower)
-    written = b""
-    while True:
-        try:
-            piece = os.read(leader, 4096)
-        except OSError:  # the other end is closed
-            break
-        if not piece:
-            break
-        written += piece
-    os.close(leader)
+    written = read_terminal(leader)
     assert process.communicate(timeout=60)[1] == b""
     return process.returncode, written.decode().replace("\r\n", "\n")
 

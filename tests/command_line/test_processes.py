@@ -11,7 +11,7 @@ from pathlib import Path
 
 import pytest
 
-from tests.command_line.running import Outcome, command, environment, run_process
+from tests.command_line.running import Outcome, command, environment, read_terminal, run_process
 
 MUTANTS = ((-1, -1, 2, -1, 2, -1, 3, -2, -2, 3, 3), (-1, -1, -1, -1, 2, 2, 1, -3, 2, 2, -3, 2, -3))
 
@@ -45,17 +45,8 @@ def run_on_terminal(*arguments: str) -> tuple[int, str, str]:
         command(*arguments), stdout=subprocess.PIPE, stderr=follower, env=environment(), text=True
     )
     os.close(follower)
-    shown = b""
-    while True:
-        try:
-            piece = os.read(leader, 1000)
-        except OSError:  # the other end is closed
-            break
-        if not piece:
-            break
-        shown += piece
+    shown = read_terminal(leader)
     output, _ = process.communicate(timeout=60)
-    os.close(leader)
     return process.returncode, output, shown.decode()
 
 
