@@ -162,7 +162,7 @@ def _piece_part(
 
 
 def _headed(part: Part, heading: str) -> Part:
-    text = Text((MARGIN / 2, 16.0), heading, 10.0, colour=QUIET)
+    text = Text((MARGIN / 2, 13.0), heading, 10.0, colour=QUIET)
     return overlay([(Part(text.width + MARGIN, 18.0, texts=(text,)), 0.0, 0.0), (part, 0.0, 14.0)])
 
 
