@@ -25,9 +25,9 @@ Measured on two quiet cores of a cloud machine, compilation of all loops include
     sorted in 276 s
     memory at most 1207 MiB, file 117 MiB
 
-Finds there: of 64 links that were different from every class, 63 were told so by their fingerprints,
-median 0.36 s, at most 0.47 s; one took 1.65 s, since a search and colourings had to decide it. With one process and
-with two, 24,000 entries were sorted in 100 s and in 56 s.
+Finds there: of 64 links that were different from every class, 63 were told so by their
+fingerprints, median 0.36 s, at most 0.47 s; one took 1.65 s, since a search and colourings had to
+decide it. With one process and with two, 24,000 entries were sorted in 100 s and in 56 s.
 """
 
 from __future__ import annotations
