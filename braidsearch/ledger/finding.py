@@ -3,11 +3,11 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from typing import TYPE_CHECKING
 
 from braidsearch.certificates import Certificate, parse_certificate
 from braidsearch.certificates.joining import join_chain, join_different
 from braidsearch.errors import CapacityError
+from braidsearch.ledger.findings import Effort, Finding
 from braidsearch.ledger.fingerprints import FIELDS, Fingerprint, fingerprint
 from braidsearch.ledger.judgements import fingerprint_certificate
 from braidsearch.ledger.preparing import form_certificate, same_certificate
@@ -17,9 +17,6 @@ from braidsearch.ledger.store import Store, StoredEntry
 from braidsearch.search.canonical_form import visible_route
 from braidsearch.search.gate import judge
 from braidsearch.words import Braid
-
-if TYPE_CHECKING:
-    from braidsearch.ledger.placing import Finding
 
 _MOST_COMPARED = 5
 
@@ -104,7 +101,7 @@ class Finder:
         return Found(outcome, compared, self.classes, self._remaining(marks), self.unsorted)
 
     def _place(self, form: Braid, candidates: list[Braid]) -> tuple[Finding, ...]:
-        from braidsearch.ledger.placing import Effort, place  # noqa: PLC0415 - loads the search, which look-ups do without
+        from braidsearch.ledger.placing import place  # noqa: PLC0415 - loads the search, which look-ups do without
 
         return place(form, candidates, Effort(self.nodes))
 

@@ -3,9 +3,9 @@
 from __future__ import annotations
 
 from braidsearch.certificates import format_certificate
+from braidsearch.ledger.findings import Finding
 from braidsearch.ledger.groups import group_classes
 from braidsearch.ledger.judgements import Judgements
-from braidsearch.ledger.placing import Finding
 from braidsearch.ledger.proofs import Proofs
 from braidsearch.ledger.store import Store
 from braidsearch.search.gate import judge

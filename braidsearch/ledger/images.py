@@ -7,8 +7,9 @@ from dataclasses import dataclass
 
 from braidsearch.certificates import Certificate, format_certificate
 from braidsearch.certificates.joining import apply_symmetry_to_moves
+from braidsearch.ledger.findings import Effort, Finding
 from braidsearch.ledger.fingerprints import Fingerprint, fingerprint
-from braidsearch.ledger.placing import Effort, Finding, ask
+from braidsearch.ledger.placing import ask
 from braidsearch.ledger.preparing import Prepared, prepare
 from braidsearch.search.gate import judge
 from braidsearch.words import Braid, apply_symmetry

@@ -8,10 +8,10 @@ from concurrent.futures import Executor, Future
 
 import networkx as nx
 
+from braidsearch.ledger.findings import Finding
 from braidsearch.ledger.groups import group_classes
 from braidsearch.ledger.images import Image, ask_images, images_of
 from braidsearch.ledger.judgements import Judgements
-from braidsearch.ledger.placing import Finding
 from braidsearch.ledger.store import Store
 from braidsearch.words import Braid
 

@@ -6,13 +6,13 @@ from collections.abc import Sequence
 from typing import TYPE_CHECKING
 
 from braidsearch.certificates import Certificate, Distinction, format_certificate
+from braidsearch.ledger.findings import Effort, Finding
 from braidsearch.ledger.fingerprints import Fingerprint
 from braidsearch.ledger.store import Store
 from braidsearch.search.gate import judge
 from braidsearch.words import Braid
 
 if TYPE_CHECKING:
-    from braidsearch.ledger.placing import Effort, Finding
     from braidsearch.ledger.preparing import Prepared
 
 
@@ -29,8 +29,6 @@ class Judgements:
 
     def take_form(self, number: int, prepared: Prepared, findings: Sequence[Finding]) -> None:
         """Place a braid of an entry at its form; a new form joins a class or becomes one."""
-        from braidsearch.ledger.placing import Finding  # noqa: PLC0415 - loads the search, which look-ups do without
-
         store = self.store
         if store.is_placed(number):
             return
@@ -143,8 +141,6 @@ class Judgements:
         Each value was confirmed by the verifier alone; a certificate of two of them may yet be
         more than it takes at once, and then there is no number.
         """
-        from braidsearch.ledger.placing import Finding  # noqa: PLC0415 - loads the search, which look-ups do without
-
         left, right = self.store.form_of_class(one), self.store.form_of_class(other)
         marks, theirs = (self.store.fingerprint_of_class(key) for key in (one, other))
         certificate = fingerprint_certificate(
@@ -170,8 +166,6 @@ class Judgements:
 
     def _evidence_of_itself(self, number: int) -> int:
         """The proof that a form is the link that it is, kept where a class has no other form."""
-        from braidsearch.ledger.placing import Finding  # noqa: PLC0415 - loads the search, which look-ups do without
-
         form = self.store.form_of_class(number)
         braid = self.store.braid(form)
         text = format_certificate(Certificate.same(braid, braid, "identity", ()))

@@ -11,6 +11,7 @@ from typing import TYPE_CHECKING
 
 from braidsearch.certificates import Certificate
 from braidsearch.errors import InputError
+from braidsearch.ledger.findings import Effort
 from braidsearch.ledger.proofs import Proofs
 from braidsearch.ledger.references import find_entry
 from braidsearch.ledger.reporting import LedgerReport, OpenQuestion, open_questions, report_ledger
@@ -132,7 +133,6 @@ class Ledger:
         of one another is asked as well. ``executor`` is one of the concurrent.futures kind.
         """
         from braidsearch.ledger.executors import SerialExecutor  # noqa: PLC0415 - look-ups come faster
-        from braidsearch.ledger.placing import Effort  # noqa: PLC0415 - the same
         from braidsearch.ledger.sorting import Sorter  # noqa: PLC0415 - the same
 
         effort = Effort(nodes, max_strands)

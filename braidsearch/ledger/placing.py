@@ -3,18 +3,18 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Iterable, Iterator, Sequence
-from dataclasses import dataclass
 from functools import partial
 
 from braidsearch.certificates import Certificate, format_certificate
 from braidsearch.errors import CapacityError
 from braidsearch.invariants.finer import finer_ladder, sublink_ladder
+from braidsearch.ledger.findings import Effort, Finding
 from braidsearch.ledger.fingerprints import Fingerprint
 from braidsearch.search.closed_three_braids import is_classified, three_braid_ladder
 from braidsearch.search.distinguish import Distinguisher, Ladder, Values
 from braidsearch.search.explorer import Pace
 from braidsearch.search.gate import judge
-from braidsearch.search.limits import Budget, Ending, SearchLimits
+from braidsearch.search.limits import Budget, Ending
 from braidsearch.search.meet import Meeting
 from braidsearch.search.proof import checked_chain
 from braidsearch.search.query import Course, Query
@@ -37,48 +37,6 @@ _NODES_FOR_ALL = 5_000  # from which on nothing is left untried
 
 Marked = tuple[Braid, Fingerprint]
 """A form with its fingerprint."""
-
-
-@dataclass(frozen=True, slots=True)
-class Effort:
-    """The limits of each question: conjugacy classes entered, and strands on the way.
-
-    There is no limit in seconds, so that the same ledger comes out on every machine.
-    """
-
-    nodes: int = 1_000
-    max_strands: int | None = None
-
-    @property
-    def limits(self) -> SearchLimits:
-        """The same as limits of a search."""
-        return SearchLimits(seconds=None, nodes=self.nodes, max_strands=self.max_strands)
-
-    def check(self) -> None:
-        """Raise InputError for limits that no search can keep."""
-        SearchLimits(seconds=None, nodes=self.nodes, max_strands=self.max_strands)
-
-    def is_within(self, other: Effort) -> bool:
-        """Whether everything that this effort tries is tried by the other as well."""
-        strands, most = self.max_strands, other.max_strands
-        is_narrower = strands == most or (None not in {strands, most} and strands <= most)  # type: ignore[operator]
-        return self.nodes <= other.nodes and is_narrower
-
-
-@dataclass(frozen=True, slots=True)
-class Finding:
-    """What came out for two forms: ``outcome`` is that of a verdict.
-
-    ``certificate`` is the text of the proof, accepted by the verifier; None when undecided.
-    ``reason`` says how in a few words.
-    """
-
-    left: Braid
-    right: Braid
-    symmetry: str
-    outcome: str
-    certificate: str | None
-    reason: str
 
 
 def place_all(

@@ -5,9 +5,9 @@ from __future__ import annotations
 from braidsearch.certificates import Certificate, format_certificate
 from braidsearch.certificates.joining import join_chain
 from braidsearch.errors import InputError
+from braidsearch.ledger.findings import Effort, Finding
 from braidsearch.ledger.following import merge_what_follows
 from braidsearch.ledger.judgements import Judgements
-from braidsearch.ledger.placing import Effort, Finding
 from braidsearch.ledger.proofs import Proofs
 from braidsearch.ledger.store import Store
 from braidsearch.search.gate import judge

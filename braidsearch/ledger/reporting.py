@@ -5,14 +5,11 @@ from __future__ import annotations
 from collections import defaultdict
 from collections.abc import Collection
 from dataclasses import dataclass
-from typing import TYPE_CHECKING
 
+from braidsearch.ledger.findings import Effort
 from braidsearch.ledger.groups import group_classes
 from braidsearch.ledger.store import Store, StoredEntry
 from braidsearch.words import Braid
-
-if TYPE_CHECKING:
-    from braidsearch.ledger.placing import Effort
 
 
 @dataclass(frozen=True, slots=True)

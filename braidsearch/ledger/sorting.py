@@ -15,11 +15,12 @@ from dataclasses import dataclass
 from typing import Any
 
 from braidsearch.ledger.ahead import BLOCK, Ahead
+from braidsearch.ledger.findings import Effort, Finding
 from braidsearch.ledger.fingerprints import Fingerprint
 from braidsearch.ledger.following import merge_what_follows
 from braidsearch.ledger.imaging import Imager
 from braidsearch.ledger.judgements import Judgements
-from braidsearch.ledger.placing import Effort, Finding, Marked, ask, place_all
+from braidsearch.ledger.placing import Marked, ask, place_all
 from braidsearch.ledger.preparing import Prepared
 from braidsearch.ledger.store import Store
 from braidsearch.words import Braid

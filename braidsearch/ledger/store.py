@@ -4,15 +4,13 @@ from __future__ import annotations
 
 from collections.abc import Iterable, Iterator
 from dataclasses import dataclass
-from typing import TYPE_CHECKING, Any
+from typing import Any
 
 from braidsearch.errors import InputError
 from braidsearch.ledger.class_rows import COLUMNS, ClassRows, base_of, key_of
 from braidsearch.ledger.entry_rows import EntryRows, StoredEntry
+from braidsearch.ledger.findings import Effort, Finding
 from braidsearch.ledger.schema import readable
-
-if TYPE_CHECKING:
-    from braidsearch.ledger.placing import Effort, Finding
 
 INSIDE = "(SELECT braid FROM forms WHERE class = ?)"
 """The forms of a class, in a statement."""
@@ -76,8 +74,6 @@ class Store(EntryRows, ClassRows):
 
     def undecided(self) -> list[tuple[int, int, str, Effort, str]]:
         """The open questions: two forms, the symmetry, the limits tried, the reason."""
-        from braidsearch.ledger.placing import Effort  # noqa: PLC0415 - loads the search, which look-ups do without
-
         rows = self.rows("SELECT * FROM undecided ORDER BY left, right, symmetry")
         return [
             (left, right, symmetry, Effort(nodes, most), reason)

@@ -9,8 +9,8 @@ import pytest
 from braidsearch.certificates import Certificate, Distinction, format_certificate
 from braidsearch.command_line.ledger.showing import show_contradictions
 from braidsearch.ledger import judgements, recording, sorting
+from braidsearch.ledger.findings import Effort, Finding
 from braidsearch.ledger.ledger import Ledger
-from braidsearch.ledger.placing import Effort, Finding
 from braidsearch.verifier import Report
 from braidsearch.words import Braid
 from tests.ledger.robustness.ledgers import ENOUGH_NODES, entry, partition

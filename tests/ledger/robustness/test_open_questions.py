@@ -7,8 +7,9 @@ from typing import Any
 import pytest
 
 from braidsearch.ledger.executors import SerialExecutor
+from braidsearch.ledger.findings import Effort
 from braidsearch.ledger.ledger import Ledger
-from braidsearch.ledger.placing import Effort, ask, place_all
+from braidsearch.ledger.placing import ask, place_all
 from tests.ledger.robustness.ledgers import (
     ENOUGH_NODES,
     IMAGES,
