@@ -13,6 +13,7 @@ from braidsearch.certificates import parse_certificate
 from braidsearch.errors import BraidsearchError
 from braidsearch.ledger.fingerprints import FIELDS, Fingerprint
 from braidsearch.ledger.groups import ImageUnion
+from braidsearch.ledger.schema import printable
 from braidsearch.ledger.store import COLUMNS, Evidence, Store, base_of, key_of
 from braidsearch.search.gate import is_confirmed, judge
 from braidsearch.words import Braid
@@ -78,8 +79,7 @@ def check_ledger(
 
 def _faults_of_file(store: Store) -> Iterator[str]:
     for (text,) in store.rows("PRAGMA integrity_check"):
-        if text != "ok":
-            yield f"file: {text}"
+        yield from (f"file: {printable(line)}" for line in text.splitlines() if line != "ok")
     for row in store.rows("PRAGMA foreign_key_check"):
         yield f"file: {row[0]}, row {row[1]}: refers to what is not there"
 

@@ -233,8 +233,13 @@ def readable(name: str) -> Iterator[None]:
         raise InputError(f"{name}: damaged (no text in UTF-8): {EXPECTED_INTACT}") from error
 
 
+def printable(text: str) -> str:
+    """The text on one line, with question marks for what cannot be shown."""
+    return "".join(sign if sign.isprintable() else "?" for sign in text)
+
+
 def _meaning(error: sqlite3.Error) -> str:
-    text = "".join(sign if sign.isprintable() else "?" for sign in str(error))[:_LONGEST_TEXT]
+    text = printable(str(error))[:_LONGEST_TEXT]
     if "malformed" in text or "corrupt" in text or "decode" in text:
         return f"damaged ({text}): {EXPECTED_INTACT}"
     if "full" in text or "disk I/O" in text:

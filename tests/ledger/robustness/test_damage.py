@@ -218,3 +218,21 @@ def test_a_changed_text_that_no_proof_holds_is_found(
         path.write_bytes(sound[:at] + new + sound[at + len(old) :])
         check = answer_of(path, lambda ledger: ledger.check())
         assert isinstance(check, str) or not check.valid, at
+
+
+def test_what_the_file_check_says_in_many_lines_are_many_faults(sound: bytes, tmp_path: Path):
+    """SQLite tells of a damaged page in one text of several lines: each becomes one fault."""
+    path = tmp_path / "ledger"
+    path.write_bytes(sound)
+    with closing(sqlite3.connect(path)) as connection:
+        page_size = connection.execute("PRAGMA page_size").fetchone()[0]
+        root = connection.execute(
+            "SELECT rootpage FROM sqlite_master WHERE name = 'entries'"
+        ).fetchone()[0]
+    begin = (root - 1) * page_size
+    swapped = sound[begin + 12 : begin + 14] + sound[begin + 8 : begin + 12]  # places of rows
+    path.write_bytes(sound[: begin + 8] + swapped + sound[begin + 14 :])
+    with Ledger(path) as ledger:
+        faults = ledger.check().faults
+    assert len(faults) > 1
+    assert all(fault.isprintable() for fault in faults)
