@@ -171,7 +171,7 @@ def test_a_row_that_lost_a_value_is_told(sound: bytes, tmp_path: Path):
 
 @pytest.mark.slow
 def test_bytes_overwritten_at_a_thousand_places_are_told_or_harmless(sound: bytes, tmp_path: Path):
-    """The same at a thousand places: of them 269 are told, the others hold nothing that is asked."""
+    """The same at a thousand places: 269 are told, the others hold nothing that is asked."""
     results = check_many(sound, tmp_path / "ledger", range(1000, 2000))
     assert results["told"] > 200
 
