@@ -50,7 +50,7 @@ def mark_of_two(cells: Cells, capacity: int, base: int, p: int, q: int, multipli
         if column >= 0:
             start, end = 0 + cells[column], 0 + cells[capacity + column]
             total += mark_of_column(column, start, end, multiplier)
-    # A column that joins the two rows stands in the sum twice, before and after alike.
+    # No column joins two rows that are swapped: those have no common end.
     return total
 
 

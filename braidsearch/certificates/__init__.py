@@ -4,6 +4,7 @@ from braidsearch.certificates.explanation import explain_certificate
 from braidsearch.certificates.reading import parse_certificate, read_certificate
 from braidsearch.certificates.values import Certificate, Distinction
 from braidsearch.certificates.writing import (
+    braid_to_json,
     certificate_to_json,
     check_destination,
     format_certificate,
@@ -13,6 +14,7 @@ from braidsearch.certificates.writing import (
 __all__ = [
     "Certificate",
     "Distinction",
+    "braid_to_json",
     "certificate_to_json",
     "check_destination",
     "explain_certificate",

@@ -112,6 +112,12 @@ class Certificate:
         """The claim that closure(left) is none of the named images of closure(right)."""
         return cls(left, right, "different", None, distinctions=tuple(distinctions))
 
+    @property
+    def chains(self) -> tuple[tuple[Move, ...], ...]:
+        """All chains of moves: that of a sameness, then those of both sides of distinctions."""
+        sides = ((item.left_moves, item.right_moves) for item in self.distinctions)
+        return (self.moves, *(moves for pair in sides for moves in pair))
+
     def save(self, path: str | PathLike[str]) -> None:
         """Write the certificate file. Raises InputError when it cannot be written there."""
         write_certificate(self, path)

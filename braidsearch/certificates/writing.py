@@ -21,8 +21,8 @@ def certificate_to_json(certificate: Certificate) -> dict[str, Any]:
     claim = {
         "format": FORMAT,
         "version": VERSION,
-        "left": _braid_to_json(certificate.left),
-        "right": _braid_to_json(certificate.right),
+        "left": braid_to_json(certificate.left),
+        "right": braid_to_json(certificate.right),
         "verdict": certificate.verdict,
     }
     if certificate.verdict == "same":
@@ -79,7 +79,8 @@ def _unwritable(path: str | os.PathLike[str], why: str) -> InputError:
     return InputError(f"certificate {os.fspath(path)!r} cannot be written: {why}")
 
 
-def _braid_to_json(braid: Braid) -> dict[str, Any]:
+def braid_to_json(braid: Braid) -> dict[str, Any]:
+    """A braid as files and JSON outputs have it: its strands and the letters of its word."""
     return {"strands": braid.strands, "word": list(braid.word)}
 
 

@@ -5,7 +5,7 @@ from __future__ import annotations
 import re
 from dataclasses import dataclass
 
-from braidsearch.certificates import Certificate
+from braidsearch.certificates import Certificate, braid_to_json
 from braidsearch.certificates.explanation import count_of
 from braidsearch.command_line.answer import one_line
 from braidsearch.words import Braid
@@ -73,23 +73,16 @@ def _link_to_json(drawn: Drawn) -> dict[str, object]:
     link = drawn.link
     if isinstance(link, Braid):
         return {
-            "braid": _braid_to_json(link),
+            "braid": braid_to_json(link),
             "letters": len(link),
             "components": link.components,
         }
-    chains = [link.moves]
-    for distinction in link.distinctions:
-        chains += [distinction.left_moves, distinction.right_moves]
     return {
-        "left": _braid_to_json(link.left),
-        "right": _braid_to_json(link.right),
+        "left": braid_to_json(link.left),
+        "right": braid_to_json(link.right),
         "verdict": link.verdict,
         "symmetry": link.symmetry,
         "valid": not drawn.fault,
-        "steps": sum(map(len, chains)),
+        "steps": sum(map(len, link.chains)),
         "stages_left_out": drawn.stages_left_out,
     }
-
-
-def _braid_to_json(braid: Braid) -> dict[str, object]:
-    return {"strands": braid.strands, "word": list(braid.word)}

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 from typing import TYPE_CHECKING, Any
 
+from braidsearch.certificates import braid_to_json
 from braidsearch.certificates.explanation import count_of, shown_word
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser
@@ -44,11 +45,11 @@ def answer(arguments: Sequence[str]) -> Answer:
 
 def _to_json(braid: Braid, form: NormalForm, summit: ConjugacyClass) -> dict[str, Any]:
     return {
-        "braid": _braid_to_json(braid),
-        "reduced": _braid_to_json(free_reduce(braid)),
+        "braid": braid_to_json(braid),
+        "reduced": braid_to_json(free_reduce(braid)),
         "normal_form": {"infimum": form.infimum, "factors": _factor_words(form)},
         "summit": {
-            "representative": _braid_to_json(summit.representative),
+            "representative": braid_to_json(summit.representative),
             "conjugator": list(summit.conjugator),
             "members": summit.summit_size,
             "complete": summit.is_complete,
@@ -79,7 +80,3 @@ def _factor_words(form: NormalForm) -> list[list[int]]:
     from braidsearch.normal_form.simple_elements import permutation_word  # noqa: PLC0415
 
     return [list(permutation_word(factor)) for factor in form.factors]
-
-
-def _braid_to_json(braid: Braid) -> dict[str, Any]:
-    return {"strands": braid.strands, "word": list(braid.word)}

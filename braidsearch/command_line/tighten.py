@@ -7,6 +7,7 @@ from collections.abc import Sequence
 from typing import TYPE_CHECKING, Any
 
 from braidsearch.certificates import (
+    braid_to_json,
     certificate_to_json,
     check_destination,
     explain_certificate,
@@ -63,7 +64,7 @@ def answer(arguments: Sequence[str]) -> Answer:
 
 def _to_json(found: Tightening) -> dict[str, Any]:
     return {
-        "braid": {"strands": found.braid.strands, "word": list(found.braid.word)},
+        "braid": braid_to_json(found.braid),
         "certificate": certificate_to_json(found.certificate),
         "lower_bound": found.lower_bound,
         "minimal": found.is_minimal,

@@ -8,6 +8,7 @@ from collections.abc import Sequence
 from dataclasses import replace
 from typing import TYPE_CHECKING
 
+from braidsearch.certificates import braid_to_json
 from braidsearch.certificates.explanation import count_of
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
 from braidsearch.command_line.arguments import CommandParser
@@ -128,8 +129,7 @@ def _written(woven: Woven, prefix: str) -> tuple[Woven, str]:
 
 
 def _to_json(woven: Woven, name: str | None, code: str | None) -> dict[str, object]:
-    braid = {"strands": woven.braid.strands, "word": list(woven.braid.word)}
-    found: dict[str, object] = {"braid": braid, "checks": list(woven.checks)}
+    found: dict[str, object] = {"braid": braid_to_json(woven.braid), "checks": list(woven.checks)}
     found["notes"] = list(woven.notes)
     return found if name is None else found | {"code": {name: code}}
 

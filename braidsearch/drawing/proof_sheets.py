@@ -86,10 +86,7 @@ def count_left_out(certificate: Certificate, most_stages: int | None = MOST_STAG
     """How many stages of its chains ``draw_proof`` leaves out, since they are too many."""
     if most_stages is None:
         return 0
-    chains = [certificate.moves]
-    for distinction in certificate.distinctions:
-        chains += [distinction.left_moves, distinction.right_moves]
-    return sum(max(0, len(moves) + 1 - most_stages) for moves in chains)
+    return sum(max(0, len(moves) + 1 - most_stages) for moves in certificate.chains)
 
 
 class _SheetWriter:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from typing import Any
 
+from braidsearch.certificates import braid_to_json
 from braidsearch.explaining.outline import (
     ExplainedChain,
     ExplainedDistinction,
@@ -14,7 +15,6 @@ from braidsearch.explaining.polynomial_text import format_power
 from braidsearch.explaining.text import claim_text, text_of
 from braidsearch.explaining.theorems import Theorem
 from braidsearch.explaining.values import Comparison, Polynomials
-from braidsearch.words import Braid
 
 
 def explanation_to_json(explanation: Explanation) -> dict[str, Any]:
@@ -34,8 +34,8 @@ def explanation_to_json(explanation: Explanation) -> dict[str, Any]:
     return {
         "claim": claim_text(explanation),
         "verdict": certificate.verdict,
-        "left": _braid_to_json(certificate.left),
-        "right": _braid_to_json(certificate.right),
+        "left": braid_to_json(certificate.left),
+        "right": braid_to_json(certificate.right),
         "elementary": explanation.is_elementary,
         "steps": steps,
         "distinctions": [_distinction_to_json(d) for d in explanation.distinctions],
@@ -87,11 +87,7 @@ def _entries_to_json(comparison: Comparison) -> list[dict[str, Any]]:
 
 def _marked_to_json(marked: MarkedBraid) -> dict[str, Any]:
     marks = [[start + 1, end] for start, end in marked.marks]
-    return _braid_to_json(marked.braid) | {"marks": marks}
-
-
-def _braid_to_json(braid: Braid) -> dict[str, Any]:
-    return {"strands": braid.strands, "word": list(braid.word)}
+    return braid_to_json(marked.braid) | {"marks": marks}
 
 
 def _theorem_to_json(theorem: Theorem) -> dict[str, Any]:

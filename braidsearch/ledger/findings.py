@@ -25,7 +25,7 @@ class Effort:
 
     def check(self) -> None:
         """Raise InputError for limits that no search can keep."""
-        SearchLimits(seconds=None, nodes=self.nodes, max_strands=self.max_strands)
+        _ = self.limits  # their constructor raises it
 
     def is_within(self, other: Effort) -> bool:
         """Whether everything that this effort tries is tried by the other as well."""

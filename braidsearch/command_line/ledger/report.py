@@ -7,6 +7,7 @@ from collections.abc import Sequence
 from dataclasses import replace
 from typing import TYPE_CHECKING, Any
 
+from braidsearch.certificates import braid_to_json
 from braidsearch.command_line.answer import SUCCESS, Answer, json_answer
 from braidsearch.command_line.ledger.listing import list_classes, list_groups, list_one_class
 from braidsearch.command_line.ledger.options import add_symmetries, ledger_parser, read_symmetries
@@ -175,7 +176,7 @@ def _to_json(report: LedgerReport) -> dict[str, Any]:
         "classes": [
             {
                 "number": one.number,
-                "form": {"strands": one.form.strands, "word": list(one.form.word)},
+                "form": braid_to_json(one.form),
                 "entries": [entry_to_json(entry) for entry in one.entries],
             }
             for one in report.classes

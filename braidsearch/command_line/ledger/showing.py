@@ -7,7 +7,12 @@ from argparse import Namespace
 from collections.abc import Iterable, Sequence
 from typing import TYPE_CHECKING, Any
 
-from braidsearch.certificates import check_destination, format_certificate, write_certificate
+from braidsearch.certificates import (
+    braid_to_json,
+    check_destination,
+    format_certificate,
+    write_certificate,
+)
 from braidsearch.certificates.explanation import count_of
 from braidsearch.command_line.answer import Answer
 from braidsearch.errors import InputError
@@ -40,7 +45,6 @@ def show_entries(entries: Sequence[StoredEntry]) -> str:
 
 def entry_to_json(entry: StoredEntry) -> dict[str, Any]:
     """An entry as --json prints it."""
-    braid = entry.braid
     return {
         "number": entry.number,
         "name": entry.name,
@@ -48,7 +52,7 @@ def entry_to_json(entry: StoredEntry) -> dict[str, Any]:
         "note": entry.note,
         "given": entry.given,
         "remarks": list(entry.remarks),
-        "braid": {"strands": braid.strands, "word": list(braid.word)},
+        "braid": braid_to_json(entry.braid),
     }
 
 
